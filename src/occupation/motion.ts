@@ -1,0 +1,206 @@
+/**
+ * Was the receiver being carried about, and when did it stand?
+ *
+ * This looks for travel, not for the millimetres that `stability` is about: a setup that sinks or
+ * is knocked stands still here.
+ */
+
+/** About one knot; slower than a stroll, faster than the wander of a receiver at rest. */
+const TRAVEL_SPEED_M_PER_S = 0.5;
+/** Positions are averaged over this long before their difference is called a speed. */
+const AVERAGING_S = 5;
+/** A standing period shorter than this is only reported when it is the whole record. */
+const SHORTEST_PERIOD_S = 20;
+/** Two periods this close in time and place are one: the position jumped, nobody travelled. */
+const LONGEST_INTERRUPTION_S = 20;
+const SAME_PLACE_M = 10;
+/** A record whose ends lie further apart than this has travelled, however slowly. */
+const TRAVEL_DISTANCE_M = 50;
+/** A record of which more than this share is travel is not an occupation. */
+const TRAVEL_SHARE = 0.25;
+
+export interface Track {
+  /** All of equal length, in time order, finite. */
+  readonly gpsSeconds: Float64Array;
+  readonly eastM: Float64Array;
+  readonly northM: Float64Array;
+}
+
+/** A run of epochs during which the receiver stood; both indices are inside it. */
+export interface StandingPeriod {
+  readonly first: number;
+  readonly last: number;
+}
+
+/**
+ * 1 for every epoch at which the mean position of the next seconds differs from that of the last
+ * ones by more than walking at one knot would make it. Two passes with moving windows, O(n).
+ */
+export function travelFlags(track: Track): Uint8Array {
+  const count = track.gpsSeconds.length;
+  const moving = new Uint8Array(count);
+  const windowS = Math.max(AVERAGING_S, 2.5 * typicalStepS(track.gpsSeconds));
+  const before = windowMeans(track, -windowS);
+  const after = windowMeans(track, windowS);
+  for (let i = 0; i < count; i++) {
+    const elapsedS = after.timeS[i]! - before.timeS[i]!;
+    const east = after.eastM[i]! - before.eastM[i]!;
+    const north = after.northM[i]! - before.northM[i]!;
+    const distanceM = Math.sqrt(east * east + north * north);
+    if (elapsedS > 0 && distanceM > TRAVEL_SPEED_M_PER_S * elapsedS) moving[i] = 1;
+  }
+  return moving;
+}
+
+/** Whether the record as a whole is a journey rather than an occupation. */
+export function isTravelling(track: Track): boolean {
+  const count = track.gpsSeconds.length;
+  if (count < 10) return false;
+  const moving = travelFlags(track);
+  let flagged = 0;
+  for (let i = 0; i < count; i++) flagged += moving[i]!;
+  return flagged > TRAVEL_SHARE * count || endsApartM(track) > TRAVEL_DISTANCE_M;
+}
+
+/** The periods during which the receiver stood, in time order. */
+export function standingPeriods(track: Track): StandingPeriod[] {
+  const count = track.gpsSeconds.length;
+  if (count === 0) return [];
+  const moving = travelFlags(track);
+  const runs = joinedRuns(track, runsOf(moving, 0)).map((run) => extended(track, run));
+  const whole = runs.length === 1 && runs[0]!.last - runs[0]!.first + 1 >= 0.9 * count;
+  const lasting = runs.filter(
+    (run) => track.gpsSeconds[run.last]! - track.gpsSeconds[run.first]! >= SHORTEST_PERIOD_S,
+  );
+  return whole ? runs : lasting;
+}
+
+interface WindowMeans {
+  readonly timeS: Float64Array;
+  readonly eastM: Float64Array;
+  readonly northM: Float64Array;
+}
+
+/**
+ * Means over the epochs from each one on to `spanS` later, itself included (earlier when `spanS` is
+ * negative), by running sums about the first epoch, so that large coordinates cost no digits.
+ */
+function windowMeans(track: Track, spanS: number): WindowMeans {
+  const {gpsSeconds, eastM, northM} = track;
+  const count = gpsSeconds.length;
+  const sums = {
+    timeS: runningSum(gpsSeconds),
+    eastM: runningSum(eastM),
+    northM: runningSum(northM),
+  };
+  const means = {
+    timeS: new Float64Array(count),
+    eastM: new Float64Array(count),
+    northM: new Float64Array(count),
+  };
+  let edge = 0;
+  for (let i = 0; i < count; i++) {
+    let from = i;
+    let to = i + 1;
+    if (spanS > 0) {
+      if (edge <= i) edge = i + 1;
+      while (edge < count && gpsSeconds[edge]! <= gpsSeconds[i]! + spanS) edge++;
+      to = edge;
+    } else {
+      while (gpsSeconds[edge]! < gpsSeconds[i]! + spanS) edge++;
+      from = edge;
+    }
+    const epochs = to - from;
+    means.timeS[i] = (sums.timeS[to]! - sums.timeS[from]!) / epochs;
+    means.eastM[i] = (sums.eastM[to]! - sums.eastM[from]!) / epochs;
+    means.northM[i] = (sums.northM[to]! - sums.northM[from]!) / epochs;
+  }
+  return means;
+}
+
+function runningSum(values: Float64Array): Float64Array {
+  const origin = values.length > 0 ? values[0]! : 0;
+  const sums = new Float64Array(values.length + 1);
+  for (let i = 0; i < values.length; i++) sums[i + 1] = sums[i]! + (values[i]! - origin);
+  return sums;
+}
+
+function typicalStepS(gpsSeconds: Float64Array): number {
+  if (gpsSeconds.length < 2) return 0;
+  const steps = new Float64Array(gpsSeconds.length - 1);
+  for (let i = 0; i < steps.length; i++) steps[i] = gpsSeconds[i + 1]! - gpsSeconds[i]!;
+  steps.sort();
+  return steps[steps.length >> 1]!;
+}
+
+function endsApartM(track: Track): number {
+  const count = track.gpsSeconds.length;
+  const tenth = Math.max(1, Math.floor(count / 10));
+  const start = centre(track, 0, tenth - 1);
+  const end = centre(track, count - tenth, count - 1);
+  return Math.hypot(end.eastM - start.eastM, end.northM - start.northM);
+}
+
+/** The medians of east and north over a run, both ends included. */
+function centre(track: Track, first: number, last: number): {eastM: number; northM: number} {
+  return {
+    eastM: middle(track.eastM.slice(first, last + 1)),
+    northM: middle(track.northM.slice(first, last + 1)),
+  };
+}
+
+function middle(values: Float64Array): number {
+  values.sort();
+  return values[values.length >> 1]!;
+}
+
+function runsOf(flags: Uint8Array, wanted: number): StandingPeriod[] {
+  const runs: StandingPeriod[] = [];
+  let first = -1;
+  for (let i = 0; i <= flags.length; i++) {
+    const inside = i < flags.length && flags[i] === wanted;
+    if (inside && first < 0) first = i;
+    if (!inside && first >= 0) {
+      runs.push({first, last: i - 1});
+      first = -1;
+    }
+  }
+  return runs;
+}
+
+function joinedRuns(track: Track, runs: readonly StandingPeriod[]): StandingPeriod[] {
+  const joined: StandingPeriod[] = [];
+  for (const run of runs) {
+    const previous = joined.at(-1);
+    if (previous !== undefined && isInterruption(track, previous, run)) {
+      joined[joined.length - 1] = {first: previous.first, last: run.last};
+    } else {
+      joined.push(run);
+    }
+  }
+  return joined;
+}
+
+function isInterruption(track: Track, before: StandingPeriod, after: StandingPeriod): boolean {
+  const awayS = track.gpsSeconds[after.first]! - track.gpsSeconds[before.last]!;
+  if (awayS > LONGEST_INTERRUPTION_S) return false;
+  const from = centre(track, before.first, before.last);
+  const to = centre(track, after.first, after.last);
+  return Math.hypot(to.eastM - from.eastM, to.northM - from.northM) <= SAME_PLACE_M;
+}
+
+/** Speeds are averages, so a run ends early; take back the epochs that still lie at its place. */
+function extended(track: Track, run: StandingPeriod): StandingPeriod {
+  const at = centre(track, run.first, run.last);
+  const distances = new Float64Array(run.last - run.first + 1);
+  for (let i = run.first; i <= run.last; i++) distances[i - run.first] = distanceM(track, i, at);
+  const reachM = 3 * middle(distances) + 0.02;
+  let {first, last} = run;
+  while (first > 0 && distanceM(track, first - 1, at) <= reachM) first--;
+  while (last + 1 < track.gpsSeconds.length && distanceM(track, last + 1, at) <= reachM) last++;
+  return {first, last};
+}
+
+function distanceM(track: Track, index: number, at: {eastM: number; northM: number}): number {
+  return Math.hypot(track.eastM[index]! - at.eastM, track.northM[index]! - at.northM);
+}
