@@ -1,0 +1,105 @@
+#!/usr/bin/env node
+import yargs, {type Argv} from 'yargs';
+import {hideBin} from 'yargs/helpers';
+import {InputError, UsageError} from '../errors.ts';
+import {
+  checkOptions,
+  contentsOptions,
+  inputOptions,
+  outputOptions,
+  reduceOptions,
+} from './options.ts';
+import {VERSION} from './version.ts';
+
+/** Exit statuses; the first three are answers, the others are not. */
+export const STATUS = {done: 0, doesNotHold: 1, unusable: 2, cannotTell: 3, defect: 70} as const;
+
+const EXIT_STATUSES = [
+  'Exit status: 0 done (check: holds)   1 check: does not hold   2 usage or unusable input',
+  '             3 cannot tell, or no position   70 a defect of stillmark',
+].join('\n');
+
+async function run(words: readonly string[]): Promise<number> {
+  let status: number = STATUS.done;
+  const parser = commands(yargs([...words]), (answer) => {
+    status = answer;
+  })
+    .scriptName('stillmark')
+    .usage(
+      '$0 <command> LOG…\n\nWhat a receiver that stood still over a mark can tell, and how surely.',
+    )
+    .version(VERSION)
+    .alias({help: 'h'})
+    .detectLocale(false)
+    .exitProcess(false)
+    .strict()
+    .recommendCommands()
+    .demandCommand(1, 'name a command: contents, reduce or check')
+    .wrap(100)
+    .epilogue(EXIT_STATUSES)
+    .fail((message: string | null, error: Error | undefined) => {
+      throw error ?? new UsageError(message ?? 'cannot understand these options');
+    });
+  await parser.parseAsync();
+  return status;
+}
+
+function commands(parser: Argv, answer: (status: number) => void): Argv {
+  return parser
+    .command(
+      'contents <log..>',
+      'What is in these logs, and what is wrong with them',
+      (args) => contentsOptions(inputOptions(args)),
+      async (argv) => answer(await (await import('./contents.ts')).contents(argv)),
+    )
+    .command(
+      'reduce <log..>',
+      'One occupation: position, honest uncertainty, report',
+      (args) => outputOptions(reduceOptions(inputOptions(args))),
+      async (argv) => answer(await (await import('./reduce.ts')).reduce(argv, 'reduce')),
+    )
+    .command(
+      'check <log..>',
+      'The same against a known mark and a tolerance; the verdict sets the exit status',
+      (args) => outputOptions(checkOptions(reduceOptions(inputOptions(args)))),
+      async (argv) => answer(await (await import('./reduce.ts')).reduce(argv, 'check')),
+    );
+}
+
+/** What a person reads when the run cannot go on: what, where, what to do; never a stack trace. */
+function explain(error: UsageError | InputError): string {
+  if (error instanceof UsageError)
+    return `${error.message}\nstillmark --help lists commands and options`;
+  const line = error.lineNumber === undefined ? '' : `, line ${error.lineNumber}`;
+  return `${error.path}${line}: ${error.message}`;
+}
+
+async function main(): Promise<void> {
+  try {
+    process.exitCode = await run(hideBin(process.argv));
+  } catch (error) {
+    if (error instanceof UsageError || error instanceof InputError) {
+      process.stderr.write(`stillmark: ${explain(error)}\n`);
+      process.exitCode = STATUS.unusable;
+    } else if (error instanceof Error && error.name === 'YError') {
+      process.stderr.write(
+        `stillmark: ${error.message}\nstillmark --help lists commands and options\n`,
+      );
+      process.exitCode = STATUS.unusable;
+    } else {
+      const trace = error instanceof Error ? (error.stack ?? error.message) : String(error);
+      process.stderr.write(
+        `stillmark: a defect of stillmark, not of your log; please report it with these lines\n${trace}\n`,
+      );
+      process.exitCode = STATUS.defect;
+    }
+  }
+}
+
+// A reader that closes early, such as `head`, is no error.
+process.stdout.on('error', (error: NodeJS.ErrnoException) => {
+  if (error.code === 'EPIPE') process.exit(STATUS.done);
+  throw error;
+});
+
+await main();

@@ -1,0 +1,212 @@
+import type {Argv} from 'yargs';
+
+/*
+ * The options of the commands, as yargs sees them: names, groups and help. They are plain strings
+ * and numbers here; settings.ts turns them into typed values, joins them with the field sheet and
+ * the defaults, and remembers where each came from.
+ */
+
+const READING = 'Reading the log:';
+const SCREENING = 'Which epochs are used:';
+const REFERENCE = 'Reference, frame and height:';
+const DECISION = 'What is asked of the record:';
+const OUTPUT = 'Outputs (nothing is written unasked; - is standard output):';
+
+export function inputOptions<T>(args: Argv<T>) {
+  return args
+    .positional('log', {
+      type: 'string',
+      array: true,
+      demandOption: true,
+      describe: 'log files, plain or gzip, joined in time order; - reads standard input',
+    })
+    .options({
+      date: {
+        type: 'string',
+        group: READING,
+        describe: 'date of the first epoch, YYYY-MM-DD, when the log carries none',
+      },
+      columns: {
+        type: 'string',
+        group: READING,
+        describe: 'names of the columns of a table without a header, comma separated',
+      },
+      'time-scale': {
+        choices: ['utc', 'gps'] as const,
+        group: READING,
+        describe: 'scale of the times in a table',
+      },
+      start: {
+        type: 'string',
+        group: READING,
+        describe: 'UTC that a table counts its seconds from, such as 2026-05-04T10:00:00',
+      },
+      'accept-no-checksum': {
+        type: 'boolean',
+        default: false,
+        group: READING,
+        describe: 'believe sentences that carry no checksum',
+      },
+      ellipsoid: {
+        type: 'string',
+        group: READING,
+        describe: 'WGS84 (default), GRS80, or semi-major axis in metres and 1/f: 6378137,298.2572',
+      },
+      quiet: {
+        type: 'boolean',
+        alias: 'q',
+        default: false,
+        describe: 'no notices and no progress on standard error',
+      },
+    });
+}
+
+export function contentsOptions<T>(args: Argv<T>) {
+  return args
+    .options({
+      result: {type: 'string', group: OUTPUT, describe: 'write what was found as JSON'},
+    })
+    .example('$0 contents day1.nmea', 'list sentences, rate, gaps, fixes and rejected lines')
+    .example('$0 contents morning.log evening.log.gz', 'join two files in time order')
+    .example('$0 contents walk.nmea', 'number the periods during which the receiver stood');
+}
+
+export function reduceOptions<T>(args: Argv<T>) {
+  return args
+    .options({
+      sheet: {type: 'string', group: REFERENCE, describe: 'field sheet (YAML)'},
+      at: {
+        type: 'string',
+        group: REFERENCE,
+        describe: 'reference for east, north and up: latitude,longitude,ellipsoidal height',
+      },
+      frame: {type: 'string', group: REFERENCE, describe: 'frame of the positions in the log'},
+      'coordinate-epoch': {
+        type: 'number',
+        group: REFERENCE,
+        describe: 'coordinate epoch of the positions, decimal year (that of the base or network)',
+      },
+      fix: {
+        choices: [
+          'best',
+          'fixed',
+          'float',
+          'differential',
+          'autonomous',
+          'precise',
+          'any',
+        ] as const,
+        group: SCREENING,
+        describe: 'fix class to use (default: the best that lasts)',
+      },
+      'min-satellites': {type: 'number', group: SCREENING, describe: 'fewest satellites used'},
+      'max-hdop': {type: 'number', group: SCREENING, describe: 'largest horizontal DOP'},
+      'max-pdop': {type: 'number', group: SCREENING, describe: 'largest position DOP'},
+      'max-age': {type: 'string', group: SCREENING, describe: 'largest correction age, such as 5s'},
+      'max-sigma': {
+        type: 'string',
+        group: SCREENING,
+        describe: "largest horizontal sigma by the receiver's own account, such as 30mm",
+      },
+      'from-utc': {type: 'string', group: SCREENING, describe: 'leave out what is earlier'},
+      'to-utc': {type: 'string', group: SCREENING, describe: 'leave out what is later'},
+      settle: {
+        type: 'string',
+        group: SCREENING,
+        describe: 'leave out the start of the occupation, such as 5min',
+      },
+      stand: {
+        type: 'number',
+        group: SCREENING,
+        describe: 'use only the N-th standing period that `contents` lists',
+      },
+      want: {
+        type: 'string',
+        group: DECISION,
+        describe: 'wished 95 % horizontal radius, such as 10mm: how long would it take',
+      },
+      'movement-limit': {
+        type: 'string',
+        group: DECISION,
+        describe: 'movement that matters, such as 5mm (default: from the uncertainty)',
+      },
+    })
+    .example('$0 reduce day1.nmea --report day1.html', 'position, uncertainty and a report')
+    .example('$0 reduce base.txt --columns time,x,y,z --start 2026-05-04T10:00:00', 'a bare table')
+    .example('$0 reduce walk.nmea --stand 2 --result stop2.json', 'one stop of a longer log');
+}
+
+export function checkOptions<T>(args: Argv<T>) {
+  return args
+    .options({
+      marks: {type: 'string', group: REFERENCE, describe: 'marks file (YAML, CSV or SINEX)'},
+      mark: {type: 'string', group: REFERENCE, describe: 'name of the mark that was occupied'},
+      tolerance: {
+        type: 'string',
+        group: DECISION,
+        describe: 'horizontal radius to hold, such as 20mm',
+      },
+      'tolerance-up': {type: 'string', group: DECISION, describe: 'height difference to hold'},
+      'tolerance-reason': {
+        type: 'string',
+        group: DECISION,
+        describe: 'where the tolerance comes from, for the report',
+      },
+    })
+    .example('$0 check am.nmea --marks marks.yaml --mark P7 --tolerance 20mm', 'the first setup')
+    .example('$0 check am.nmea --sheet am.yaml --report am.html', 'everything from the field sheet')
+    .example(
+      '$0 check am.nmea pm.nmea --mark P7 --marks site.csv --fix fixed',
+      'two files, fixed only',
+    );
+}
+
+export function outputOptions<T>(args: Argv<T>) {
+  return args.options({
+    report: {type: 'string', group: OUTPUT, describe: 'one self-contained HTML page'},
+    result: {type: 'string', group: OUTPUT, describe: 'everything computed, as JSON'},
+    epochs: {type: 'string', group: OUTPUT, describe: 'one row per epoch, as CSV'},
+    geojson: {type: 'string', group: OUTPUT, describe: 'position and 95 % ellipse, as GeoJSON'},
+    kml: {type: 'string', group: OUTPUT, describe: 'position and 95 % ellipse, as KML'},
+    sinex: {type: 'string', group: OUTPUT, describe: 'position and covariance, as SINEX'},
+  });
+}
+
+/** What yargs yields, with every option that some command does not have left optional. */
+export interface CommandArguments {
+  readonly log: readonly string[];
+  readonly date?: string | undefined;
+  readonly columns?: string | undefined;
+  readonly timeScale?: 'utc' | 'gps' | undefined;
+  readonly start?: string | undefined;
+  readonly acceptNoChecksum: boolean;
+  readonly ellipsoid?: string | undefined;
+  readonly quiet: boolean;
+  readonly sheet?: string | undefined;
+  readonly at?: string | undefined;
+  readonly frame?: string | undefined;
+  readonly coordinateEpoch?: number | undefined;
+  readonly fix?: string | undefined;
+  readonly minSatellites?: number | undefined;
+  readonly maxHdop?: number | undefined;
+  readonly maxPdop?: number | undefined;
+  readonly maxAge?: string | undefined;
+  readonly maxSigma?: string | undefined;
+  readonly fromUtc?: string | undefined;
+  readonly toUtc?: string | undefined;
+  readonly settle?: string | undefined;
+  readonly stand?: number | undefined;
+  readonly want?: string | undefined;
+  readonly movementLimit?: string | undefined;
+  readonly marks?: string | undefined;
+  readonly mark?: string | undefined;
+  readonly tolerance?: string | undefined;
+  readonly toleranceUp?: string | undefined;
+  readonly toleranceReason?: string | undefined;
+  readonly report?: string | undefined;
+  readonly result?: string | undefined;
+  readonly epochs?: string | undefined;
+  readonly geojson?: string | undefined;
+  readonly kml?: string | undefined;
+  readonly sinex?: string | undefined;
+}
