@@ -61,7 +61,7 @@ export function formatGivenLength(valueM: number): string {
  */
 export function coordinateDecimals(uncertainty95M: number | null): number {
   if (uncertainty95M === null || !(uncertainty95M > 0)) return 4;
-  return Math.min(4, Math.max(0, Math.ceil(-Math.log10(uncertainty95M))) + 1);
+  return Math.min(4, Math.max(0, Math.ceil(-Math.log10(uncertainty95M)) + 1));
 }
 
 /** A metre is about 1e-5 of a degree. */
