@@ -1,0 +1,226 @@
+import {headlineFacts} from '../occupation/headline-facts.ts';
+import type {Notice, PerAxis, Position, Result} from '../occupation/result.ts';
+import {
+  coordinateDecimals,
+  counted,
+  degreeDecimals,
+  fixed,
+  formatAzimuth,
+  formatDuration,
+  formatLength,
+  formatUtc,
+  joined,
+  lengthScale,
+} from '../wording/numbers.ts';
+import {headline, type Tone} from '../wording/verdict.ts';
+
+/** How a stream is written to: colours and shapes only where they can be shown. */
+export interface TerminalStyle {
+  readonly colour: boolean;
+  readonly unicode: boolean;
+  readonly columns: number;
+}
+
+type Paint = 'green' | 'yellow' | 'red' | 'dim' | 'bold';
+
+const CODES: Record<Paint, string> = {green: '32', yellow: '33', red: '31', dim: '2', bold: '1'};
+const TONE_PAINT: Record<Tone, Paint> = {
+  within: 'green',
+  look: 'yellow',
+  outside: 'red',
+  'not tested': 'dim',
+};
+const SHAPES: Record<Tone, string> = {within: '●', look: '▲', outside: '■', 'not tested': '○'};
+const PLAIN_SHAPES: Record<Tone, string> = {
+  within: '*',
+  look: '!',
+  outside: '#',
+  'not tested': '-',
+};
+
+/** The stream's own abilities, and what the user asked for through the environment. */
+export function styleOf(
+  stream: {readonly isTTY?: boolean; readonly columns?: number},
+  environment: Readonly<Record<string, string | undefined>>,
+): TerminalStyle {
+  const terminal = stream.isTTY === true && environment.TERM !== 'dumb';
+  return {
+    colour: terminal && (environment.NO_COLOR ?? '') === '',
+    unicode: true,
+    columns: Math.min(100, Math.max(60, stream.columns ?? 100)),
+  };
+}
+
+function painted(text: string, paint: Paint, style: TerminalStyle): string {
+  return style.colour ? `\u001b[${CODES[paint]}m${text}\u001b[0m` : text;
+}
+
+/** The answer on one screen: verdict first, then the numbers, then what to look at. */
+export function resultSummary(result: Result, style: TerminalStyle): string {
+  const {tone, status, sentence} = headline(headlineFacts(result));
+  const shapes = style.unicode ? SHAPES : PLAIN_SHAPES;
+  const title = [shapes[tone], status.toUpperCase(), result.occupation.mark ?? '']
+    .join('  ')
+    .trim();
+  const blocks = [
+    [painted(painted(title, TONE_PAINT[tone], style), 'bold', style), ...wrapped(sentence, style)],
+    numberTable(result),
+    facts(result),
+    noticeLines(result.notices, style),
+  ];
+  const text = blocks
+    .filter((lines) => lines.length > 0)
+    .map((lines) => lines.join('\n'))
+    .join('\n\n');
+  return `${text.replaceAll('\u00a0', ' ')}\n`;
+}
+
+type Row = readonly [string, PerAxis<number | null>, number | null, string];
+
+function numberTable(result: Result): string[] {
+  const position = shownPosition(result);
+  const rows: Row[] = [];
+  if (result.comparison !== null) {
+    const {offsetM, azimuthDeg} = result.comparison;
+    const toward = azimuthDeg === null ? '' : `toward ${formatAzimuth(azimuthDeg)}`;
+    rows.push(['offset', offsetM, offsetM.horizontal, toward]);
+  }
+  if (position?.uncertainty95M) {
+    rows.push([
+      '95 % of the mean',
+      position.uncertainty95M,
+      position.uncertainty95M.horizontalRadius,
+      'radius',
+    ]);
+  }
+  if (result.scatter !== null) {
+    const {standardDeviationM, r95M} = result.scatter.aboutMean.observed;
+    rows.push(['sd of one epoch', standardDeviationM, r95M, '95 % radius of one epoch']);
+  }
+  if (rows.length === 0) return [];
+  const largestM = Math.max(
+    ...rows.flatMap(([, axes, horizontal]) =>
+      [axes.east, axes.north, axes.up, horizontal].map((value) => Math.abs(value ?? 0)),
+    ),
+  );
+  const scale = lengthScale(largestM);
+  const cell = (valueM: number | null, signed: boolean) => {
+    if (valueM === null) return '-'.padStart(11);
+    const text = fixed(valueM * scale.perM, scale.decimals);
+    return (signed && valueM > 0 && Number(text) !== 0 ? `+${text}` : text).padStart(11);
+  };
+  const head = `${scale.unit.padEnd(16)}${['east', 'north', 'up', 'horizontal'].map((name) => name.padStart(11)).join('')}`;
+  return [
+    head,
+    ...rows.map(([name, axes, horizontal, note]) => {
+      const signed = name === 'offset';
+      const cells = [axes.east, axes.north, axes.up].map((value) => cell(value, signed)).join('');
+      return `${name.padEnd(16)}${cells}${cell(horizontal, false)}  ${note}`.trimEnd();
+    }),
+  ];
+}
+
+function shownPosition(result: Result): Position | null {
+  return result.position ?? null;
+}
+
+function facts(result: Result): string[] {
+  const lines: [string, string][] = [];
+  for (const segment of result.segments) {
+    const span =
+      result.segments.length > 1
+        ? `  ${formatUtc(segment.fromUtc).slice(11)} to ${formatUtc(segment.toUtc).slice(11)}`
+        : '';
+    lines.push(['position', `${positionText(segment.position)}${span}`]);
+  }
+  const first = result.segments[0]?.position;
+  if (first !== undefined) lines.push(['of', `${first.of}; ${frameText(first)}`]);
+  const {epochs, occupation} = result;
+  if (occupation.startUtc !== null && occupation.endUtc !== null) {
+    const span = (Date.parse(occupation.endUtc) - Date.parse(occupation.startUtc)) / 1000;
+    const every =
+      epochs.intervalS === null ? '' : `, one epoch every ${formatDuration(epochs.intervalS)}`;
+    lines.push([
+      'record',
+      `${formatUtc(occupation.startUtc)} to ${formatUtc(occupation.endUtc)} UTC, ${formatDuration(span)}${every}`,
+    ]);
+  }
+  const fix = result.screening.fixClassKept;
+  lines.push([
+    'epochs',
+    `${counted(epochs.read, 'epoch')} read, ${epochs.used} used${fix === null ? '' : ` (${fix})`}${screenedText(epochs.screened)}`,
+  ]);
+  lines.push(['stillness', stillnessText(result)]);
+  return lines.map(([name, text]) => `${name.padEnd(11)}${text}`);
+}
+
+function positionText({geodetic, uncertainty95M, orthometricHeightM}: Position): string {
+  const metres = coordinateDecimals(uncertainty95M?.horizontalRadius ?? null);
+  const degrees = degreeDecimals(metres);
+  const north = geodetic.latitudeDeg >= 0 ? 'N' : 'S';
+  const east = geodetic.longitudeDeg >= 0 ? 'E' : 'W';
+  const heights = coordinateDecimals(uncertainty95M?.up ?? null);
+  const height =
+    geodetic.ellipsoidalHeightM !== null
+      ? `ellipsoidal height ${fixed(geodetic.ellipsoidalHeightM, heights)} m`
+      : orthometricHeightM !== null
+        ? `height above the receiver's geoid ${fixed(orthometricHeightM, heights)} m`
+        : 'no height';
+  return `${fixed(Math.abs(geodetic.latitudeDeg), degrees)}° ${north}  ${fixed(Math.abs(geodetic.longitudeDeg), degrees)}° ${east}  ${height}`;
+}
+
+function frameText({frame, frameFrom, coordinateEpoch}: Position): string {
+  if (frame === null) return 'frame not stated';
+  const epoch =
+    coordinateEpoch === null ? 'epoch not stated' : `epoch ${coordinateEpoch.toFixed(2)}`;
+  return `${frame}, ${epoch}${frameFrom === null ? '' : ` (${frameFrom})`}`;
+}
+
+function screenedText(screened: Readonly<Record<string, number>>): string {
+  const reasons = Object.entries(screened)
+    .sort(([, a], [, b]) => b - a)
+    .map(([reason, count]) => `${count} ${reason}`);
+  return reasons.length === 0 ? '' : `; left out: ${joined(reasons)}`;
+}
+
+function stillnessText({stability}: Result): string {
+  const rates = [stability.drift.east, stability.drift.north].flatMap((drift) =>
+    drift === null ? [] : [drift.detectableMPerHour],
+  );
+  const power =
+    rates.length === 0
+      ? ''
+      : `; a steady drift of ${formatLength(Math.max(...rates))} per hour would have been seen`;
+  const small = stability.steps.filter((step) => !step.material).length;
+  const steps = small === 0 ? '' : `; ${counted(small, 'small step')} found, below what matters`;
+  return `${stability.verdict}${power}${steps}`;
+}
+
+function noticeLines(notices: readonly Notice[], style: TerminalStyle): string[] {
+  const order = {concern: 0, caution: 1, note: 2};
+  return [...notices]
+    .sort((a, b) => order[a.severity] - order[b.severity])
+    .filter(({severity}) => severity !== 'note')
+    .flatMap(({severity, text}) => {
+      const sign = style.unicode ? (severity === 'concern' ? '■' : '▲') : '!';
+      const [head = '', ...rest] = wrapped(text, style, 2);
+      const paint = severity === 'concern' ? 'red' : 'yellow';
+      return [`${painted(sign, paint, style)} ${head}`, ...rest.map((line) => `  ${line}`)];
+    });
+}
+
+/** Words laid into lines no longer than the terminal is wide. */
+export function wrapped(text: string, style: TerminalStyle, indent = 0): string[] {
+  const width = style.columns - indent;
+  const lines: string[] = [];
+  let line = '';
+  for (const word of text.split(' ')) {
+    if (line !== '' && line.length + 1 + word.length > width) {
+      lines.push(line);
+      line = word;
+    } else {
+      line = line === '' ? word : `${line} ${word}`;
+    }
+  }
+  return [...lines, line];
+}
