@@ -1,0 +1,137 @@
+import type {Epochs} from './epochs.ts';
+
+/** Epochs per block: a block is 5.4 MB, and joining the blocks copies each column once. */
+const BLOCK_EPOCHS = 65_536;
+
+/** One array per column of `Epochs`, all of the same length. */
+export type EpochColumns = Omit<Epochs, 'count'>;
+type ColumnName = keyof EpochColumns;
+type Column = EpochColumns[ColumnName];
+
+/** How each column is made, and what stands in it where nothing was given. */
+const COLUMNS: {readonly [Name in ColumnName]: ColumnKind<EpochColumns[Name]>} = {
+  gpsSeconds: {create: (n) => new Float64Array(n), absent: Number.NaN},
+  latitudeDeg: {create: (n) => new Float64Array(n), absent: Number.NaN},
+  longitudeDeg: {create: (n) => new Float64Array(n), absent: Number.NaN},
+  ellipsoidalHeightM: {create: (n) => new Float64Array(n), absent: Number.NaN},
+  altitudeM: {create: (n) => new Float64Array(n), absent: Number.NaN},
+  separationM: {create: (n) => new Float32Array(n), absent: Number.NaN},
+  fixClass: {create: (n) => new Uint8Array(n), absent: 0},
+  satellites: {create: (n) => new Uint8Array(n), absent: 255},
+  hdop: {create: (n) => new Float32Array(n), absent: Number.NaN},
+  pdop: {create: (n) => new Float32Array(n), absent: Number.NaN},
+  vdop: {create: (n) => new Float32Array(n), absent: Number.NaN},
+  correctionAgeS: {create: (n) => new Float32Array(n), absent: Number.NaN},
+  stationId: {create: (n) => new Uint16Array(n), absent: 65_535},
+  sigmaEastM: {create: (n) => new Float32Array(n), absent: Number.NaN},
+  sigmaNorthM: {create: (n) => new Float32Array(n), absent: Number.NaN},
+  sigmaUpM: {create: (n) => new Float32Array(n), absent: Number.NaN},
+  flags: {create: (n) => new Uint16Array(n), absent: 0},
+  inputIndex: {create: (n) => new Uint8Array(n), absent: 0},
+  lineNumber: {create: (n) => new Uint32Array(n), absent: 0},
+};
+
+interface ColumnKind<T> {
+  readonly create: (length: number) => T;
+  readonly absent: number;
+}
+
+const COLUMN_NAMES = Object.keys(COLUMNS) as ColumnName[];
+
+/**
+ * Columns that grow by one epoch at a time, in blocks that are joined once at the end.
+ *
+ * `add` makes room for an epoch of which nothing is known and returns its row in `block`, where
+ * the caller writes what the log gives. Memory: 83 bytes per epoch; while joining, one column more.
+ */
+export class EpochsBuilder {
+  /** The columns being filled; another object after every 65,536 epochs. */
+  block: EpochColumns = createBlock(BLOCK_EPOCHS);
+  #row = 0;
+  readonly #full: EpochColumns[] = [];
+
+  get count(): number {
+    return this.#full.length * BLOCK_EPOCHS + this.#row;
+  }
+
+  add(): number {
+    if (this.#row === BLOCK_EPOCHS) {
+      this.#full.push(this.block);
+      this.block = createBlock(BLOCK_EPOCHS);
+      this.#row = 0;
+    }
+    const row = this.#row;
+    this.#row += 1;
+    return row;
+  }
+
+  /** The epochs added so far, in the order of adding; the builder is empty afterwards. */
+  finish(): Epochs {
+    const {count} = this;
+    const blocks: Partial<EpochColumns>[] = [...this.#full, this.block];
+    this.#full.length = 0;
+    this.#row = 0;
+    this.block = createBlock(BLOCK_EPOCHS);
+    return {count, ...mapColumns((name) => joined(name, blocks, count))};
+  }
+}
+
+/**
+ * The epochs of the given rows, in the order given; a row may occur more than once.
+ *
+ * @param rows indexes below `epochs.count`
+ */
+export function takeEpochs(epochs: Epochs, rows: Uint32Array): Epochs {
+  return {
+    count: rows.length,
+    ...mapColumns((name) => {
+      const from = epochs[name];
+      const to = COLUMNS[name].create(rows.length);
+      for (let k = 0; k < rows.length; k += 1) to[k] = from[rows[k]!]!;
+      return to;
+    }),
+  };
+}
+
+/** One after the other, in the order given. */
+export function concatEpochs(parts: readonly Epochs[]): Epochs {
+  const count = parts.reduce((sum, part) => sum + part.count, 0);
+  return {
+    count,
+    ...mapColumns((name) => {
+      const to = COLUMNS[name].create(count);
+      let at = 0;
+      for (const part of parts) {
+        to.set(part[name], at);
+        at += part.count;
+      }
+      return to;
+    }),
+  };
+}
+
+function createBlock(length: number): EpochColumns {
+  return mapColumns((name) => {
+    const {create, absent} = COLUMNS[name];
+    const column = create(length);
+    if (absent !== 0) column.fill(absent);
+    return column;
+  });
+}
+
+/** Joins one column and lets go of its parts, so that only one column exists twice at a time. */
+function joined(name: ColumnName, blocks: Partial<EpochColumns>[], count: number): Column {
+  const to = COLUMNS[name].create(count);
+  blocks.forEach((block, k) => {
+    const from = block[name];
+    if (from === undefined) return;
+    to.set(from.subarray(0, Math.min(BLOCK_EPOCHS, count - k * BLOCK_EPOCHS)), k * BLOCK_EPOCHS);
+    delete block[name];
+  });
+  return to;
+}
+
+function mapColumns(make: (name: ColumnName) => Column): EpochColumns {
+  const entries = COLUMN_NAMES.map((name) => [name, make(name)] as const);
+  return Object.fromEntries(entries) as unknown as EpochColumns;
+}
