@@ -3,6 +3,7 @@ import {resolve} from 'node:path';
 import {describe, expect, test} from 'vitest';
 import {readMarks} from '../../src/fieldbook/marks.ts';
 import {sampleLogs} from './make-sample-logs.ts';
+import {QUILLMERE} from './quillmere.ts';
 
 const FOLDER = resolve(import.meta.dirname, '../../sample-logs');
 const LARGEST_BYTES = 1.2e6;
