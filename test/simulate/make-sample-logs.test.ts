@@ -2,6 +2,7 @@ import {mkdirSync, readFileSync, writeFileSync} from 'node:fs';
 import {resolve} from 'node:path';
 import {describe, expect, test} from 'vitest';
 import {readMarks} from '../../src/fieldbook/marks.ts';
+import {readSheet} from '../../src/fieldbook/sheet.ts';
 import {sampleLogs} from './make-sample-logs.ts';
 import {QUILLMERE} from './quillmere.ts';
 
@@ -49,4 +50,11 @@ describe('the marks of Quillmere', () => {
   test('property: there are no others', () => {
     expect(marks.map((mark) => mark.name).sort()).toEqual(Object.keys(QUILLMERE).sort());
   });
+});
+
+test('property: the field sheet tells of the occupation that was simulated', () => {
+  const sheet = readSheet(readFileSync(resolve(FOLDER, 'sheet.yaml')), 'sheet.yaml');
+  expect(sheet.mark).toBe('MOLE');
+  expect(sheet.antenna?.before?.readings?.length).toBe(3);
+  expect(sheet.frame).toBe('ITRF2020');
 });
