@@ -9,10 +9,8 @@ import {
   outputOptions,
   reduceOptions,
 } from './options.ts';
+import {STATUS} from './status.ts';
 import {VERSION} from './version.ts';
-
-/** Exit statuses; the first three are answers, the others are not. */
-export const STATUS = {done: 0, doesNotHold: 1, unusable: 2, cannotTell: 3, defect: 70} as const;
 
 const EXIT_STATUSES = [
   'Exit status: 0 done (check: holds)   1 check: does not hold   2 usage or unusable input',

@@ -31,6 +31,7 @@ const TONE_PAINT: Record<Tone, Paint> = {
   'not tested': 'dim',
 };
 const SHAPES: Record<Tone, string> = {within: '●', look: '▲', outside: '■', 'not tested': '○'};
+const SEVERITY_SHAPES: Record<Notice['severity'], string> = {concern: '■', caution: '▲', note: '·'};
 const PLAIN_SHAPES: Record<Tone, string> = {
   within: '*',
   look: '!',
@@ -196,13 +197,18 @@ function stillnessText({stability}: Result): string {
   return `${stability.verdict}${power}${steps}`;
 }
 
-function noticeLines(notices: readonly Notice[], style: TerminalStyle): string[] {
+/** Notices as lines, gravest first; mere notes only when asked for. */
+export function noticeLines(
+  notices: readonly Notice[],
+  style: TerminalStyle,
+  withNotes = false,
+): string[] {
   const order = {concern: 0, caution: 1, note: 2};
   return [...notices]
     .sort((a, b) => order[a.severity] - order[b.severity])
-    .filter(({severity}) => severity !== 'note')
+    .filter(({severity}) => withNotes || severity !== 'note')
     .flatMap(({severity, text}) => {
-      const sign = style.unicode ? (severity === 'concern' ? '■' : '▲') : '!';
+      const sign = style.unicode ? SEVERITY_SHAPES[severity] : '!';
       const [head = '', ...rest] = wrapped(text, style, 2);
       const paint = severity === 'concern' ? 'red' : 'yellow';
       return [`${painted(sign, paint, style)} ${head}`, ...rest.map((line) => `  ${line}`)];

@@ -1,6 +1,9 @@
 import {probabilityInCircle} from '../statistics/accuracy-measures.ts';
 import {normalWithin} from '../statistics/distribution.ts';
-import type {Comparison, Covariance3, Decision, PerAxis, Requirement} from './result.ts';
+import type {Comparison, Decision, PerAxis, Requirement} from './result.ts';
+
+/** Covariance of east, north and up in m², row by row; NaN in the row of a height not known. */
+export type CovarianceM2 = readonly (readonly number[])[];
 
 /** χ² with 2 degrees of freedom and normal, at 95 %. */
 const CHI_SQUARE_2_AT_95 = 5.991464547107982;
@@ -20,9 +23,9 @@ export interface ComparisonInput {
   /** Measured minus reference, reduced to the mark; a component that cannot be compared is null. */
   readonly offsetM: PerAxis<number | null>;
   /** Of the measured position, budget included; null when the record cannot tell. */
-  readonly covarianceM2: Covariance3 | null;
+  readonly covarianceM2: CovarianceM2 | null;
   /** Of the mark; null when nobody gave one, and it counts as exact. */
-  readonly markCovarianceM2: Covariance3 | null;
+  readonly markCovarianceM2: CovarianceM2 | null;
   readonly asked: readonly Asked[];
   readonly assumptions: readonly string[];
 }
@@ -49,7 +52,7 @@ export function compareWithMark(input: ComparisonInput): Comparison {
  * Whether a tolerance could be accepted at all with this uncertainty, the offset being zero. When
  * it could not, no measurement of this length decides it.
  */
-export function couldPass(asked: Asked, covarianceM2: Covariance3): boolean {
+export function couldPass(asked: Asked, covarianceM2: CovarianceM2): boolean {
   const probability = probabilityWithin(asked, {east: 0, north: 0, up: 0}, covarianceM2);
   return probability !== null && probability >= SURE;
 }
@@ -58,7 +61,7 @@ export function couldPass(asked: Asked, covarianceM2: Covariance3): boolean {
 export function totalCovariance({
   covarianceM2,
   markCovarianceM2,
-}: Pick<ComparisonInput, 'covarianceM2' | 'markCovarianceM2'>): Covariance3 | null {
+}: Pick<ComparisonInput, 'covarianceM2' | 'markCovarianceM2'>): CovarianceM2 | null {
   if (covarianceM2 === null) return null;
   return covarianceM2.map((row, i) =>
     row.map((value, j) => value + (markCovarianceM2?.[i]?.[j] ?? 0)),
@@ -78,7 +81,7 @@ function azimuthDeg({east, north}: PerAxis<number | null>): number | null {
 function decided(
   asked: Asked,
   offsetM: PerAxis<number | null>,
-  covarianceM2: Covariance3 | null,
+  covarianceM2: CovarianceM2 | null,
 ): Requirement {
   const probability =
     covarianceM2 === null ? null : probabilityWithin(asked, offsetM, covarianceM2);
@@ -95,7 +98,7 @@ function decision(probability: number | null): Decision {
 function probabilityWithin(
   {of, toleranceM}: Asked,
   offsetM: PerAxis<number | null>,
-  covarianceM2: Covariance3,
+  covarianceM2: CovarianceM2,
 ): number | null {
   if (of === 'horizontal') {
     const {east, north} = offsetM;
@@ -117,7 +120,7 @@ function probabilityWithin(
 
 const AXIS = {east: 0, north: 1, up: 2} as const;
 
-export function planeOf(covarianceM2: Covariance3) {
+export function planeOf(covarianceM2: CovarianceM2) {
   return {
     eastEast: covarianceM2[0]![0]!,
     eastNorth: covarianceM2[0]![1]!,
@@ -127,7 +130,7 @@ export function planeOf(covarianceM2: Covariance3) {
 
 function normalisedErrors(
   offsetM: PerAxis<number | null>,
-  covarianceM2: Covariance3 | null,
+  covarianceM2: CovarianceM2 | null,
 ): Comparison['normalisedError'] {
   const axis = (name: 'east' | 'north' | 'up') => {
     const offset = offsetM[name];
@@ -147,7 +150,7 @@ function normalisedErrors(
 /** √(dᵀ C⁻¹ d / χ²₂(95 %)): at most one when the offset lies within the joint 95 % ellipse. */
 function horizontalNormalisedError(
   {east, north}: PerAxis<number | null>,
-  covarianceM2: Covariance3 | null,
+  covarianceM2: CovarianceM2 | null,
 ): number | null {
   if (east === null || north === null || covarianceM2 === null) return null;
   const {eastEast, eastNorth, northNorth} = planeOf(covarianceM2);
@@ -161,7 +164,7 @@ function horizontalNormalisedError(
 
 function agreement(
   {horizontal, up}: Comparison['normalisedError'],
-  markCovarianceM2: Covariance3 | null,
+  markCovarianceM2: CovarianceM2 | null,
 ): Comparison['agreement'] {
   const tested = [horizontal, up].filter((error) => error !== null);
   if (markCovarianceM2 === null || tested.length === 0) return 'not tested';

@@ -12,6 +12,8 @@ export interface Result {
   readonly command: 'reduce' | 'check';
   readonly inputs: readonly InputAccount[];
   readonly occupation: OccupationFacts;
+  /** What the field sheet states, item by item in the sheet's order; null: not given. */
+  readonly fieldSheet: readonly SheetItem[];
   readonly epochs: EpochAccount;
   readonly reference: Reference | null;
   readonly position: Position | null;
@@ -29,7 +31,8 @@ export interface Result {
 
 export type PerAxis<T = number> = {readonly east: T; readonly north: T; readonly up: T};
 export type PerAxisXyz = {readonly x: number; readonly y: number; readonly z: number};
-export type Covariance3 = readonly (readonly number[])[];
+/** Covariance of east, north, up, row by row; null in the row and column of a height not known. */
+export type Covariance3 = readonly (readonly (number | null)[])[];
 
 /** What was read from one input: every line is used, ignored by type, or rejected for a reason. */
 export interface InputAccount {
@@ -59,6 +62,12 @@ export interface OccupationFacts {
   readonly heightUsed: 'opening' | 'mean' | 'interpolated' | null;
 }
 
+export interface SheetItem {
+  readonly section: string;
+  readonly item: string;
+  readonly value: string | null;
+}
+
 export interface EpochAccount {
   readonly read: number;
   readonly used: number;
@@ -82,7 +91,8 @@ export interface Reference {
   readonly from: 'mark' | 'option' | 'mean';
   readonly name: string | null;
   readonly geodetic: GeodeticPosition;
-  readonly ecefM: PerAxisXyz;
+  /** null when the reference has no ellipsoidal height. */
+  readonly ecefM: PerAxisXyz | null;
 }
 
 export interface GeodeticPosition {

@@ -1,0 +1,179 @@
+import {UsageError} from '../errors.ts';
+import type {Mark} from '../fieldbook/mark.ts';
+import {findMark, readMarks} from '../fieldbook/marks.ts';
+import {emptySheet, readSheet, type Sheet} from '../fieldbook/sheet.ts';
+import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
+import type {LogContents} from '../log/contents.ts';
+import {standingOf} from '../occupation/describe.ts';
+import {type Reduced, reduceOccupation} from '../occupation/reduce.ts';
+import type {ReduceRequest} from '../occupation/request.ts';
+import type {Result} from '../occupation/result.ts';
+import type {ScreenRules} from '../occupation/screen.ts';
+import type {CivilDate} from '../time/calendar.ts';
+import {utcFromGpsSeconds} from '../time/gps-time.ts';
+import {noticeText} from '../wording/notices.ts';
+import {readWhole, requireInputs, requireOutputs, writeOutputs} from './files.ts';
+import type {CommandArguments} from './options.ts';
+import {outputPaths, outputsOf} from './outputs.ts';
+import {progressOn} from './progress.ts';
+import {readLogs} from './read-logs.ts';
+import {readingOptions} from './reading-options.ts';
+import {
+  askedOf,
+  type InForce,
+  rememberOthers,
+  type Settings,
+  screenRules,
+  withSheet,
+} from './settings.ts';
+import {STATUS} from './status.ts';
+import {resultSummary, styleOf} from './terminal.ts';
+import {
+  countOption,
+  ellipsoidOption,
+  lengthOption,
+  momentOption,
+  placeOption,
+  requireSingle,
+} from './values.ts';
+import {VERSION} from './version.ts';
+
+/** `stillmark reduce` and `stillmark check`; returns the exit status. */
+export async function reduce(typed: CommandArguments, command: Result['command']): Promise<number> {
+  requireSingle({...typed});
+  const companions = [typed.sheet, typed.marks].filter((path) => path !== undefined);
+  requireInputs(companions);
+  requireOutputs(outputPaths(typed), [...typed.log, ...companions]);
+  const sheet = typed.sheet === undefined ? emptySheet() : await sheetOf(typed.sheet);
+  const inForce = withSheet(typed, sheet);
+  const mark = await markOf(inForce.options, command);
+  const request = await requestOf(command, inForce, sheet, mark);
+  const reduced = reduceOccupation(request);
+  await writeOutputs(await outputsOf(typed, reduced, request));
+  if (!outputPaths(typed).includes('-')) {
+    process.stdout.write(resultSummary(reduced.result, styleOf(process.stdout, process.env)));
+  }
+  return exitStatus(reduced);
+}
+
+function exitStatus({result}: Reduced): number {
+  if (result.command === 'reduce')
+    return result.segments.length > 0 ? STATUS.done : STATUS.cannotTell;
+  switch (result.verdict) {
+    case 'holds':
+      return STATUS.done;
+    case 'off':
+    case 'moving':
+      return STATUS.doesNotHold;
+    default:
+      return STATUS.cannotTell;
+  }
+}
+
+async function sheetOf(path: string): Promise<Sheet> {
+  return readSheet(await readWhole(path), path);
+}
+
+/** The known mark, when its coordinates can be found; `check` cannot do without. */
+async function markOf(options: CommandArguments, command: Result['command']): Promise<Mark | null> {
+  if (options.marks === undefined || options.mark === undefined) {
+    if (command === 'reduce') return null;
+    throw new UsageError(
+      options.mark === undefined
+        ? 'check needs the name of the mark that was occupied: --mark NAME, or `mark:` in the field sheet'
+        : `check needs the coordinates of ${options.mark}: name the file that holds them with --marks FILE`,
+    );
+  }
+  const marks = readMarks(await readWhole(options.marks), options.marks);
+  const found = findMark(marks, options.mark);
+  if (found.kind === 'found') return found.mark;
+  const near = found.near.length === 0 ? '' : `; near in name: ${found.near.join(', ')}`;
+  throw new UsageError(
+    `no mark ${options.mark} among the ${marks.length} of ${options.marks}${near}`,
+  );
+}
+
+async function requestOf(
+  command: Result['command'],
+  inForce: InForce,
+  sheet: Sheet,
+  mark: Mark | null,
+): Promise<ReduceRequest> {
+  const {options} = inForce;
+  const ellipsoid = ellipsoidOption(options.ellipsoid);
+  const at = placeOption('at', options.at);
+  const progress = progressOn(process.stderr, options.quiet, () => performance.now());
+  const {contents: log, inputs} = await readLogs(
+    options.log,
+    readingOptions(options, ellipsoid),
+    progress,
+  );
+  requireDate(log);
+  const settings: Settings = {};
+  const rules = screenRules(inForce, firstDateOf(log), settings);
+  const asked = command === 'check' ? askedOf(inForce, sheet, mark, settings) : [];
+  rememberOthers(inForce, settings);
+  return {
+    command,
+    program: {name: 'stillmark', version: VERSION},
+    inputs,
+    log,
+    ellipsoid,
+    rules: withinStand(rules, options.stand, log, ellipsoid),
+    at,
+    mark,
+    markName: options.mark ?? null,
+    sheet,
+    asked,
+    frame: frameOf(inForce),
+    coordinateEpoch: options.coordinateEpoch ?? null,
+    movementLimitM: lengthOption('movement-limit', options.movementLimit),
+    wantM: lengthOption('want', options.want),
+    settings,
+    say: noticeText,
+  };
+}
+
+function frameOf({options, fromSheet}: InForce): ReduceRequest['frame'] {
+  if (options.frame === undefined) return null;
+  return {name: options.frame, from: fromSheet.has('frame') ? 'sheet' : 'option'};
+}
+
+/** A time series without a date can be described, but a position without one cannot be handed on. */
+function requireDate(log: LogContents): void {
+  if (log.findings.some(({code}) => code === 'no-date')) {
+    throw new UsageError(
+      'the log carries no date (no RMC or ZDA sentence): give the date of its first epoch with --date YYYY-MM-DD',
+    );
+  }
+}
+
+function firstDateOf({epochs}: LogContents): CivilDate | null {
+  return epochs.count === 0 ? null : utcFromGpsSeconds(epochs.gpsSeconds[0] ?? 0).date;
+}
+
+/** Narrows the time window to the standing period that the user numbered. */
+function withinStand(
+  rules: ScreenRules,
+  stand: number | undefined,
+  {epochs}: LogContents,
+  ellipsoid: Ellipsoid,
+): ScreenRules {
+  const wanted = countOption('stand', stand);
+  if (wanted === null) return rules;
+  const periods = standingOf(epochs, ellipsoid);
+  const period = periods[wanted - 1];
+  if (period === undefined) {
+    throw new UsageError(
+      `--stand ${wanted}: the log has ${periods.length} standing periods; \`stillmark contents\` lists them`,
+    );
+  }
+  const from = momentOption('stand', period.fromUtc) ?? Number.NEGATIVE_INFINITY;
+  const to = momentOption('stand', period.toUtc) ?? Number.POSITIVE_INFINITY;
+  // Printed times are rounded to a millisecond.
+  return {
+    ...rules,
+    fromGpsSeconds: Math.max(from - 0.001, rules.fromGpsSeconds ?? from - 0.001),
+    toGpsSeconds: Math.min(to + 0.001, rules.toGpsSeconds ?? to + 0.001),
+  };
+}

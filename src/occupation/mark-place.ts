@@ -1,0 +1,91 @@
+import type {Mark} from '../fieldbook/mark.ts';
+import {covarianceEnuFromEcef} from '../geodesy/covariance.ts';
+import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
+import {geodeticFromEcef} from '../geodesy/geocentric.ts';
+import {type LocalFrame, localFrame} from '../geodesy/local.ts';
+import type {CovarianceM2} from './compare.ts';
+
+/** A known mark as the comparison needs it: plan, heights and covariance, each only if known. */
+export interface MarkPlace {
+  readonly name: string;
+  readonly plan: {readonly latitudeDeg: number; readonly longitudeDeg: number} | null;
+  readonly ellipsoidalHeightM: number | null;
+  readonly orthometricHeightM: number | null;
+  readonly covarianceM2: CovarianceM2 | null;
+}
+
+/** Plan position of a grid coordinate; what projections exist is the business of geodesy. */
+export type PlanOfGrid = (
+  projection: string,
+  eastingM: number,
+  northingM: number,
+) => {readonly latitudeDeg: number; readonly longitudeDeg: number};
+
+export function markPlace(mark: Mark, ellipsoid: Ellipsoid, planOfGrid: PlanOfGrid): MarkPlace {
+  const {plan, ellipsoidalHeightM} = planAndHeight(mark, ellipsoid, planOfGrid);
+  return {
+    name: mark.name,
+    plan,
+    ellipsoidalHeightM,
+    orthometricHeightM: mark.coordinates.orthometricHeightM ?? null,
+    covarianceM2: covarianceOf(mark, plan, ellipsoid),
+  };
+}
+
+function planAndHeight(
+  {coordinates}: Mark,
+  ellipsoid: Ellipsoid,
+  planOfGrid: PlanOfGrid,
+): Pick<MarkPlace, 'plan' | 'ellipsoidalHeightM'> {
+  switch (coordinates.kind) {
+    case 'geocentric': {
+      const {latitudeDeg, longitudeDeg, ellipsoidalHeightM} = geodeticFromEcef(
+        coordinates,
+        ellipsoid,
+      );
+      return {plan: {latitudeDeg, longitudeDeg}, ellipsoidalHeightM};
+    }
+    case 'geodetic': {
+      const {latitudeDeg, longitudeDeg, ellipsoidalHeightM} = coordinates;
+      return {plan: {latitudeDeg, longitudeDeg}, ellipsoidalHeightM: ellipsoidalHeightM ?? null};
+    }
+    case 'grid': {
+      const plan = planOfGrid(coordinates.projection, coordinates.eastingM, coordinates.northingM);
+      return {plan, ellipsoidalHeightM: coordinates.ellipsoidalHeightM ?? null};
+    }
+    case 'height only':
+      return {plan: null, ellipsoidalHeightM: coordinates.ellipsoidalHeightM ?? null};
+  }
+}
+
+/**
+ * Covariance of the mark in its own east, north, up. An axis without a stated uncertainty counts
+ * as exact; null when none has one.
+ */
+function covarianceOf(
+  {uncertainty}: Mark,
+  plan: MarkPlace['plan'],
+  ellipsoid: Ellipsoid,
+): CovarianceM2 | null {
+  if (uncertainty === undefined) return null;
+  if (uncertainty.kind === 'standard') {
+    const {eastM, northM, upM} = uncertainty;
+    if (eastM === undefined && northM === undefined && upM === undefined) return null;
+    return [
+      [(eastM ?? 0) ** 2, 0, 0],
+      [0, (northM ?? 0) ** 2, 0],
+      [0, 0, (upM ?? 0) ** 2],
+    ];
+  }
+  if (uncertainty.axes === 'enu' || plan === null) return uncertainty.covarianceM2;
+  return covarianceEnuFromEcef(uncertainty.covarianceM2, frameAt(plan, ellipsoid));
+}
+
+/** The local frame of a plan position; its height does not turn the axes. */
+export function frameAt(
+  plan: {readonly latitudeDeg: number; readonly longitudeDeg: number},
+  ellipsoid: Ellipsoid,
+  ellipsoidalHeightM = 0,
+): LocalFrame {
+  return localFrame({...plan, ellipsoidalHeightM}, ellipsoid);
+}

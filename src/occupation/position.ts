@@ -1,0 +1,112 @@
+import type {Epochs} from '../epochs/epochs.ts';
+import {ecefFromEnu, geodeticFromEnu} from '../geodesy/local.ts';
+import {r95} from '../statistics/accuracy-measures.ts';
+import {moments} from '../statistics/moments.ts';
+import {isoUtc} from '../time/gps-time.ts';
+import {budgetVariancesM2} from './budget.ts';
+import {type CovarianceM2, planeOf} from './compare.ts';
+import {type LocalColumns, taken} from './local-columns.ts';
+import type {BudgetRow, PerAxis, Position} from './result.ts';
+import {ellipseOf} from './scatter.ts';
+import type {Session} from './session.ts';
+
+const NORMAL_95 = 1.959963984540054;
+/** √χ²₂(95 %): scale from the standard ellipse to the one that holds 95 %. */
+const ELLIPSE_95 = 2.447746830680816;
+
+export interface PositionInput {
+  readonly session: Session;
+  readonly columns: LocalColumns;
+  readonly epochs: Epochs;
+  readonly budget: readonly BudgetRow[];
+  readonly frame: Position['frame'];
+  readonly frameFrom: Position['frameFrom'];
+  readonly coordinateEpoch: number | null;
+}
+
+/** The mean of one session as a position, with its uncertainty, budget included. */
+export function positionOf(input: PositionInput): Position {
+  const {session, columns, epochs} = input;
+  const mean = {
+    eastM: session.meanM.east ?? 0,
+    northM: session.meanM.north ?? 0,
+    upM: session.meanM.up ?? 0,
+  };
+  const geodetic = geodeticFromEnu(mean, columns.frame);
+  const ecef = ecefFromEnu(mean, columns.frame);
+  const ellipsoidal = columns.heightKind === 'ellipsoidal';
+  const covarianceEnuM2 = covarianceOf(session, input.budget);
+  const {originEcef} = columns.frame;
+  return {
+    of: 'antenna, point not stated',
+    frame: input.frame,
+    frameFrom: input.frameFrom,
+    coordinateEpoch: input.coordinateEpoch,
+    observedUtc: isoUtc((session.fromGpsSeconds + session.toGpsSeconds) / 2, 3),
+    ecefM: ellipsoidal ? {x: ecef.xM, y: ecef.yM, z: ecef.zM} : null,
+    geodetic: {
+      latitudeDeg: geodetic.latitudeDeg,
+      longitudeDeg: geodetic.longitudeDeg,
+      ellipsoidalHeightM: ellipsoidal ? geodetic.ellipsoidalHeightM : null,
+    },
+    orthometricHeightM: meanAltitudeM(epochs, session.indices),
+    grid: null,
+    originEcefM: {x: originEcef.xM, y: originEcef.yM, z: originEcef.zM},
+    ...uncertaintyOf(covarianceEnuM2),
+    independentLooks: session.independentLooks,
+    correlationTimeS: session.correlationTimeS,
+  };
+}
+
+/** Mean height above the receiver's own geoid, when every epoch used gives one. */
+function meanAltitudeM(epochs: Epochs, indices: Uint32Array): number | null {
+  const altitude = moments(taken(epochs.altitudeM, indices))?.mean;
+  return altitude === undefined || Number.isNaN(altitude) ? null : altitude;
+}
+
+function covarianceOf(session: Session, budget: readonly BudgetRow[]): CovarianceM2 | null {
+  const own = session.standardUncertaintyM;
+  if (own === null || own.east === null || own.north === null) return null;
+  const others = budgetVariancesM2(budget);
+  const eastNorth = session.eastNorthCorrelation * own.east * own.north;
+  return [
+    [own.east ** 2 + others.east, eastNorth, 0],
+    [eastNorth, own.north ** 2 + others.north, 0],
+    // NaN for a height that is not known; null in the result.
+    [0, 0, own.up === null ? Number.NaN : own.up ** 2 + others.up],
+  ];
+}
+
+function uncertaintyOf(
+  covarianceM2: CovarianceM2 | null,
+): Pick<Position, 'standardUncertaintyM' | 'uncertainty95M' | 'ellipse95' | 'covarianceEnuM2'> {
+  if (covarianceM2 === null) {
+    return {
+      standardUncertaintyM: null,
+      uncertainty95M: null,
+      ellipse95: null,
+      covarianceEnuM2: null,
+    };
+  }
+  const standard: PerAxis<number | null> = {
+    east: Math.sqrt(covarianceM2[0]![0]!),
+    north: Math.sqrt(covarianceM2[1]![1]!),
+    up: finiteOrNull(Math.sqrt(covarianceM2[2]![2]!)),
+  };
+  const plane = planeOf(covarianceM2);
+  return {
+    standardUncertaintyM: standard,
+    uncertainty95M: {
+      east: NORMAL_95 * standard.east!,
+      north: NORMAL_95 * standard.north!,
+      up: standard.up === null ? null : NORMAL_95 * standard.up,
+      horizontalRadius: r95(plane),
+    },
+    ellipse95: ellipseOf(plane, ELLIPSE_95),
+    covarianceEnuM2: covarianceM2.map((row) => row.map(finiteOrNull)),
+  };
+}
+
+function finiteOrNull(value: number): number | null {
+  return Number.isFinite(value) ? value : null;
+}

@@ -1,0 +1,173 @@
+import {couldPass} from './compare.ts';
+import type {NoticeList} from './notices.ts';
+import type {ReduceRequest} from './request.ts';
+import type {BudgetRow, PerAxis, Result, Step} from './result.ts';
+import type {ScreenOutcome} from './screen.ts';
+import type {Session} from './session.ts';
+
+/*
+ * Which facts of a finished reduction the user must be told, as codes with values. The sentences
+ * are made elsewhere from the same codes.
+ */
+
+/** A record of which more than this share is far from its neighbours is not clean. */
+const CLEAN_SHARE = 0.1;
+
+/** What reading found, before anything is computed. */
+export function noticeRecord({log}: ReduceRequest, notices: NoticeList): void {
+  for (const {severity, code, values} of log.findings) notices.add(severity, code, [], values);
+}
+
+export function noticeScreening(
+  {epochs, screening, position}: Result,
+  {fixClassKept, fixClassShare}: ScreenOutcome,
+  notices: NoticeList,
+): void {
+  if (fixClassKept !== null && fixClassShare < 0.5) {
+    notices.add('caution', 'fix-class-minority', ['epochs.screened'], {
+      fixClass: fixClassKept,
+      share: fixClassShare,
+    });
+  }
+  if (fixClassKept === 'unknown') notices.add('note', 'fix-class-unknown', ['budget']);
+  const gross = epochs.screened['far from its neighbours'] ?? 0;
+  if (gross > CLEAN_SHARE * (gross + epochs.used)) {
+    notices.add('caution', 'record-not-clean', ['epochs.screened'], {
+      share: gross / (gross + epochs.used),
+    });
+  }
+  const moved = screening.withoutScreening?.offsetFromResultM;
+  const limit = position?.uncertainty95M;
+  if (
+    moved &&
+    limit &&
+    (beyond(moved, limit, 'east') || beyond(moved, limit, 'north') || beyond(moved, limit, 'up'))
+  ) {
+    notices.add('caution', 'screening-moves-mean', ['screening.withoutScreening'], {
+      horizontalM: Math.hypot(moved.east ?? 0, moved.north ?? 0),
+      upM: moved.up,
+    });
+  }
+}
+
+function beyond(
+  moved: PerAxis<number | null>,
+  limit: PerAxis<number | null>,
+  axis: keyof PerAxis,
+): boolean {
+  return Math.abs(moved[axis] ?? 0) > (limit[axis] ?? Number.POSITIVE_INFINITY);
+}
+
+/** What limits the uncertainty, and which contributions nobody gave. */
+export function noticeBudget({budget, position}: Result, notices: NoticeList): void {
+  const missing = (source: string) =>
+    budget.some((row) => row.source === source && row.standardUncertaintyM === null);
+  if (missing('base or network')) notices.add('caution', 'base-not-included', ['budget']);
+  if (missing('antenna height'))
+    notices.add('caution', 'antenna-height-not-given', ['occupation.antennaHeightM', 'budget']);
+  if (missing('centring over the mark')) notices.add('note', 'centring-not-included', ['budget']);
+  const service = budget.find((row) => row.source === 'positioning service');
+  if (service !== undefined && position?.uncertainty95M) {
+    notices.add('caution', 'service-included', ['position.uncertainty95M'], serviceValues(service));
+  }
+}
+
+function serviceValues({standardUncertaintyM, from}: BudgetRow) {
+  return {eastM: standardUncertaintyM?.east ?? null, upM: standardUncertaintyM?.up ?? null, from};
+}
+
+export function noticeStability({stability, epochs}: Result, notices: NoticeList): void {
+  const material = stability.steps.filter((step) => step.material);
+  for (const step of material)
+    notices.add('concern', 'step-material', ['position'], stepValues(step));
+  const small = stability.steps.filter((step) => !step.material);
+  if (small.length > 0) {
+    const largest = small.reduce((a, b) => (sizeM(b) > sizeM(a) ? b : a));
+    notices.add('note', 'steps-small', ['stability.steps'], {
+      count: small.length,
+      ...stepValues(largest),
+    });
+  }
+  const {east, north, up} = stability.drift;
+  if (stability.verdict === 'drifting') {
+    notices.add('concern', 'drift-material', ['stability.drift'], {
+      eastMPerHour: east?.material === true ? east.rateMPerHour : null,
+      northMPerHour: north?.material === true ? north.rateMPerHour : null,
+      upMPerHour: up?.material === true ? up.rateMPerHour : null,
+    });
+  }
+  if (stability.verdict === 'settling') notices.add('concern', 'settling', ['position']);
+  if (epochs.gaps.length > 0) {
+    const longest = epochs.gaps.reduce((a, b) => (b.durationS > a.durationS ? b : a));
+    notices.add('note', 'gaps', ['epochs.gaps'], {
+      count: epochs.gaps.length,
+      longestS: longest.durationS,
+      fromUtc: longest.fromUtc,
+    });
+  }
+}
+
+function sizeM({eastM, northM, upM}: Step): number {
+  return Math.hypot(eastM, northM, upM ?? 0);
+}
+
+function stepValues(step: Step) {
+  return {
+    utc: step.utc,
+    sizeM: sizeM(step),
+    eastM: step.eastM,
+    northM: step.northM,
+    upM: step.upM,
+    beside: step.beside.length === 0 ? null : step.beside.join(', '),
+  };
+}
+
+/** What limits the interval of the mean: each reason once, with the axes that it touches. */
+export function noticeSession(sessions: readonly Session[], notices: NoticeList): void {
+  const axesOf = new Map<string, Set<string>>();
+  for (const {code, axes} of sessions.flatMap(({limits}) => limits)) {
+    const known = axesOf.get(code) ?? new Set<string>();
+    for (const axis of axes) known.add(axis);
+    axesOf.set(code, known);
+  }
+  for (const [code, axes] of axesOf) {
+    notices.add('caution', code, ['position.uncertainty95M'], {axes: [...axes].join(', ')});
+  }
+}
+
+export function noticeComparison(
+  {comparison, segments, reference, command}: Result,
+  request: ReduceRequest,
+  notices: NoticeList,
+): void {
+  if (command !== 'check') return;
+  if (comparison === null) {
+    if (segments.length > 1) {
+      notices.add('caution', 'segments-not-compared', ['comparison'], {
+        mark: reference?.name ?? null,
+        segments: segments.length,
+      });
+    }
+    return;
+  }
+  for (const assumption of comparison.assumptions) {
+    notices.add('caution', 'assumed', ['comparison.assumptions'], {
+      assumption,
+      mark: comparison.mark,
+    });
+  }
+  if (request.asked.length === 0)
+    notices.add('caution', 'no-tolerance', ['comparison.requirements']);
+  const covarianceM2 = segments[0]?.position.covarianceEnuM2;
+  if (!covarianceM2) return;
+  const finite = covarianceM2.map((row) => row.map((value) => value ?? Number.NaN));
+  for (const asked of request.asked) {
+    if (asked.of === 'up' && comparison.offsetM.up === null) continue;
+    if (!couldPass(asked, finite)) {
+      notices.add('caution', 'tolerance-out-of-reach', ['comparison.requirements'], {
+        of: asked.of,
+        toleranceM: asked.toleranceM,
+      });
+    }
+  }
+}

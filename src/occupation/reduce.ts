@@ -1,0 +1,338 @@
+import {isoUtc} from '../time/gps-time.ts';
+import {epochAccount} from './account.ts';
+import {besideStep} from './beside-step.ts';
+import {budgetRows} from './budget.ts';
+import {compareWithMark} from './compare.ts';
+import {explainNulls} from './explain-nulls.ts';
+import {keptIndices, type LocalColumns, localColumns, taken} from './local-columns.ts';
+import {type MarkPlace, markPlace} from './mark-place.ts';
+import {isTravelling} from './motion.ts';
+import {type NoticeList, noticeList} from './notices.ts';
+import {positionOf} from './position.ts';
+import {
+  noticeBudget,
+  noticeComparison,
+  noticeRecord,
+  noticeScreening,
+  noticeSession,
+  noticeStability,
+} from './record-notices.ts';
+import {offsetFrom, referenceOf} from './reference.ts';
+import type {ReduceRequest} from './request.ts';
+import type {
+  BudgetRow,
+  Comparison,
+  EpochAccount,
+  PerAxis,
+  Position,
+  Reference,
+  Result,
+  Segment,
+  Stability,
+} from './result.ts';
+import {scatterAbout} from './scatter.ts';
+import {type ScreenOutcome, screenByRules} from './screen.ts';
+import {screenNeighbours} from './screen-neighbours.ts';
+import {screeningOf} from './screening-of-record.ts';
+import {analyseSession, type Session} from './session.ts';
+import {movementLimit, stabilityOf} from './stability.ts';
+import {checkVerdict} from './verdict.ts';
+
+/** The result, and the epochs it rests on for charts and the epoch table. */
+export interface Reduced {
+  readonly result: Result;
+  /** East, north and up of every epoch read, about the reference of the result. */
+  readonly eastM: Float64Array;
+  readonly northM: Float64Array;
+  readonly upM: Float64Array;
+  /** Screening codes, 0 for the epochs used. */
+  readonly reason: Uint8Array;
+}
+
+/** One occupation from the joined logs to the result: the whole line, in order. */
+export function reduceOccupation(request: ReduceRequest): Reduced {
+  const {epochs, resolution} = request.log;
+  const notices = noticeList(request.say);
+  noticeRecord(request, notices);
+  const outcome = screenByRules(epochs, request.rules);
+  const columns = localColumns(epochs, outcome.reason, request.ellipsoid);
+  const account = () => epochAccount(epochs, outcome.reason, resolution, request.ellipsoid);
+  if (columns === undefined)
+    return withoutPosition({request, notices, account: account()}, outcome);
+
+  const kept = keptIndices(outcome.reason);
+  if (isTravelling(trackOf(request, columns, kept))) {
+    return withoutPosition({request, notices, account: account(), travelling: true}, outcome);
+  }
+  screenNeighbours(epochs.gpsSeconds, columns, kept, account().resolutionM, outcome.reason);
+  return averaged({request, notices, account: account()}, outcome, columns);
+}
+
+interface Record {
+  readonly request: ReduceRequest;
+  readonly notices: NoticeList;
+  readonly account: EpochAccount;
+  readonly travelling?: boolean;
+}
+
+function trackOf({log}: ReduceRequest, columns: LocalColumns, indices: Uint32Array) {
+  return {
+    gpsSeconds: taken(log.epochs.gpsSeconds, indices),
+    eastM: taken(columns.eastM, indices),
+    northM: taken(columns.northM, indices),
+  };
+}
+
+/** The line for a record that can be averaged. */
+function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns): Reduced {
+  const {request, notices, account} = record;
+  const {epochs} = request.log;
+  const whole = session(request, columns, keptIndices(outcome.reason), account);
+  const place =
+    request.mark === null ? null : markPlace(request.mark, request.ellipsoid, request.planOfGrid);
+  const stability = stabilityOf(
+    whole,
+    movementLimit(whole, request.movementLimitM, request.asked),
+    false,
+    ({interval95GpsSeconds: [from, to]}) => besideStep(epochs, from, to, account.intervalS ?? 1),
+  );
+  const sessions = parts(whole, stability, epochs.gpsSeconds).map((indices) =>
+    indices === whole.indices ? whole : session(request, columns, indices, account),
+  );
+  const segments = sessions.map((part) => segmentOf(part, record, columns, outcome));
+  const single = segments.length === 1 ? segments[0]! : null;
+  const measured = (single ?? segmentOf(whole, record, columns, outcome)).position;
+  const reference = referenceOf(measured, place, request.at, request.ellipsoid);
+  const offsetM = offsetFrom(targetOf(reference, place), measured, request.ellipsoid);
+  const comparison =
+    place === null || single === null ? null : comparisonOf(record, place, single.position);
+  const result: Result = {
+    ...common(record),
+    reference,
+    position: single?.position ?? null,
+    segments,
+    budget: budgetOf(whole, record, outcome, columns),
+    scatter: {
+      aboutMean: scatterAbout(usedPositions(columns, whole), whole.meanM),
+      aboutReference: scatterAbout(usedPositions(columns, whole), centreOf(whole.meanM, offsetM)),
+    },
+    screening: screeningOf(epochs, columns, outcome, whole),
+    stability,
+    comparison,
+    verdict:
+      request.command === 'check'
+        ? checkVerdict(comparison?.requirements ?? [], stability.verdict)
+        : null,
+  };
+  noticeScreening(result, outcome, notices);
+  noticeSession(sessions, notices);
+  noticeBudget(result, notices);
+  noticeStability(result, notices);
+  noticeComparison(result, request, notices);
+  return {
+    result: explainNulls({...result, notices: notices.notices}, notices),
+    ...aboutReference(columns, whole.meanM, offsetM),
+    reason: outcome.reason,
+  };
+}
+
+/** The line for a record that yields no position: nothing usable, or a journey. */
+function withoutPosition(record: Record, outcome: ScreenOutcome): Reduced {
+  const {request, notices, account} = record;
+  const travelling = record.travelling === true;
+  const stability: Stability = {
+    verdict: travelling ? 'travelling' : 'cannot tell',
+    drift: {east: null, north: null, up: null},
+    steps: [],
+    movementLimitM: {horizontal: request.movementLimitM, up: request.movementLimitM},
+  };
+  const result: Result = {
+    ...common(record),
+    reference: null,
+    position: null,
+    segments: [],
+    budget: [],
+    scatter: null,
+    screening: {fixClassKept: outcome.fixClassKept, withoutScreening: null, receiverSigmaM: null},
+    stability,
+    comparison: null,
+    verdict: request.command === 'check' ? checkVerdict([], stability.verdict) : null,
+  };
+  notices.add('concern', travelling ? 'travelling' : 'no-usable-epoch', NO_POSITION, {
+    read: account.read,
+  });
+  const nowhere = new Float64Array(request.log.epochs.count).fill(Number.NaN);
+  return {
+    result: explainNulls({...result, notices: notices.notices}, notices),
+    eastM: nowhere,
+    northM: nowhere,
+    upM: nowhere,
+    reason: outcome.reason,
+  };
+}
+
+const NO_POSITION = [
+  'position',
+  'reference',
+  'scatter',
+  'comparison',
+  'screening',
+  'stability',
+  'epochs.firstUtc',
+  'epochs.lastUtc',
+  'occupation.startUtc',
+  'occupation.endUtc',
+];
+
+function common({request, account, notices}: Record) {
+  return {
+    schema: 'stillmark.result/1' as const,
+    program: request.program,
+    command: request.command,
+    inputs: request.inputs,
+    occupation: {
+      mark: request.mark?.name ?? request.markName,
+      setUpId: null,
+      startUtc: account.firstUtc,
+      endUtc: account.lastUtc,
+      antennaHeightM: null,
+      heightUsed: null,
+    },
+    epochs: account,
+    settings: request.settings,
+    notices: notices.notices,
+  };
+}
+
+function session(
+  {log}: ReduceRequest,
+  columns: LocalColumns,
+  indices: Uint32Array,
+  account: EpochAccount,
+): Session {
+  return analyseSession(log.epochs.gpsSeconds, columns, indices, account.resolutionM);
+}
+
+/** The stretches between material steps; the whole record when there is none. */
+function parts(whole: Session, {steps}: Stability, gpsSeconds: Float64Array): Uint32Array[] {
+  const {indices} = whole;
+  const cuts = whole.steps.filter((_, i) => steps[i]!.material).map((step) => step.gpsSeconds);
+  if (cuts.length === 0) return [indices];
+  const edges = [0, ...cuts.map((cut) => firstAtOrAfter(gpsSeconds, indices, cut)), indices.length];
+  return edges
+    .slice(1)
+    .map((end, i) => indices.subarray(edges[i]!, end))
+    .filter((part) => part.length > 0);
+}
+
+function firstAtOrAfter(gpsSeconds: Float64Array, indices: Uint32Array, time: number): number {
+  const position = indices.findIndex((index) => gpsSeconds[index]! >= time);
+  return position < 0 ? indices.length : position;
+}
+
+function segmentOf(
+  part: Session,
+  record: Record,
+  columns: LocalColumns,
+  outcome: ScreenOutcome,
+): Segment {
+  const {request} = record;
+  return {
+    fromUtc: isoUtc(part.fromGpsSeconds, 3),
+    toUtc: isoUtc(part.toGpsSeconds, 3),
+    epochs: part.indices.length,
+    position: positionOf({
+      session: part,
+      columns,
+      epochs: request.log.epochs,
+      budget: budgetOf(part, record, outcome, columns),
+      frame: request.frame?.name ?? null,
+      frameFrom: request.frame?.from ?? null,
+      coordinateEpoch: request.coordinateEpoch,
+    }),
+  };
+}
+
+function budgetOf(
+  part: Session,
+  {request, account}: Record,
+  {fixClassKept}: ScreenOutcome,
+  {heightKind}: LocalColumns,
+): BudgetRow[] {
+  const {separationM} = request.log.resolution;
+  const separated = heightKind === 'ellipsoidal' && Number.isFinite(separationM) && separationM > 0;
+  return budgetRows({
+    session: part.standardUncertaintyM,
+    quantisation: part.quantisationM,
+    separationStepM: separated ? separationM : null,
+    separationId: account.firstUtc === null ? null : 'separation printed in the log',
+    fixClass: fixClassKept,
+    hasHeight: heightKind !== 'none',
+    service: null,
+    base: null,
+    antennaHeight: null,
+    centring: null,
+    frame: null,
+    geoid: null,
+  });
+}
+
+function comparisonOf({request}: Record, place: MarkPlace, position: Position): Comparison {
+  return compareWithMark({
+    mark: place.name,
+    offsetM: offsetFrom(place, position, request.ellipsoid),
+    covarianceM2:
+      position.covarianceEnuM2?.map((row) => row.map((value) => value ?? Number.NaN)) ?? null,
+    markCovarianceM2: place.covarianceM2,
+    asked: request.asked,
+    assumptions: assumptionsOf(request),
+  });
+}
+
+/** What a comparison takes for granted because nobody stated it; said aloud in every output. */
+function assumptionsOf({frame, mark}: ReduceRequest): string[] {
+  return frame === null || mark?.frame === undefined ? ['same frame and epoch as the mark'] : [];
+}
+
+function targetOf({geodetic}: Reference, place: MarkPlace | null) {
+  return {
+    plan: {latitudeDeg: geodetic.latitudeDeg, longitudeDeg: geodetic.longitudeDeg},
+    ellipsoidalHeightM: geodetic.ellipsoidalHeightM,
+    orthometricHeightM: place?.orthometricHeightM ?? null,
+  };
+}
+
+function usedPositions(columns: LocalColumns, {indices}: Session) {
+  return {
+    eastM: taken(columns.eastM, indices),
+    northM: taken(columns.northM, indices),
+    upM: taken(columns.upM, indices),
+  };
+}
+
+/** Where the reference lies in the frame of the columns, from the mean and its offset. */
+function centreOf(
+  meanM: PerAxis<number | null>,
+  offsetM: PerAxis<number | null>,
+): PerAxis<number | null> {
+  const centre = (axis: keyof PerAxis) => {
+    const [mean, offset] = [meanM[axis], offsetM[axis]];
+    return mean === null || offset === null ? null : mean - offset;
+  };
+  return {east: centre('east'), north: centre('north'), up: centre('up')};
+}
+
+function aboutReference(
+  columns: LocalColumns,
+  meanM: PerAxis<number | null>,
+  offsetM: PerAxis<number | null>,
+): Pick<Reduced, 'eastM' | 'northM' | 'upM'> {
+  const centre = centreOf(meanM, offsetM);
+  const shifted = (column: Float64Array, by: number | null) =>
+    column.map((value) => value - (by ?? 0));
+  return {
+    eastM: shifted(columns.eastM, centre.east),
+    northM: shifted(columns.northM, centre.north),
+    upM: shifted(columns.upM, centre.up),
+  };
+}

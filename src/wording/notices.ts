@@ -1,0 +1,116 @@
+import {LOG_SENTENCES} from './log-notices.ts';
+import {
+  formatDuration,
+  formatGivenLength,
+  formatLength,
+  formatPercent,
+  formatUtc,
+} from './numbers.ts';
+
+/** Values that a notice carries. */
+export type NoticeValues = Readonly<Record<string, string | number | boolean | null>>;
+export type Sentence = (values: NoticeValues) => string;
+
+/** Reads a number out of the values; a missing one is a defect of the caller. */
+export function numberIn(values: NoticeValues, name: string): number {
+  const value = values[name];
+  if (typeof value !== 'number') throw new Error(`numberIn: no number ${name} in the notice`);
+  return value;
+}
+
+export function textIn(values: NoticeValues, name: string): string {
+  const value = values[name];
+  return value === null || value === undefined ? '' : String(value);
+}
+
+/*
+ * One sentence per code: what is so, and what to do about it. A jump is "the positions jumped",
+ * never "the tripod moved".
+ */
+const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
+  travelling: () =>
+    'The receiver was travelling during this record, so no mean is given. `stillmark contents` lists the periods during which it stood; take one with --stand N.',
+  'no-usable-epoch': (v) =>
+    `None of the ${numberIn(v, 'read')} epochs read passes the screening rules. Look at the counts of what each rule left out, and loosen the rule that was meant for other data.`,
+  'fix-class-minority': (v) =>
+    `Only ${formatPercent(numberIn(v, 'share'))} of the valid epochs are ${textIn(v, 'fixClass')} and were kept; the rest were left out by their flag. Log until the fix holds, or choose another class with --fix.`,
+  'fix-class-unknown': () =>
+    'The log does not say what kind of fix its positions are, so no uncertainty of a positioning service is included.',
+  'record-not-clean': (v) =>
+    `${formatPercent(numberIn(v, 'share'))} of the epochs lie far from their neighbours: this record is not clean. Look at the figure over time before using the mean.`,
+  'screening-moves-mean': (v) =>
+    `Screening moves the mean by ${formatLength(numberIn(v, 'horizontalM'))} in plan, more than its own uncertainty. Make sure that what was left out deserved it.`,
+  'base-not-included': () =>
+    'The uncertainty of the base or network is not included: nobody gave it. The 95 % figures are relative to the base until the field sheet states it.',
+  'antenna-height-not-given': () =>
+    'No antenna height was given: the position is that of the antenna, not of the mark below it.',
+  'centring-not-included': () => 'The uncertainty of centring over the mark is not included.',
+  'service-included': (v) =>
+    `The 95 % figures include what the positioning service itself leaves uncertain (${textIn(v, 'from')}): a record of autonomous fixes repeats its own errors and cannot see them.`,
+  'step-material': (v) =>
+    `The positions jumped by ${formatLength(numberIn(v, 'sizeM'))} at ${formatUtc(textIn(v, 'utc'))} UTC${beside(v)}. Each side has its own mean; find out which setup is the right one and measure again.`,
+  'steps-small': (v) =>
+    `${numberIn(v, 'count')} small jumps of the positions were found, the largest ${formatLength(numberIn(v, 'sizeM'))} at ${formatUtc(textIn(v, 'utc'))} UTC${beside(v)}; all are below what matters for this record.`,
+  'drift-material': (v) =>
+    `The positions drift (${axisRates(v)}), by more over the record than may be overlooked. Check that tripod and tribrach were firm, and measure again.`,
+  settling: () =>
+    'The positions settle toward a final value during the record. Leave the start out with --settle, or let the setup rest longer before logging.',
+  gaps: (v) =>
+    `${numberIn(v, 'count')} gaps, the longest ${formatDuration(numberIn(v, 'longestS'))} from ${formatUtc(textIn(v, 'fromUtc'))} UTC.`,
+  'segments-not-compared': (v) =>
+    `The record falls into ${numberIn(v, 'segments')} parts with different means, so it is not compared with ${textIn(v, 'mark') || 'the mark'} as a whole.`,
+  assumed: (v) =>
+    `Taken for granted because nobody stated it: ${textIn(v, 'assumption')}. State the frame and coordinate epoch of the log (--frame, --coordinate-epoch) and of ${textIn(v, 'mark')}.`,
+  'no-tolerance': () =>
+    'No tolerance was given, so there is nothing to decide: give --tolerance with its reason.',
+  'tolerance-out-of-reach': (v) =>
+    `No offset, not even zero, could be accepted against ${formatGivenLength(numberIn(v, 'toleranceM'))} (${textIn(v, 'of')}) with the uncertainty of this record.`,
+};
+
+/** Why a value is missing, for the notices that explain nulls. */
+const MISSING_SENTENCES: Readonly<Record<string, Sentence>> = {
+  'not-given': () => 'Not given: facts of the occupation that no field sheet or option stated.',
+  'nothing-compared': () => 'Nothing was compared: `check` compares with a known mark.',
+  'frame-not-stated': () =>
+    'The frame or coordinate epoch of the positions was not stated; under corrections it is that of the base or network. Give --frame and --coordinate-epoch.',
+  'grid-not-asked': () => 'No grid coordinates were asked for.',
+  'budget-row-not-shared': () => 'A contribution to the budget that no other occupation shares.',
+  'budget-row-not-included': () => 'A contribution to the budget that nobody gave is not included.',
+  'no-orthometric-height': () =>
+    'No orthometric height: the log gives no geoid separation, and none was stated.',
+  'no-ellipsoidal-height': () =>
+    'No ellipsoidal height: the log gives no geoid separation with its altitudes, and none is guessed.',
+  'up-not-known': () => 'Nothing is known of the height component.',
+  'no-receiver-sigma': () => 'The log carries no standard deviations of the receiver.',
+  'resolution-unknown': () => 'Too few epochs to tell the interval, or digits of the log unknown.',
+  'input-without-time': () => 'An input without a single dated epoch.',
+  'all-fix-classes': () => 'Every fix class was kept.',
+  'no-tolerance-reason': () => 'No reason was given for a tolerance (--tolerance-reason).',
+  'setting-off': () => 'A rule that is switched off.',
+  'not-known-from-this-record': () => 'A value that this record cannot tell.',
+};
+
+const SENTENCES: ReadonlyMap<string, Sentence> = new Map(
+  Object.entries({...LOG_SENTENCES, ...RECORD_SENTENCES, ...MISSING_SENTENCES}),
+);
+
+/** The sentence of a notice; a code without one is a defect, which a test looks for. */
+export function noticeText(code: string, values: NoticeValues): string {
+  const sentence = SENTENCES.get(code);
+  if (sentence === undefined) throw new Error(`noticeText: no sentence for the code ${code}`);
+  return sentence(values);
+}
+
+function beside(values: NoticeValues): string {
+  const seen = textIn(values, 'beside');
+  return seen === '' ? '' : ` (beside it in the log: ${seen})`;
+}
+
+function axisRates(values: NoticeValues): string {
+  return ['east', 'north', 'up']
+    .flatMap((axis) => {
+      const rate = values[`${axis}MPerHour`];
+      return typeof rate === 'number' ? [`${axis} ${formatLength(rate, true)} per hour`] : [];
+    })
+    .join(', ');
+}
