@@ -79,6 +79,7 @@ const NOTHING_SHARED: SharedEntry = {
 function asNode(): Shape<Node> {
   return {
     example: 'name: PILLAR 4',
+    hint: '',
     schema: markShape.schema,
     read: (node: Node, _place: Place) => node,
   };

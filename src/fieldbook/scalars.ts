@@ -10,6 +10,7 @@ import type {JsonSchema, Shape} from './shape.ts';
 export function text(example: string): Shape<string> {
   return scalar({
     example,
+    hint: '',
     schema: {type: ['string', 'number', 'boolean', 'null']},
     read: (written) => written,
   });
@@ -19,6 +20,7 @@ export function text(example: string): Shape<string> {
 export function choice<const T extends string>(values: readonly [T, ...T[]]): Shape<T> {
   return scalar({
     example: values[0],
+    hint: `: ${values.join(' | ')}`,
     schema: {enum: [...values, null]},
     read: (written, no) => {
       const value = values.find((known) => known === written);
@@ -37,6 +39,7 @@ export function choice<const T extends string>(values: readonly [T, ...T[]]): Sh
 export function yesNo(): Shape<boolean> {
   return scalar({
     example: 'yes',
+    hint: ': yes | no',
     schema: {enum: ['yes', 'no', true, false, null]},
     read: (written, no) => {
       if (written === 'yes' || written === 'true') return true;
@@ -51,11 +54,14 @@ interface Limits {
   readonly most: number;
 }
 
+/** Quotes around a number are harmless, so an editor must not complain about them. */
+const NUMBER_OR_ITS_TEXT = {type: ['number', 'string', 'null'], pattern: '^[+-]?\\d+(\\.\\d+)?$'};
+
 /** A number without a unit. */
 export function number(limits: Limits, example: string): Shape<number> {
   return scalar({
     example,
-    schema: {type: ['number', 'null'], minimum: limits.least, maximum: limits.most},
+    schema: {...NUMBER_OR_ITS_TEXT, minimum: limits.least, maximum: limits.most},
     read: (written, no) => {
       const read = readNumber(written);
       if (read.kind === 'refused') return no(read.message);
@@ -75,7 +81,7 @@ export function coordinateEpoch(): Shape<number> {
   const most = 2100;
   return scalar({
     example: '2020.0',
-    schema: {type: ['number', 'null'], minimum: least, maximum: most},
+    schema: {...NUMBER_OR_ITS_TEXT, minimum: least, maximum: most},
     read: (written, no) => {
       const read = readNumber(written);
       if (read.kind === 'number' && read.value >= least && read.value <= most) return read.value;
@@ -150,6 +156,8 @@ export interface Moment {
   readonly gpsSeconds: number;
   /** ISO 8601, ending in Z. */
   readonly utc: string;
+  /** As the sheet has it, perhaps in local time with its offset. */
+  readonly written: string;
 }
 
 /** A date and time with Z or an offset from UTC. */
@@ -171,22 +179,57 @@ export function moment(): Shape<Moment> {
       if (!read.zoneStated) return no(found('no Z and no offset from UTC'));
       const at = momentOf(read, 'utc');
       if (at.kind === 'refused') return no(found(at.reason));
-      return {gpsSeconds: at.gpsSeconds, utc: isoUtc(at.gpsSeconds)};
+      return {gpsSeconds: at.gpsSeconds, utc: isoUtc(at.gpsSeconds), written};
+    },
+  });
+}
+
+/** A duration with its unit, kept as written for the option of the same name. */
+export function duration(example: string): Shape<string> {
+  const pattern = '^\\d+(\\.\\d+)?\\s*(s|min|h|d)$';
+  return scalar({
+    example,
+    schema: {type: ['string', 'null'], pattern},
+    read: (written, no) => {
+      if (new RegExp(pattern).test(written)) return written;
+      return no(
+        `expected a duration with its unit, found ${quoted(written)}; write it in s, min, h or d, as ${example}`,
+      );
+    },
+  });
+}
+
+/** A length above zero, kept as written for the option of the same name. */
+export function lengthText(example: string): Shape<string> {
+  const reading = length({least: 1e-5, most: 1e6}, example);
+  return scalar({
+    example,
+    schema: reading.schema,
+    read: (written, no) => {
+      const read = readLength(written);
+      if (read.kind === 'refused') return no(read.message);
+      if (read.lengthM > 0) return written;
+      return no(
+        `expected a length above zero, found ${quoted(written)}; write for example ${example}`,
+      );
     },
   });
 }
 
 interface ScalarShape<T> {
   readonly example: string;
+  /** Default: the example. */
+  readonly hint?: string;
   readonly schema: JsonSchema;
   /** `no` ends the reading with a message. */
   read(written: string, no: (message: string) => never): T;
 }
 
 /** A shape that is read from text alone. */
-export function scalar<T>({example, schema, read}: ScalarShape<T>): Shape<T> {
+export function scalar<T>({example, hint, schema, read}: ScalarShape<T>): Shape<T> {
   return {
     example,
+    hint: hint ?? `, as ${example}`,
     schema,
     read: (node: Node, place: Place) => {
       if (node.kind !== 'scalar') {

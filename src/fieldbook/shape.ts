@@ -21,6 +21,8 @@ export interface Shape<T> {
   readonly schema: JsonSchema;
   /** What a filled place looks like, for messages. */
   readonly example: string;
+  /** What the blank sheet says behind the explanation of a key: `, as 1.543 m`; empty for words. */
+  readonly hint: string;
 }
 
 export type JsonSchema = {readonly [key: string]: JsonValue};
@@ -68,6 +70,7 @@ export function mapping<F extends Fields>(fields: F, example: string): MappingSh
   return {
     fields,
     example,
+    hint: '',
     schema: mappingSchema(fields),
     read: (node, place) => readMapping(fields, node, place, example),
   };
@@ -151,6 +154,7 @@ function mappingSchema(fields: Fields): JsonSchema {
 export function list<T>(of: Shape<T>, limits: {readonly most: number}): Shape<readonly T[]> {
   return {
     example: `[${of.example}]`,
+    hint: `, as [${of.example}, ...]`,
     schema: {type: ['array', 'null'], maxItems: limits.most, items: of.schema},
     read: (node, place) => {
       if (node.kind !== 'list') {
@@ -173,21 +177,6 @@ export function list<T>(of: Shape<T>, limits: {readonly most: number}): Shape<re
           refuse(here, item.lineNumber, `is blank; fill it in, as ${of.example}, or remove it`);
         return of.read(item, here);
       });
-    },
-  };
-}
-
-/** A shape with a further condition, which ends the reading when it does not hold. */
-export function checked<T, S extends Shape<T>>(
-  shape: S & Shape<T>,
-  check: (value: T, node: Node, place: Place) => void,
-): S {
-  return {
-    ...shape,
-    read: (node: Node, place: Place) => {
-      const value = shape.read(node, place);
-      check(value, node, place);
-      return value;
     },
   };
 }

@@ -98,7 +98,7 @@ function scalarFrom(value: unknown, source: Source, lineNumber: number): ScalarN
   }
   const text = value.value;
   if (value.type !== 'PLAIN') return {kind: 'scalar', text: text.trim(), lineNumber};
-  if (text !== '' && value.comment && /^\w/.test(value.comment)) {
+  if (value.comment && /^\w/.test(value.comment) && cutsShort(value.comment, source, lineNumber)) {
     fail(
       source,
       lineNumber,
@@ -114,6 +114,13 @@ function scalarFrom(value: unknown, source: Source, lineNumber: number): ScalarN
     );
   }
   return {kind: 'scalar', text: text === '~' || text === 'null' ? '' : text, lineNumber};
+}
+
+/** Whether a comment stands on the line of the value, and not below it. */
+function cutsShort(comment: string, source: Source, lineNumber: number): boolean {
+  const start = source.lines.lineStarts[lineNumber - 1] ?? 0;
+  const line = source.text.slice(start).split('\n', 1)[0] ?? '';
+  return line.includes(`#${comment.split('\n', 1)[0]}`);
 }
 
 function lineOf(value: unknown, source: Source): number {
