@@ -10,7 +10,7 @@ interface Rule {
 }
 
 const RULES: readonly Rule[] = [
-  {path: /^occupation\./, code: 'not-given', severity: 'note'},
+  {path: /^(occupation\.|fieldSheet)/, code: 'not-given', severity: 'note'},
   {
     path: /^(comparison|verdict)$/,
     code: 'nothing-compared',

@@ -35,6 +35,7 @@ import {type ScreenOutcome, screenByRules} from './screen.ts';
 import {screenNeighbours} from './screen-neighbours.ts';
 import {screeningOf} from './screening-of-record.ts';
 import {analyseSession, type Session} from './session.ts';
+import {sheetItems} from './sheet-items.ts';
 import {movementLimit, stabilityOf} from './stability.ts';
 import {checkVerdict} from './verdict.ts';
 
@@ -88,8 +89,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   const {request, notices, account} = record;
   const {epochs} = request.log;
   const whole = session(request, columns, keptIndices(outcome.reason), account);
-  const place =
-    request.mark === null ? null : markPlace(request.mark, request.ellipsoid, request.planOfGrid);
+  const place = request.mark === null ? null : markPlace(request.mark, request.ellipsoid);
   const stability = stabilityOf(
     whole,
     movementLimit(whole, request.movementLimitM, request.asked),
@@ -198,6 +198,7 @@ function common({request, account, notices}: Record) {
       antennaHeightM: null,
       heightUsed: null,
     },
+    fieldSheet: sheetItems(request.sheet),
     epochs: account,
     settings: request.settings,
     notices: notices.notices,

@@ -1,0 +1,57 @@
+import {epochCsv} from '../exports/csv.ts';
+import {resultGeoJson} from '../exports/geojson.ts';
+import {resultJson} from '../exports/json.ts';
+import {resultKml} from '../exports/kml.ts';
+import {resultSinex} from '../exports/sinex.ts';
+import type {Reduced} from '../occupation/reduce.ts';
+import type {ReduceRequest} from '../occupation/request.ts';
+import {buildSeries} from '../occupation/series.ts';
+import type {Output} from './files.ts';
+import type {CommandArguments} from './options.ts';
+
+const OUTPUT_NAMES = ['report', 'result', 'epochs', 'geojson', 'kml', 'sinex'] as const;
+
+/** The paths of the outputs that were asked for. */
+export function outputPaths(options: CommandArguments): string[] {
+  return OUTPUT_NAMES.map((name) => options[name]).filter((path) => path !== undefined);
+}
+
+/** Every output that was asked for, as text ready to be written. */
+export async function outputsOf(
+  options: CommandArguments,
+  reduced: Reduced,
+  request: ReduceRequest,
+): Promise<Output[]> {
+  const {result} = reduced;
+  const outputs: Output[] = [];
+  const add = (path: string | undefined, text: () => Iterable<string>) => {
+    if (path !== undefined) outputs.push({path, text: text()});
+  };
+  if (options.report !== undefined) {
+    outputs.push({path: options.report, text: [await reportOf(reduced, request)]});
+  }
+  add(options.result, () => [resultJson(result)]);
+  add(options.epochs, () => epochCsv({...reduced, epochs: request.log.epochs}));
+  add(options.geojson, () => [resultGeoJson(result)]);
+  add(options.kml, () => [resultKml(result)]);
+  add(options.sinex, () => [resultSinex(result)]);
+  return outputs;
+}
+
+/** The report and what draws it are loaded only when a report is asked for. */
+async function reportOf(reduced: Reduced, {log}: ReduceRequest): Promise<string> {
+  const {renderReport} = await import('../report/report.ts');
+  const {result, reason, eastM, northM, upM} = reduced;
+  const series = buildSeries({
+    epochs: log.epochs,
+    used: reason.map((code) => (code === 0 ? 1 : 0)),
+    eastM,
+    northM,
+    upM,
+    satellites: log.satellites,
+    intervalS: result.epochs.intervalS,
+    resolutionM: result.epochs.resolutionM,
+    settlingHalfWidthM: null,
+  });
+  return renderReport(result, series, {});
+}
