@@ -1,3 +1,4 @@
+import {UsageError} from '../errors.ts';
 import type {Mark} from '../fieldbook/mark.ts';
 import {covarianceEnuFromEcef} from '../geodesy/covariance.ts';
 import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
@@ -14,15 +15,8 @@ export interface MarkPlace {
   readonly covarianceM2: CovarianceM2 | null;
 }
 
-/** Plan position of a grid coordinate; what projections exist is the business of geodesy. */
-export type PlanOfGrid = (
-  projection: string,
-  eastingM: number,
-  northingM: number,
-) => {readonly latitudeDeg: number; readonly longitudeDeg: number};
-
-export function markPlace(mark: Mark, ellipsoid: Ellipsoid, planOfGrid: PlanOfGrid): MarkPlace {
-  const {plan, ellipsoidalHeightM} = planAndHeight(mark, ellipsoid, planOfGrid);
+export function markPlace(mark: Mark, ellipsoid: Ellipsoid): MarkPlace {
+  const {plan, ellipsoidalHeightM} = planAndHeight(mark, ellipsoid);
   return {
     name: mark.name,
     plan,
@@ -33,9 +27,8 @@ export function markPlace(mark: Mark, ellipsoid: Ellipsoid, planOfGrid: PlanOfGr
 }
 
 function planAndHeight(
-  {coordinates}: Mark,
+  {name, coordinates}: Mark,
   ellipsoid: Ellipsoid,
-  planOfGrid: PlanOfGrid,
 ): Pick<MarkPlace, 'plan' | 'ellipsoidalHeightM'> {
   switch (coordinates.kind) {
     case 'geocentric': {
@@ -49,10 +42,10 @@ function planAndHeight(
       const {latitudeDeg, longitudeDeg, ellipsoidalHeightM} = coordinates;
       return {plan: {latitudeDeg, longitudeDeg}, ellipsoidalHeightM: ellipsoidalHeightM ?? null};
     }
-    case 'grid': {
-      const plan = planOfGrid(coordinates.projection, coordinates.eastingM, coordinates.northingM);
-      return {plan, ellipsoidalHeightM: coordinates.ellipsoidalHeightM ?? null};
-    }
+    case 'grid':
+      throw new UsageError(
+        `${name} has grid coordinates (${coordinates.projection}), which cannot be compared yet; give latitude and longitude`,
+      );
     case 'height only':
       return {plan: null, ellipsoidalHeightM: coordinates.ellipsoidalHeightM ?? null};
   }

@@ -22,6 +22,7 @@ export interface PositionInput {
   readonly frame: Position['frame'];
   readonly frameFrom: Position['frameFrom'];
   readonly coordinateEpoch: number | null;
+  readonly of: Position['of'];
 }
 
 /** The mean of one session as a position, with its uncertainty, budget included. */
@@ -38,7 +39,7 @@ export function positionOf(input: PositionInput): Position {
   const covarianceEnuM2 = covarianceOf(session, input.budget);
   const {originEcef} = columns.frame;
   return {
-    of: 'antenna, point not stated',
+    of: input.of,
     frame: input.frame,
     frameFrom: input.frameFrom,
     coordinateEpoch: input.coordinateEpoch,
@@ -49,7 +50,12 @@ export function positionOf(input: PositionInput): Position {
       longitudeDeg: geodetic.longitudeDeg,
       ellipsoidalHeightM: ellipsoidal ? geodetic.ellipsoidalHeightM : null,
     },
-    orthometricHeightM: meanAltitudeM(epochs, session.indices),
+    orthometricHeightM: orthometricHeightM(
+      columns,
+      geodetic.ellipsoidalHeightM,
+      epochs,
+      session.indices,
+    ),
     grid: null,
     originEcefM: {x: originEcef.xM, y: originEcef.yM, z: originEcef.zM},
     ...uncertaintyOf(covarianceEnuM2),
@@ -58,10 +64,20 @@ export function positionOf(input: PositionInput): Position {
   };
 }
 
-/** Mean height above the receiver's own geoid, when every epoch used gives one. */
-function meanAltitudeM(epochs: Epochs, indices: Uint32Array): number | null {
-  const altitude = moments(taken(epochs.altitudeM, indices))?.mean;
-  return altitude === undefined || Number.isNaN(altitude) ? null : altitude;
+/**
+ * Height above the receiver's own geoid: the ellipsoidal height less the mean separation that the
+ * receiver printed, or the averaged altitude itself where the log gives nothing else.
+ */
+function orthometricHeightM(
+  {heightKind}: LocalColumns,
+  heightM: number,
+  epochs: Epochs,
+  indices: Uint32Array,
+): number | null {
+  if (heightKind === 'none') return null;
+  if (heightKind === 'above the receiver geoid') return heightM;
+  const separationM = moments(taken(epochs.separationM, indices))?.mean;
+  return separationM === undefined || Number.isNaN(separationM) ? null : heightM - separationM;
 }
 
 function covarianceOf(session: Session, budget: readonly BudgetRow[]): CovarianceM2 | null {

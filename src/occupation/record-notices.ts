@@ -63,8 +63,6 @@ export function noticeBudget({budget, position}: Result, notices: NoticeList): v
   const missing = (source: string) =>
     budget.some((row) => row.source === source && row.standardUncertaintyM === null);
   if (missing('base or network')) notices.add('caution', 'base-not-included', ['budget']);
-  if (missing('antenna height'))
-    notices.add('caution', 'antenna-height-not-given', ['occupation.antennaHeightM', 'budget']);
   if (missing('centring over the mark')) notices.add('note', 'centring-not-included', ['budget']);
   const service = budget.find((row) => row.source === 'positioning service');
   if (service !== undefined && position?.uncertainty95M) {

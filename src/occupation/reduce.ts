@@ -1,5 +1,6 @@
 import {isoUtc} from '../time/gps-time.ts';
 import {epochAccount} from './account.ts';
+import {type AntennaReduction, reduceAntenna} from './antenna.ts';
 import {besideStep} from './beside-step.ts';
 import {budgetRows} from './budget.ts';
 import {compareWithMark} from './compare.ts';
@@ -17,6 +18,7 @@ import {
   noticeSession,
   noticeStability,
 } from './record-notices.ts';
+import {eccentricityOf, reducedToMark} from './reduce-to-mark.ts';
 import {offsetFrom, referenceOf} from './reference.ts';
 import type {ReduceRequest} from './request.ts';
 import type {
@@ -37,6 +39,7 @@ import {screeningOf} from './screening-of-record.ts';
 import {analyseSession, type Session} from './session.ts';
 import {sheetItems} from './sheet-items.ts';
 import {movementLimit, stabilityOf} from './stability.ts';
+import {statedContributions} from './stated-contributions.ts';
 import {checkVerdict} from './verdict.ts';
 
 /** The result, and the epochs it rests on for charts and the epoch table. */
@@ -66,7 +69,21 @@ export function reduceOccupation(request: ReduceRequest): Reduced {
     return withoutPosition({request, notices, account: account(), travelling: true}, outcome);
   }
   screenNeighbours(epochs.gpsSeconds, columns, kept, account().resolutionM, outcome.reason);
-  return averaged({request, notices, account: account()}, outcome, columns);
+  const antenna = reduceAntenna({
+    sheet: request.sheet,
+    startGpsSeconds: epochs.gpsSeconds[kept[0]!]!,
+    endGpsSeconds: epochs.gpsSeconds[kept[kept.length - 1]!]!,
+  });
+  const atMark = reducedToMark(
+    columns,
+    epochs.gpsSeconds,
+    antenna,
+    eccentricityOf(request.sheet, undefined),
+  );
+  for (const {severity, code, values} of antenna.findings) {
+    notices.add(severity, code, ['occupation.antennaHeightM'], values);
+  }
+  return averaged({request, notices, account: account(), antenna}, outcome, atMark);
 }
 
 interface Record {
@@ -74,6 +91,7 @@ interface Record {
   readonly notices: NoticeList;
   readonly account: EpochAccount;
   readonly travelling?: boolean;
+  readonly antenna?: AntennaReduction;
 }
 
 function trackOf({log}: ReduceRequest, columns: LocalColumns, indices: Uint32Array) {
@@ -184,7 +202,7 @@ const NO_POSITION = [
   'occupation.endUtc',
 ];
 
-function common({request, account, notices}: Record) {
+function common({request, account, notices, antenna}: Record) {
   return {
     schema: 'stillmark.result/1' as const,
     program: request.program,
@@ -192,11 +210,11 @@ function common({request, account, notices}: Record) {
     inputs: request.inputs,
     occupation: {
       mark: request.mark?.name ?? request.markName,
-      setUpId: null,
+      setUpId: request.sheet.setUpId ?? null,
       startUtc: account.firstUtc,
       endUtc: account.lastUtc,
-      antennaHeightM: null,
-      heightUsed: null,
+      antennaHeightM: antenna?.antennaHeightM ?? null,
+      heightUsed: antenna?.heightUsed ?? null,
     },
     fieldSheet: sheetItems(request.sheet),
     epochs: account,
@@ -250,13 +268,14 @@ function segmentOf(
       frame: request.frame?.name ?? null,
       frameFrom: request.frame?.from ?? null,
       coordinateEpoch: request.coordinateEpoch,
+      of: record.antenna?.pointReached ?? 'antenna, point not stated',
     }),
   };
 }
 
 function budgetOf(
   part: Session,
-  {request, account}: Record,
+  {request, account, antenna}: Record,
   {fixClassKept}: ScreenOutcome,
   {heightKind}: LocalColumns,
 ): BudgetRow[] {
@@ -269,12 +288,7 @@ function budgetOf(
     separationId: account.firstUtc === null ? null : 'separation printed in the log',
     fixClass: fixClassKept,
     hasHeight: heightKind !== 'none',
-    service: null,
-    base: null,
-    antennaHeight: null,
-    centring: null,
-    frame: null,
-    geoid: null,
+    ...statedContributions(request.sheet, antenna ?? null),
   });
 }
 

@@ -1,3 +1,4 @@
+import {ANTENNA_SENTENCES} from './antenna-notices.ts';
 import {LOG_SENTENCES} from './log-notices.ts';
 import {
   formatDuration,
@@ -6,22 +7,7 @@ import {
   formatPercent,
   formatUtc,
 } from './numbers.ts';
-
-/** Values that a notice carries. */
-export type NoticeValues = Readonly<Record<string, string | number | boolean | null>>;
-export type Sentence = (values: NoticeValues) => string;
-
-/** Reads a number out of the values; a missing one is a defect of the caller. */
-export function numberIn(values: NoticeValues, name: string): number {
-  const value = values[name];
-  if (typeof value !== 'number') throw new Error(`numberIn: no number ${name} in the notice`);
-  return value;
-}
-
-export function textIn(values: NoticeValues, name: string): string {
-  const value = values[name];
-  return value === null || value === undefined ? '' : String(value);
-}
+import {type NoticeValues, numberIn, type Sentence, textIn} from './sentence.ts';
 
 /*
  * One sentence per code: what is so, and what to do about it. A jump is "the positions jumped",
@@ -42,8 +28,6 @@ const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
     `Screening moves the mean by ${formatLength(numberIn(v, 'horizontalM'))} in plan, more than its own uncertainty. Make sure that what was left out deserved it.`,
   'base-not-included': () =>
     'The uncertainty of the base or network is not included: nobody gave it. The 95 % figures are relative to the base until the field sheet states it.',
-  'antenna-height-not-given': () =>
-    'No antenna height was given: the position is that of the antenna, not of the mark below it.',
   'centring-not-included': () => 'The uncertainty of centring over the mark is not included.',
   'service-included': (v) =>
     `The 95 % figures include what the positioning service itself leaves uncertain (${textIn(v, 'from')}): a record of autonomous fixes repeats its own errors and cannot see them.`,
@@ -91,7 +75,12 @@ const MISSING_SENTENCES: Readonly<Record<string, Sentence>> = {
 };
 
 const SENTENCES: ReadonlyMap<string, Sentence> = new Map(
-  Object.entries({...LOG_SENTENCES, ...RECORD_SENTENCES, ...MISSING_SENTENCES}),
+  Object.entries({
+    ...LOG_SENTENCES,
+    ...ANTENNA_SENTENCES,
+    ...RECORD_SENTENCES,
+    ...MISSING_SENTENCES,
+  }),
 );
 
 /** The sentence of a notice; a code without one is a defect, which a test looks for. */
