@@ -1,0 +1,29 @@
+import {NmeaAssembler} from './assemble.ts';
+import {BatchCutter} from './batch-cutter.ts';
+import type {LogContents, LogReader, ReadOptions} from './contents.ts';
+import {NmeaDecoder} from './decode.ts';
+import {nmeaContents} from './nmea-contents.ts';
+
+/** Bytes decoded at a time; smaller batches fit the cache better, larger ones gain nothing. */
+export const BATCH_BYTES = 1 << 20;
+
+/** Reads NMEA 0183; `NmeaDecoder` says what is a line, `NmeaAssembler` what is an epoch. */
+export function createNmeaReader(options: ReadOptions): LogReader {
+  const {trustAbsentChecksum} = options;
+  const decoder = new NmeaDecoder({batchBytes: BATCH_BYTES, trustAbsentChecksum});
+  const assembler = new NmeaAssembler();
+  const cutter = new BatchCutter(BATCH_BYTES, (bytes, length, isLast) =>
+    assembler.add(decoder.decode(bytes, length, isLast)),
+  );
+  let bytes = 0;
+  return {
+    add(chunk: Uint8Array): void {
+      bytes += chunk.length;
+      cutter.add(chunk);
+    },
+    finish(): LogContents {
+      cutter.finish();
+      return nmeaContents(assembler.finish(), {...options, bytes});
+    },
+  };
+}
