@@ -16,8 +16,10 @@ const LONGEST_INTERRUPTION_S = 20;
 const SAME_PLACE_M = 10;
 /** A record whose ends lie further apart than this has travelled, however slowly. */
 const TRAVEL_DISTANCE_M = 50;
-/** A record of which more than this share is travel is not an occupation. */
+/** A record of which more than this share is travel is not an occupation, … */
 const TRAVEL_SHARE = 0.25;
+/** … provided that it led somewhere: a poor fix that settles by a few metres is no journey. */
+const TRAVEL_REACH_M = 5;
 
 export interface Track {
   /** All of equal length, in time order, finite. */
@@ -59,7 +61,17 @@ export function isTravelling(track: Track): boolean {
   const moving = travelFlags(track);
   let flagged = 0;
   for (let i = 0; i < count; i++) flagged += moving[i]!;
-  return flagged > TRAVEL_SHARE * count || endsApartM(track) > TRAVEL_DISTANCE_M;
+  if (endsApartM(track) > TRAVEL_DISTANCE_M) return true;
+  return flagged > TRAVEL_SHARE * count && reachM(track) > TRAVEL_REACH_M;
+}
+
+/** Distance from the middle of the record that one epoch in twenty exceeds. */
+function reachM(track: Track): number {
+  const count = track.gpsSeconds.length;
+  const at = centre(track, 0, count - 1);
+  const distances = new Float64Array(count);
+  for (let i = 0; i < count; i++) distances[i] = distanceM(track, i, at);
+  return distances.sort()[Math.floor(0.95 * (count - 1))]!;
 }
 
 /** The periods during which the receiver stood, in time order. */

@@ -60,6 +60,6 @@ export function analyseSession(
     movement: 'cannot tell',
     drift: {east: null, north: null, up: null},
     steps: [],
-    limits: [{code: 'uncertainty-not-computed', axes: ['east', 'north', 'up']}],
+    limits: [],
   };
 }
