@@ -31,7 +31,12 @@ const TONE_PAINT: Record<Tone, Paint> = {
   'not tested': 'dim',
 };
 const SHAPES: Record<Tone, string> = {within: '●', look: '▲', outside: '■', 'not tested': '○'};
-const SEVERITY_SHAPES: Record<Notice['severity'], string> = {concern: '■', caution: '▲', note: '·'};
+const SEVERITY_SHAPES: Record<Notice['severity'], string> = {
+  concern: '■',
+  caution: '▲',
+  note: '·',
+  absent: '○',
+};
 const PLAIN_SHAPES: Record<Tone, string> = {
   within: '*',
   look: '!',
@@ -203,10 +208,13 @@ export function noticeLines(
   style: TerminalStyle,
   withNotes = false,
 ): string[] {
-  const order = {concern: 0, caution: 1, note: 2};
+  const order = {concern: 0, caution: 1, note: 2, absent: 3};
   return [...notices]
     .sort((a, b) => order[a.severity] - order[b.severity])
-    .filter(({severity}) => withNotes || severity !== 'note')
+    .filter(
+      ({severity}) =>
+        severity === 'concern' || severity === 'caution' || (withNotes && severity === 'note'),
+    )
     .flatMap(({severity, text}) => {
       const sign = style.unicode ? SEVERITY_SHAPES[severity] : '!';
       const [head = '', ...rest] = wrapped(text, style, 2);

@@ -10,21 +10,21 @@ interface Rule {
 }
 
 const RULES: readonly Rule[] = [
-  {path: /^(occupation\.|fieldSheet)/, code: 'not-given', severity: 'note'},
+  {path: /^(occupation\.|fieldSheet)/, code: 'not-given', severity: 'absent'},
   {
     path: /^(comparison|verdict)$/,
     code: 'nothing-compared',
-    severity: 'note',
+    severity: 'absent',
     when: (result) => result.command === 'reduce',
   },
   {path: /\.(frame|frameFrom|coordinateEpoch)$/, code: 'frame-not-stated', severity: 'caution'},
-  {path: /\.grid$/, code: 'grid-not-asked', severity: 'note'},
-  {path: /\.(sharedBy|id)$/, code: 'budget-row-not-shared', severity: 'note'},
-  {path: /^budget\[\]\.standardUncertaintyM/, code: 'budget-row-not-included', severity: 'note'},
+  {path: /\.grid$/, code: 'grid-not-asked', severity: 'absent'},
+  {path: /\.(sharedBy|id)$/, code: 'budget-row-not-shared', severity: 'absent'},
+  {path: /^budget\[\]\.standardUncertaintyM/, code: 'budget-row-not-included', severity: 'absent'},
   {
     path: /orthometricHeightM$/,
     code: 'no-orthometric-height',
-    severity: 'note',
+    severity: 'absent',
   },
   {
     path: /(ecefM|ellipsoidalHeightM)$/,
@@ -34,18 +34,18 @@ const RULES: readonly Rule[] = [
   {
     path: /(\.up|upM|covarianceEnuM2\[\]\[\])$/,
     code: 'up-not-known',
-    severity: 'note',
+    severity: 'absent',
   },
-  {path: /receiverSigmaM/, code: 'no-receiver-sigma', severity: 'note'},
-  {path: /^epochs\.(intervalS|resolutionM)/, code: 'resolution-unknown', severity: 'note'},
-  {path: /^inputs\[\]\.(firstUtc|lastUtc)$/, code: 'input-without-time', severity: 'note'},
-  {path: /^screening\.fixClassKept$/, code: 'all-fix-classes', severity: 'note'},
-  {path: /\.reason$/, code: 'no-tolerance-reason', severity: 'note'},
-  {path: /^settings\./, code: 'setting-off', severity: 'note'},
+  {path: /receiverSigmaM/, code: 'no-receiver-sigma', severity: 'absent'},
+  {path: /^epochs\.(intervalS|resolutionM)/, code: 'resolution-unknown', severity: 'absent'},
+  {path: /^inputs\[\]\.(firstUtc|lastUtc)$/, code: 'input-without-time', severity: 'absent'},
+  {path: /^screening\.fixClassKept$/, code: 'all-fix-classes', severity: 'absent'},
+  {path: /\.reason$/, code: 'no-tolerance-reason', severity: 'absent'},
+  {path: /^settings\./, code: 'setting-off', severity: 'absent'},
   {
     path: /^(scatter|stability|comparison|reference|position|segments\[\])/,
     code: 'not-known-from-this-record',
-    severity: 'note',
+    severity: 'absent',
   },
 ];
 

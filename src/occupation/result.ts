@@ -258,7 +258,8 @@ export interface Setting {
   readonly from: 'command line' | 'field sheet' | 'default';
 }
 
-export type Severity = 'concern' | 'caution' | 'note';
+/** `absent` only says why a value is null: for readers of the document, not for a summary. */
+export type Severity = 'concern' | 'caution' | 'note' | 'absent';
 
 export interface Notice {
   readonly code: string;
