@@ -58,6 +58,50 @@ function beyond(
   return Math.abs(moved[axis] ?? 0) > (limit[axis] ?? Number.POSITIVE_INFINITY);
 }
 
+/** The receiver's own sigmas and the observed scatter differ when their ratio leaves this range. */
+const SIGMA_RATIO = 2;
+/** Receivers that smooth at rest change by less than this part of their scatter per epoch. */
+const SMOOTH_STEP_SHARE = 0.05;
+
+/** Whether the receiver's account of its own errors fits what its positions do. */
+export function noticeReceiver(
+  {scatter, screening, epochs}: Result,
+  typicalStepM: PerAxis<number | null>,
+  notices: NoticeList,
+): void {
+  const observed = scatter?.aboutMean.observed.standardDeviationM;
+  if (!observed) return;
+  const stated = screening.receiverSigmaM;
+  const ratio = planRatio(observed, stated);
+  if (ratio !== null && (ratio > SIGMA_RATIO || ratio < 1 / SIGMA_RATIO)) {
+    notices.add(
+      ratio > 1 ? 'caution' : 'note',
+      'receiver-sigma-differs',
+      ['screening.receiverSigmaM'],
+      {
+        ratio,
+        observedM: Math.hypot(observed.east ?? 0, observed.north ?? 0),
+        statedM: Math.hypot(stated?.east ?? 0, stated?.north ?? 0),
+      },
+    );
+  }
+  const smooth = (['east', 'north'] as const).every((axis) => {
+    const [step, spread] = [typicalStepM[axis], observed[axis]];
+    // Coarse digits repeat a position too; that is another finding.
+    const digits = epochs.resolutionM[axis] ?? 0;
+    return spread !== null && Math.max(step ?? spread, digits) < SMOOTH_STEP_SHARE * spread;
+  });
+  if (smooth) notices.add('caution', 'output-smoothed', ['position.independentLooks']);
+}
+
+function planRatio(
+  observed: PerAxis<number | null>,
+  stated: PerAxis<number | null> | null,
+): number | null {
+  const statedM = Math.hypot(stated?.east ?? 0, stated?.north ?? 0);
+  return statedM > 0 ? Math.hypot(observed.east ?? 0, observed.north ?? 0) / statedM : null;
+}
+
 /** What limits the uncertainty, and which contributions nobody gave. */
 export function noticeBudget({budget, position}: Result, notices: NoticeList): void {
   const missing = (source: string) =>

@@ -1,3 +1,4 @@
+import {quantile} from '../statistics/quantile.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {epochAccount} from './account.ts';
 import {type AntennaReduction, reduceAntenna} from './antenna.ts';
@@ -13,6 +14,7 @@ import {positionOf} from './position.ts';
 import {
   noticeBudget,
   noticeComparison,
+  noticeReceiver,
   noticeRecord,
   noticeScreening,
   noticeSession,
@@ -145,6 +147,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   noticeScreening(result, outcome, notices);
   noticeSession(sessions, notices);
   noticeBudget(result, notices);
+  noticeReceiver(result, typicalStepM(columns, whole), notices);
   noticeStability(result, notices);
   noticeComparison(result, request, notices);
   return {
@@ -322,6 +325,22 @@ function usedPositions(columns: LocalColumns, {indices}: Session) {
     eastM: taken(columns.eastM, indices),
     northM: taken(columns.northM, indices),
     upM: taken(columns.upM, indices),
+  };
+}
+
+/** Median change of a coordinate from one epoch used to the next. */
+function typicalStepM(columns: LocalColumns, {indices}: Session): PerAxis<number | null> {
+  const median = (column: Float64Array) => {
+    const values = taken(column, indices);
+    if (values.length < 2) return null;
+    const steps = values.subarray(1).map((value, i) => Math.abs(value - values[i]!));
+    const middle = quantile(steps, 0.5);
+    return Number.isNaN(middle) ? null : middle;
+  };
+  return {
+    east: median(columns.eastM),
+    north: median(columns.northM),
+    up: columns.heightKind === 'none' ? null : median(columns.upM),
   };
 }
 

@@ -28,7 +28,7 @@ export const LOG_SENTENCES: Readonly<Record<string, Sentence>> = {
   'two-talkers': (v) =>
     `${counted(numberIn(v, 'epochs'), 'epoch')} are given twice, by the talkers ${textIn(v, 'talkers')}: the better one of each was used.`,
   'mixed-rates': (v) =>
-    `The log changes its rate: from one epoch every ${formatDuration(numberIn(v, 'shortestS'))} to one every ${formatDuration(numberIn(v, 'longestS'))}. Faster parts weigh more in a plain mean.`,
+    `The log changes its rate: mostly one epoch every ${formatDuration(numberIn(v, 'commonS'))}, in part one every ${formatDuration(numberIn(v, 'otherS'))}. Faster parts weigh more in a plain mean.`,
   'no-position': (v) =>
     `${counted(numberIn(v, 'sentences'), 'position sentence')} carry no position: the receiver had no fix.`,
   'zero-position': (v) =>

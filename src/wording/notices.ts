@@ -26,6 +26,12 @@ const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
     `${formatPercent(numberIn(v, 'share'))} of the epochs lie far from their neighbours: this record is not clean. Look at the figure over time before using the mean.`,
   'screening-moves-mean': (v) =>
     `Screening moves the mean by ${formatLength(numberIn(v, 'horizontalM'))} in plan, more than its own uncertainty. Make sure that what was left out deserved it.`,
+  'receiver-sigma-differs': (v) =>
+    numberIn(v, 'ratio') > 1
+      ? `The positions scatter by ${formatLength(numberIn(v, 'observedM'))} in plan, ${numberIn(v, 'ratio').toFixed(1)} times what the receiver states of itself (${formatLength(numberIn(v, 'statedM'))}). Its own figures are too good; they are not used here.`
+      : `The positions scatter by ${formatLength(numberIn(v, 'observedM'))} in plan, far less than the ${formatLength(numberIn(v, 'statedM'))} that the receiver states of itself: it may be smoothing, or its figures include what a record cannot see.`,
+  'output-smoothed': () =>
+    'From one epoch to the next the positions hardly move against their scatter over the record: the receiver smooths its output at rest. Many epochs then say little more than a few; turn smoothing off for such work.',
   'base-not-included': () =>
     'The uncertainty of the base or network is not included: nobody gave it. The 95 % figures are relative to the base until the field sheet states it.',
   'centring-not-included': () => 'The uncertainty of centring over the mark is not included.',
