@@ -10,6 +10,8 @@ export interface Settling {
   readonly meanM: PerAxis<readonly number[] | null>;
   /** null where no interval of the mean could be computed. */
   readonly halfWidthM: PerAxis<readonly number[] | null>;
+  /** The furthest that the mean of the second half of the record's time stood from its last value. */
+  readonly secondHalfM: PerAxis<number | null>;
 }
 
 const POINTS = 72;
@@ -47,10 +49,21 @@ export function settlingOf(columns: UsedColumns, halfWidth: SettlingHalfWidth | 
       north: complete(widths.map(({north}) => north)),
       up: complete(widths.map(({up}) => up)),
     },
+    secondHalfM: {
+      east: furthest(elapsedS, means.east),
+      north: furthest(elapsedS, means.north),
+      up: columns.hasUp ? furthest(elapsedS, means.up) : null,
+    },
   } satisfies Settling;
 }
 
 function complete(values: readonly (number | null)[]): number[] | null {
   const known = values.filter((value) => value !== null);
   return known.length > 0 && known.length === values.length ? known : null;
+}
+
+function furthest(elapsedS: readonly number[], means: readonly number[]): number {
+  const half = elapsedS[elapsedS.length - 1]! / 2;
+  const last = means[means.length - 1]!;
+  return Math.max(...means.map((mean, i) => (elapsedS[i]! < half ? 0 : Math.abs(mean - last))));
 }

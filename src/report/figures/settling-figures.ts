@@ -1,0 +1,87 @@
+import {correlationFinding, settlingFinding} from '../../wording/findings.ts';
+import {autocorrelationChart} from '../charts/autocorrelation.ts';
+import {settlingPanels} from '../charts/settling.ts';
+import {type ReportContext, singlePosition} from '../context.ts';
+import {absent, type FigureOrReason, type LegendKey} from './figure.ts';
+
+const SETTLING = 'The mean of all epochs so far';
+const CORRELATION = 'Likeness of epochs over the time between them';
+
+export function settlingFigure(context: ReportContext): FigureOrReason {
+  const {result, series, options} = context;
+  if (singlePosition(context) === null) {
+    return absent(
+      SETTLING,
+      result.segments.length > 1
+        ? 'the positions moved, so the record has no one mean to settle'
+        : 'the record has no mean position',
+    );
+  }
+  if (series.settling === null) {
+    return absent(SETTLING, 'the record is too short to follow its mean');
+  }
+  const {secondHalfM, halfWidthM} = series.settling;
+  const banded = halfWidthM.east !== null || halfWidthM.north !== null;
+  const horizontal =
+    secondHalfM.east === null || secondHalfM.north === null
+      ? null
+      : Math.hypot(secondHalfM.east, secondHalfM.north);
+  const legend: LegendKey[] = [
+    {shape: 'line-data', text: 'mean so far'},
+    ...(banded
+      ? ([{shape: 'block-pale', text: '95 % of the mean, this record alone'}] as const)
+      : []),
+    {shape: 'dash-estimate', text: 'final mean'},
+  ];
+  const shared = {settling: series.settling, units: options.units};
+  return {
+    kind: 'figure',
+    id: 'settling',
+    title: SETTLING,
+    finding: settlingFinding(horizontal, secondHalfM.up),
+    note: banded
+      ? 'Time is logarithmic. The band takes the likeness of neighbouring epochs into account, so it narrows far more slowly than independent epochs would let it.'
+      : 'Time is logarithmic. No band: the uncertainty of the mean could not be computed from this record.',
+    wide: settlingPanels({...shared, narrow: false}),
+    narrow: settlingPanels({...shared, narrow: true}),
+    legend,
+    readout: [],
+  };
+}
+
+export function correlationFigure(context: ReportContext): FigureOrReason {
+  const {result, series} = context;
+  if (series.autocorrelation === null) {
+    return absent(CORRELATION, 'the record is too short, too uneven or without any scatter');
+  }
+  const position = singlePosition(context);
+  const looks = position?.independentLooks ?? null;
+  const times = position?.correlationTimeS ?? null;
+  const least = leastOf([looks?.east, looks?.north, looks?.up]);
+  const longest = mostOf([times?.east, times?.north, times?.up]);
+  return {
+    kind: 'figure',
+    id: 'correlation',
+    title: CORRELATION,
+    finding: correlationFinding({
+      epochs: result.epochs.used,
+      looks: least,
+      correlationTimeS: longest,
+    }),
+    note: 'Correlation of single epochs: 1 means that the later one repeats the earlier, 0 that it is a fresh look. Time is logarithmic.',
+    wide: autocorrelationChart(series.autocorrelation),
+    narrow: null,
+    legend: [],
+    readout: [],
+  };
+}
+
+function leastOf(values: readonly (number | null | undefined)[]): number | null {
+  const known = values.filter((value) => value !== null && value !== undefined);
+  return known.length === 0 ? null : Math.min(...known);
+}
+
+function mostOf(values: readonly (number | null | undefined)[]): number | null {
+  const known = values.filter((value) => value !== null && value !== undefined);
+  return known.length === 0 ? null : Math.max(...known);
+}

@@ -1,0 +1,45 @@
+import {fixed} from '../../wording/numbers.ts';
+import type {ReportContext} from '../context.ts';
+import {lengthColumn, numberCell, textCell} from './columns.ts';
+import {head, numberHead, row, type Table} from './table.ts';
+
+/** The suspected causes in the order of how well they fit, with what to do about each. */
+export function causesTable({result, options}: ReportContext): Table | null {
+  const comparison = result.comparison;
+  if (comparison === null || comparison.candidates.length === 0) return null;
+  const {candidates, offsetM} = comparison;
+  const column = lengthColumn(
+    [
+      ...[offsetM.east, offsetM.north, offsetM.up],
+      ...candidates.flatMap(({predictedM: p}) => [p.east, p.north, p.up]),
+    ],
+    options.units,
+  );
+  const cells = (p: {east: number | null; north: number | null; up: number | null}) => [
+    numberCell(column.cell(p.east)),
+    numberCell(column.cell(p.north)),
+    numberCell(column.cell(p.up)),
+  ];
+  const name = column.unit.name;
+  return {
+    caption: 'The offset measured, and what each suspected cause predicts; the best fit first',
+    heads: [
+      head('Cause'),
+      numberHead(`East ${name}`),
+      numberHead(`North ${name}`),
+      numberHead(`Up ${name}`),
+      numberHead('Misfit'),
+      head('What to do'),
+    ],
+    rows: [
+      row('Measured', [...cells(offsetM), textCell(''), textCell('')]),
+      ...candidates.map((candidate) =>
+        row(candidate.title, [
+          ...cells(candidate.predictedM),
+          numberCell(fixed(candidate.misfit, 1)),
+          textCell(candidate.advice),
+        ]),
+      ),
+    ],
+  };
+}
