@@ -27,12 +27,16 @@ export function sampleLogs(): ReadonlyMap<string, Uint8Array> {
 
 /** Forty minutes over MOLE, antenna 1.742 m above it; nothing happens. */
 function moleStill(): string[] {
-  const occupation = simulate(harbourScenario('mole', 40 * MINUTE_S, 1), 5);
-  return nmeaSentences(occupation, {
+  return nmeaSentences(moleOccupation(), {
     ...HARBOUR_NMEA,
     place: above('MOLE', 1.742),
     startS: 9 * HOUR_S + 12 * MINUTE_S,
   });
+}
+
+/** The errors of the occupation of MOLE: what a perfect reader finds in its log. */
+export function moleOccupation(): SimulatedOccupation {
+  return simulate(harbourScenario('mole', 40 * MINUTE_S, 1), 5);
 }
 
 /** Thirty-six minutes over SLIP, antenna 1.655 m above it; the fix is lost half-way. */

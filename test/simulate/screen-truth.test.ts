@@ -115,7 +115,7 @@ describe('the screen on simulated hours', () => {
       const clean = addStep(simulate(C, seed), {eastM: 0.03, northM: 0.03, upM: 0.057}, 1800);
       return {clean, dirty: clean, bad: new Uint8Array(clean.elapsedS.length)};
     });
-    expect(falselyRejectedPercent).toBeLessThanOrEqual(0.15);
+    expect(falselyRejectedPercent).toBeLessThanOrEqual(0.05);
   });
 
   test('property: of one per cent gross epochs of 30 to 300 mm nearly all go', () => {
