@@ -10,6 +10,7 @@ const READING = 'Reading the log:';
 const SCREENING = 'Which epochs are used:';
 const REFERENCE = 'Reference, frame and height:';
 const DECISION = 'What is asked of the record:';
+const PRESENTATION = 'How the report looks:';
 const OUTPUT = 'Outputs (nothing is written unasked; - is standard output):';
 
 export function inputOptions<T>(args: Argv<T>) {
@@ -169,6 +170,28 @@ export function outputOptions<T>(args: Argv<T>) {
     geojson: {type: 'string', group: OUTPUT, describe: 'position and 95 % ellipse, as GeoJSON'},
     kml: {type: 'string', group: OUTPUT, describe: 'position and 95 % ellipse, as KML'},
     sinex: {type: 'string', group: OUTPUT, describe: 'position and covariance, as SINEX'},
+    title: {
+      type: 'string',
+      group: PRESENTATION,
+      describe: 'title, instead of the name of the mark',
+    },
+    logo: {type: 'string', group: PRESENTATION, describe: 'logo (PNG or SVG), kept in the page'},
+    'prepared-for': {type: 'string', group: PRESENTATION, describe: 'whom the report is for'},
+    remarks: {
+      type: 'string',
+      group: PRESENTATION,
+      describe: 'remarks of the one who hands it over',
+    },
+    units: {
+      choices: ['m', 'ft', 'us-ft'] as const,
+      group: PRESENTATION,
+      describe: 'lengths in metres, international or US survey feet (default: metres)',
+    },
+    angles: {
+      choices: ['deg', 'dms'] as const,
+      group: PRESENTATION,
+      describe: 'angles in decimal degrees, or degrees, minutes and seconds',
+    },
   });
 }
 
@@ -209,4 +232,10 @@ export interface CommandArguments {
   readonly geojson?: string | undefined;
   readonly kml?: string | undefined;
   readonly sinex?: string | undefined;
+  readonly title?: string | undefined;
+  readonly logo?: string | undefined;
+  readonly preparedFor?: string | undefined;
+  readonly remarks?: string | undefined;
+  readonly units?: 'm' | 'ft' | 'us-ft' | undefined;
+  readonly angles?: 'deg' | 'dms' | undefined;
 }

@@ -6,7 +6,8 @@ import {resultSinex} from '../exports/sinex.ts';
 import type {Reduced} from '../occupation/reduce.ts';
 import type {ReduceRequest} from '../occupation/request.ts';
 import {buildSeries} from '../occupation/series.ts';
-import type {Output} from './files.ts';
+import {type Output, readWhole} from './files.ts';
+import {logoDataUrl} from './logo.ts';
 import type {CommandArguments} from './options.ts';
 
 const OUTPUT_NAMES = ['report', 'result', 'epochs', 'geojson', 'kml', 'sinex'] as const;
@@ -28,7 +29,7 @@ export async function outputsOf(
     if (path !== undefined) outputs.push({path, text: text()});
   };
   if (options.report !== undefined) {
-    outputs.push({path: options.report, text: [await reportOf(reduced, request)]});
+    outputs.push({path: options.report, text: [await reportOf(reduced, request, options)]});
   }
   add(options.result, () => [resultJson(result)]);
   add(options.epochs, () => epochCsv({...reduced, epochs: request.log.epochs}));
@@ -39,7 +40,11 @@ export async function outputsOf(
 }
 
 /** The report and what draws it are loaded only when a report is asked for. */
-async function reportOf(reduced: Reduced, {log}: ReduceRequest): Promise<string> {
+async function reportOf(
+  reduced: Reduced,
+  {log, sheet}: ReduceRequest,
+  options: CommandArguments,
+): Promise<string> {
   const {renderReport} = await import('../report/report.ts');
   const {result, reason, eastM, northM, upM} = reduced;
   const series = buildSeries({
@@ -53,5 +58,13 @@ async function reportOf(reduced: Reduced, {log}: ReduceRequest): Promise<string>
     resolutionM: result.epochs.resolutionM,
     settlingHalfWidthM: null,
   });
-  return renderReport(result, series, {});
+  return renderReport(result, series, {
+    title: options.title ?? sheet.title ?? null,
+    preparedFor: options.preparedFor ?? sheet.client ?? null,
+    remarks: options.remarks ?? sheet.remarks ?? null,
+    logoDataUrl:
+      options.logo === undefined ? null : logoDataUrl(await readWhole(options.logo), options.logo),
+    units: options.units ?? sheet.units ?? 'm',
+    angles: options.angles ?? 'deg',
+  });
 }

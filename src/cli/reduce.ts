@@ -41,7 +41,7 @@ import {VERSION} from './version.ts';
 /** `stillmark reduce` and `stillmark check`; returns the exit status. */
 export async function reduce(typed: CommandArguments, command: Result['command']): Promise<number> {
   requireSingle({...typed});
-  const companions = [typed.sheet, typed.marks].filter((path) => path !== undefined);
+  const companions = [typed.sheet, typed.marks, typed.logo].filter((path) => path !== undefined);
   requireInputs(companions);
   requireOutputs(outputPaths(typed), [...typed.log, ...companions]);
   const sheet = typed.sheet === undefined ? emptySheet() : await sheetOf(typed.sheet);
