@@ -1,0 +1,563 @@
+import {InputError, UsageError} from '../errors.ts';
+import {parseDate, parseDateTime, parseTimeOfDay} from '../time/parse-time.ts';
+import type {LogFinding, TableOptions} from './contents.ts';
+import type {
+  CalendarColumns,
+  NumberColumn,
+  PositionColumns,
+  SigmaColumns,
+  TimeColumns,
+} from './table-layout.ts';
+import {ACCEPTED, type ColumnName, columnName, type Meaning} from './table-names.ts';
+import type {TableShape} from './table-shape.ts';
+
+/** The named columns of a table: looked up by meaning, each meaning at most once. */
+export class NamedColumns {
+  readonly names: readonly string[];
+  readonly #path: string;
+  readonly #byMeaning = new Map<Meaning, {readonly column: ColumnName; readonly field: number}>();
+  readonly #used = new Set<number>();
+  readonly #samples: readonly (readonly string[])[];
+
+  constructor(columns: readonly ColumnName[], shape: TableShape, path: string) {
+    this.names = columns.map(({written}) => written);
+    this.#path = path;
+    this.#samples = shape.samples;
+    columns.forEach((column, field) => {
+      const {meaning} = column;
+      if (meaning === null || meaning === 'skip') return;
+      const other = this.#byMeaning.get(meaning);
+      if (other !== undefined) {
+        throw this.error(
+          `the columns "${other.column.written}" and "${column.written}" mean the same; leave one out with --columns, writing - in its place`,
+        );
+      }
+      this.#byMeaning.set(meaning, {column, field});
+    });
+  }
+
+  has(...meanings: Meaning[]): boolean {
+    return meanings.every((meaning) => this.#byMeaning.has(meaning));
+  }
+
+  written(meaning: Meaning): string {
+    return this.#byMeaning.get(meaning)?.column.written ?? meaning;
+  }
+
+  timeScale(meaning: Meaning): 'utc' | 'gps' | null {
+    return this.#byMeaning.get(meaning)?.column.timeScale ?? null;
+  }
+
+  isSexagesimal(meaning: Meaning): boolean {
+    return this.#byMeaning.get(meaning)?.column.unit?.sexagesimal === true;
+  }
+
+  /** The place of a column that must be there, and is used from now on. */
+  field(meaning: Meaning): number {
+    const found = this.#byMeaning.get(meaning);
+    if (found === undefined) throw new RangeError(`NamedColumns.field: no column of ${meaning}`);
+    this.#used.add(found.field);
+    return found.field;
+  }
+
+  number(meaning: Meaning): NumberColumn {
+    const field = this.field(meaning);
+    const column = this.#byMeaning.get(meaning)?.column;
+    return {field, name: column?.written ?? meaning, factor: column?.unit?.factor ?? 1};
+  }
+
+  numberOrNull(meaning: Meaning): NumberColumn | null {
+    return this.has(meaning) ? this.number(meaning) : null;
+  }
+
+  /** The texts of a column in the first rows, empty ones left out. */
+  samples(meaning: Meaning): string[] {
+    const field = this.#byMeaning.get(meaning)?.field;
+    if (field === undefined) return [];
+    return this.#samples.map((texts) => texts[field] ?? '').filter((text) => text !== '');
+  }
+
+  usedNames(): string[] {
+    return this.names.filter((_, field) => this.#used.has(field));
+  }
+
+  unusedNames(): string[] {
+    return this.names.filter((name, field) => !this.#used.has(field) && name !== '-');
+  }
+
+  error(message: string): InputError {
+    return new InputError(`${message}; the columns are ${this.list()}`, {path: this.#path});
+  }
+
+  list(): string {
+    const shown = this.names.slice(0, 20).map((name) => (name === '' ? '(no name)' : name));
+    const more = this.names.length - shown.length;
+    return `${shown.join(', ')}${more > 0 ? ` and ${more} more` : ''}`;
+  }
+}
+
+/** The columns under the names of the options or, failing those, of the header. */
+export function namedColumns(shape: TableShape, options: TableOptions, path: string): NamedColumns {
+  const given = options.columns;
+  const written = given === null ? headerNames(shape, path) : givenNames(given, shape, path);
+  const columns = written.map((text, field) => {
+    const unit = given === null ? (shape.units?.[field] ?? '') : '';
+    const column = columnName(unit === '' || /[[({<]/.test(text) ? text : `${text} [${unit}]`);
+    if (column.kind === 'refused') throw new InputError(column.message, {path});
+    if (given !== null && column.meaning === null) {
+      throw new UsageError(
+        `--columns: "${text}" is no known column name; use - for a column to leave out, or names such as ${exampleNames()}`,
+      );
+    }
+    return column;
+  });
+  return new NamedColumns(columns, shape, path);
+}
+
+function exampleNames(): string {
+  const examples: Meaning[] = [
+    'time',
+    'date',
+    'gpsWeek',
+    'secondOfWeek',
+    'unixSeconds',
+    'elapsed',
+    'x',
+    'y',
+    'z',
+    'latitude',
+    'longitude',
+    'ellipsoidalHeight',
+    'altitude',
+    'sigmaEast',
+    'sigmaX',
+    'correlationXy',
+    'quality',
+    'satellites',
+  ];
+  return examples.map((meaning) => ACCEPTED[meaning].names[0]).join(', ');
+}
+
+function headerNames(shape: TableShape, path: string): readonly string[] {
+  if (shape.header === null) {
+    throw new InputError(
+      `found ${shape.fields} columns and no header that names them; give --columns with one name per column, such as time,x,y,z`,
+      {path},
+    );
+  }
+  const names = trimmedTo(shape.header, shape.fields);
+  if (names.length === shape.fields) return names;
+  const parted = namesWithPartedTime(names, shape);
+  if (parted !== undefined) return parted;
+  throw new InputError(
+    `the header names ${names.length} columns and the rows have ${shape.fields}; the header reads ${names.join(', ')}`,
+    {path},
+  );
+}
+
+/** A header that ends in a delimiter has one empty name too many. */
+function trimmedTo(names: readonly string[], fields: number): readonly string[] {
+  return names.length === fields + 1 && names[names.length - 1] === '' ? names.slice(0, -1) : names;
+}
+
+/** Blanks inside the time part it into date and time of day under one name. */
+function namesWithPartedTime(
+  names: readonly string[],
+  shape: TableShape,
+): readonly string[] | undefined {
+  if (shape.delimiter !== 'blanks' || names.length !== shape.fields - 1) return undefined;
+  const at = names.findIndex((name) => {
+    const column = columnName(name);
+    return column.kind === 'column' && column.meaning === 'time';
+  });
+  const row = shape.samples[0] ?? [];
+  const isParted =
+    at >= 0 && parseDate(row[at] ?? '').kind === 'date' && isClock(row[at + 1] ?? '');
+  if (!isParted) return undefined;
+  const name = columnName(names[at] ?? '');
+  const scale = name.kind === 'column' && name.timeScale !== null ? ` [${name.timeScale}]` : '';
+  return [...names.slice(0, at), `date${scale}`, `time${scale}`, ...names.slice(at + 1)];
+}
+
+function givenNames(given: readonly string[], shape: TableShape, path: string): readonly string[] {
+  const open = given[given.length - 1]?.trim() === '...';
+  const names = open ? given.slice(0, -1) : given;
+  const missing = shape.fields - names.length;
+  if (open && missing >= 0) return [...names, ...Array.from({length: missing}, () => '-')];
+  if (missing === 0) return names;
+  throw new InputError(
+    `--columns names ${names.length} columns and the rows have ${shape.fields}; write - for each column to leave out, or ... at the end`,
+    {path},
+  );
+}
+
+/** X, Y, Z or latitude, longitude and a height; both, or half of either, is refused. */
+export function positionColumns(columns: NamedColumns): PositionColumns {
+  const geocentric = (['x', 'y', 'z'] as const).filter((meaning) => columns.has(meaning));
+  const geodetic = (['latitude', 'longitude'] as const).filter((meaning) => columns.has(meaning));
+  if (geocentric.length > 0 && geodetic.length > 0) {
+    throw columns.error(
+      'found geocentric and geodetic columns and cannot choose; name one kind with --columns and write - for the other',
+    );
+  }
+  if (geocentric.length === 3) {
+    return {
+      kind: 'geocentric',
+      x: columns.number('x'),
+      y: columns.number('y'),
+      z: columns.number('z'),
+    };
+  }
+  if (geodetic.length === 2) return geodeticColumns(columns);
+  const local = columns.has('localEast') || columns.has('localNorth') || columns.has('localUp');
+  const found = [...geocentric, ...geodetic].map((meaning) => columns.written(meaning));
+  const partly = found.length > 0 ? `found only ${found.join(', ')}` : 'found neither';
+  const hint = local
+    ? '; east, north and up, or grid coordinates, are no position without their origin'
+    : '';
+  throw columns.error(`need x, y, z or latitude, longitude and height, ${partly}${hint}`);
+}
+
+function geodeticColumns(columns: NamedColumns): PositionColumns {
+  const generic = columns.has('height');
+  const stated = columns.has('ellipsoidalHeight');
+  if (generic && stated) {
+    throw columns.error(
+      `found two heights, "${columns.written('height')}" and "${columns.written('ellipsoidalHeight')}"; name one with --columns`,
+    );
+  }
+  const hasHeight = generic || stated || columns.has('altitude');
+  const local = (['localUp', 'localEast', 'localNorth'] as const).find((m) => columns.has(m));
+  if (!hasHeight && local !== undefined) {
+    throw columns.error(
+      `the columns "${columns.written('latitude')}" and "${columns.written('longitude')}" stand beside "${columns.written(local)}", which is a displacement, so they may be displacements too; a displacement is no position. If they are degrees, say so with --columns`,
+    );
+  }
+  return {
+    kind: 'geodetic',
+    latitude: columns.number('latitude'),
+    longitude: columns.number('longitude'),
+    sexagesimal: columns.isSexagesimal('latitude') || columns.isSexagesimal('longitude'),
+    ellipsoidalHeight: stated
+      ? columns.number('ellipsoidalHeight')
+      : columns.numberOrNull('height'),
+    altitude: columns.numberOrNull('altitude'),
+    separation: columns.numberOrNull('separation'),
+  };
+}
+
+/** The table's own standard deviations; those of the local axes are taken before geocentric ones. */
+export function sigmaColumns(columns: NamedColumns): SigmaColumns | null {
+  if (columns.has('sigmaEast') || columns.has('sigmaNorth') || columns.has('sigmaUp')) {
+    return {
+      kind: 'local',
+      east: columns.numberOrNull('sigmaEast'),
+      north: columns.numberOrNull('sigmaNorth'),
+      up: columns.numberOrNull('sigmaUp'),
+      squared: false,
+    };
+  }
+  if (columns.has('varianceEast') || columns.has('varianceNorth') || columns.has('varianceUp')) {
+    return {
+      kind: 'local',
+      east: columns.numberOrNull('varianceEast'),
+      north: columns.numberOrNull('varianceNorth'),
+      up: columns.numberOrNull('varianceUp'),
+      squared: true,
+    };
+  }
+  const squared = columns.has('varianceX', 'varianceY', 'varianceZ');
+  if (!squared && !columns.has('sigmaX', 'sigmaY', 'sigmaZ')) return null;
+  const covariances = columns.has('covarianceXy', 'covarianceXz', 'covarianceYz');
+  const correlations =
+    !covariances && columns.has('correlationXy', 'correlationXz', 'correlationYz');
+  return {
+    kind: 'geocentric',
+    x: columns.number(squared ? 'varianceX' : 'sigmaX'),
+    y: columns.number(squared ? 'varianceY' : 'sigmaY'),
+    z: columns.number(squared ? 'varianceZ' : 'sigmaZ'),
+    squared,
+    correlations,
+    xy: covariances
+      ? columns.number('covarianceXy')
+      : correlations
+        ? columns.number('correlationXy')
+        : null,
+    xz: covariances
+      ? columns.number('covarianceXz')
+      : correlations
+        ? columns.number('correlationXz')
+        : null,
+    yz: covariances
+      ? columns.number('covarianceYz')
+      : correlations
+        ? columns.number('correlationYz')
+        : null,
+  };
+}
+
+/** The columns that date the rows, and their scale. */
+export interface ChosenTime {
+  readonly time: TimeColumns;
+  readonly timeScale: 'utc' | 'gps';
+  readonly findings: readonly LogFinding[];
+}
+
+/**
+ * The first complete way of dating a row, in the order of this function: the ones that say most
+ * about the moment stand first. The scale comes from the columns, else from the options, else it
+ * is UTC, and a finding says so.
+ */
+export function timeColumns(
+  columns: NamedColumns,
+  options: TableOptions,
+  hasDate: boolean,
+): ChosenTime {
+  const time = chosenTime(columns, options, hasDate);
+  if (time === undefined) throw missingTime(columns, hasDate);
+  const findings: LogFinding[] = [];
+  if (time.kind === 'date') {
+    findings.push({
+      code: 'date-without-time',
+      severity: 'note',
+      values: {column: columns.names[time.field] ?? ''},
+    });
+  }
+  const {scale, stated} = scaleOf(time, columns);
+  const given = options.timeScale;
+  if (scale !== null && given !== null && scale !== given) {
+    throw new UsageError(
+      `--time-scale ${given} contradicts the table, whose ${stated} means ${scale === 'gps' ? 'GPS time' : 'UTC'}`,
+    );
+  }
+  const timeScale = scale ?? given ?? 'utc';
+  if (scale === null && given === null && time.kind !== 'elapsed') {
+    findings.push({
+      code: 'time-scale-assumed',
+      severity: 'note',
+      values: {timeScale: 'utc', columns: timeNames(time, columns).join(', ')},
+    });
+  }
+  return {time, timeScale, findings};
+}
+
+function chosenTime(
+  columns: NamedColumns,
+  options: TableOptions,
+  hasDate: boolean,
+): TimeColumns | undefined {
+  const timeHolds = kindOf(columns.samples('time'));
+  const dateHolds = kindOf(columns.samples('date'));
+  if (timeHolds === 'date and time') return {kind: 'date and time', field: columns.field('time')};
+  if (dateHolds === 'date and time') return {kind: 'date and time', field: columns.field('date')};
+  const clock = columns.has('timeOfDay') ? 'timeOfDay' : timeHolds === 'clock' ? 'time' : undefined;
+  if (dateHolds === 'date' && clock !== undefined) {
+    return {
+      kind: 'date and clock',
+      dateField: columns.field('date'),
+      clockField: columns.field(clock),
+    };
+  }
+  if (dateHolds === 'date' && columns.has('secondOfDay')) {
+    return {
+      kind: 'date and seconds',
+      dateField: columns.field('date'),
+      seconds: columns.number('secondOfDay'),
+    };
+  }
+  if (columns.has('gpsWeek', 'secondOfWeek')) {
+    return {
+      kind: 'gps week',
+      week: columns.number('gpsWeek'),
+      seconds: columns.number('secondOfWeek'),
+    };
+  }
+  if (columns.has('gpsSeconds')) return {kind: 'gps seconds', value: columns.number('gpsSeconds')};
+  if (columns.has('unixSeconds')) return {kind: 'unix', value: columns.number('unixSeconds')};
+  if (columns.has('year', 'month', 'day', 'hour')) {
+    return {kind: 'calendar', parts: calendarColumns(columns)};
+  }
+  if (columns.has('year', 'dayOfYear') && (columns.has('secondOfDay') || clock !== undefined)) {
+    return {
+      kind: 'day of year',
+      year: columns.number('year'),
+      day: columns.number('dayOfYear'),
+      seconds: columns.numberOrNull('secondOfDay'),
+      clockField: columns.has('secondOfDay') || clock === undefined ? null : columns.field(clock),
+    };
+  }
+  if (columns.has('modifiedJulianDate')) {
+    return {kind: 'modified Julian date', value: columns.number('modifiedJulianDate')};
+  }
+  if (columns.has('year', 'dayOfYear')) {
+    return {
+      kind: 'day of year',
+      year: columns.number('year'),
+      day: columns.number('dayOfYear'),
+      seconds: null,
+      clockField: null,
+    };
+  }
+  // With --start or --date given, the time column counts from it even beside a plain date.
+  if (options.startGpsSeconds !== null && columns.has('elapsed')) {
+    return {kind: 'elapsed', value: columns.number('elapsed')};
+  }
+  if (options.startGpsSeconds !== null && timeHolds === 'number' && dateHolds !== 'date') {
+    return {kind: 'elapsed', value: columns.number('time')};
+  }
+  if (dateHolds === 'date' && timeHolds === 'none' && !columns.has('elapsed')) {
+    return {kind: 'date', field: columns.field('date')};
+  }
+  if (timeHolds === 'date') return {kind: 'date', field: columns.field('time')};
+  if (columns.has('year', 'month', 'day'))
+    return {kind: 'calendar', parts: calendarColumns(columns)};
+  if (columns.has('decimalYear'))
+    return {kind: 'decimal year', value: columns.number('decimalYear')};
+  // A year with decimals can only be a decimal year.
+  if (columns.samples('year').some((text) => /^\d{4}[.,]\d+$/.test(text))) {
+    return {kind: 'decimal year', value: columns.number('year')};
+  }
+  if (clock !== undefined && hasDate) return {kind: 'clock', field: columns.field(clock)};
+  return undefined;
+}
+
+function calendarColumns(columns: NamedColumns): CalendarColumns {
+  return {
+    year: columns.number('year'),
+    month: columns.number('month'),
+    day: columns.number('day'),
+    hour: columns.numberOrNull('hour'),
+    minute: columns.numberOrNull('minute'),
+    second: columns.numberOrNull('second'),
+  };
+}
+
+type TextKind = 'date and time' | 'date' | 'clock' | 'number' | 'other' | 'none';
+
+/** What the first row with anything readable in it holds. */
+function kindOf(texts: readonly string[]): TextKind {
+  const kinds = texts.map(kindOfText);
+  return kinds.find((kind) => kind !== 'other') ?? (texts.length > 0 ? 'other' : 'none');
+}
+
+function kindOfText(text: string): TextKind {
+  if (parseDateTime(text).kind === 'date and time') return 'date and time';
+  if (parseDate(text).kind === 'date') return 'date';
+  if (isClock(text)) return 'clock';
+  return /^[+-]?(\d+[.,]?\d*|[.,]\d+)(e[+-]?\d+)?$/i.test(text) ? 'number' : 'other';
+}
+
+/** With colons; six bare digits could as well be a count of seconds. */
+function isClock(text: string): boolean {
+  const bare = text.replace(/(Z|UTC|[+-]\d{2}:?\d{2})$/i, '');
+  return text.includes(':') && parseTimeOfDay(bare).kind === 'time of day';
+}
+
+function timeMeanings(time: TimeColumns): Meaning[] {
+  switch (time.kind) {
+    case 'date and time':
+    case 'date':
+    case 'date and clock':
+    case 'date and seconds':
+    case 'clock':
+      return ['time', 'date', 'timeOfDay'];
+    case 'gps week':
+      return ['gpsWeek', 'secondOfWeek'];
+    case 'gps seconds':
+      return ['gpsSeconds'];
+    case 'unix':
+      return ['unixSeconds'];
+    case 'calendar':
+      return ['year', 'month', 'day', 'hour', 'minute', 'second'];
+    case 'day of year':
+      return ['year', 'dayOfYear', 'secondOfDay'];
+    case 'modified Julian date':
+      return ['modifiedJulianDate'];
+    case 'decimal year':
+      return ['decimalYear', 'year'];
+    case 'elapsed':
+      return ['elapsed', 'time'];
+  }
+}
+
+function timeNames(time: TimeColumns, columns: NamedColumns): string[] {
+  const used = new Set(columns.usedNames());
+  return timeMeanings(time)
+    .filter((meaning) => columns.has(meaning))
+    .map((meaning) => columns.written(meaning))
+    .filter((name) => used.has(name));
+}
+
+/** The scale that the columns state by their kind, their names or a zone in their values. */
+function scaleOf(
+  time: TimeColumns,
+  columns: NamedColumns,
+): {scale: 'utc' | 'gps' | null; stated: string} {
+  const names = timeNames(time, columns).join(', ');
+  if (time.kind === 'gps week' || time.kind === 'gps seconds') return {scale: 'gps', stated: names};
+  if (time.kind === 'unix') return {scale: 'utc', stated: names};
+  if (time.kind === 'elapsed') return {scale: null, stated: names};
+  const meanings = timeMeanings(time);
+  const scales = new Set(
+    meanings.map((meaning) => columns.timeScale(meaning)).filter((scale) => scale !== null),
+  );
+  if (scales.size > 1) throw columns.error('the names of the time columns state UTC and GPS time');
+  const zone = meanings.some((meaning) =>
+    columns
+      .samples(meaning)
+      .some((text) => /\d\s*(Z|UTC|[+-]\d{2}:?\d{2})$/i.test(text) && text.includes(':')),
+  );
+  const [scale = null] = scales;
+  if (zone && scale === 'gps') {
+    throw columns.error(`the time column is named as GPS time and its values carry a time zone`);
+  }
+  return {scale: zone ? 'utc' : scale, stated: names};
+}
+
+function missingTime(columns: NamedColumns, hasDate: boolean): InputError {
+  const numeric = columns.samples('time')[0];
+  if (columns.has('elapsed')) {
+    return columns.error(
+      `the column "${columns.written('elapsed')}" counts from a start that is not given; give --start with the UTC of its zero`,
+    );
+  }
+  const refused = refusedSample(columns);
+  if (refused !== undefined) return columns.error(refused);
+  if (columns.has('timeOfDay') && !hasDate) {
+    return columns.error(
+      'found a time of day without a date; give --date with the day of the first row',
+    );
+  }
+  if (numeric !== undefined && kindOf(columns.samples('time')) === 'clock' && !hasDate) {
+    return columns.error(
+      `the column "${columns.written('time')}" holds times of day such as "${numeric}" without a date; give --date with the day of the first row`,
+    );
+  }
+  if (numeric !== undefined) {
+    return columns.error(
+      `cannot tell what "${numeric}" in the column "${columns.written('time')}" counts; give --start, or name the column with --columns: unix, gps_seconds, tow (beside gps_week), seconds_of_day, hhmmss, mjd or decimal_year`,
+    );
+  }
+  if (columns.has('secondOfWeek')) {
+    return columns.error(
+      `the column "${columns.written('secondOfWeek')}" needs a column gps_week beside it`,
+    );
+  }
+  return columns.error(
+    'need columns that date the rows, such as time, or date and time, or gps_week and tow',
+  );
+}
+
+function refusedSample(columns: NamedColumns): string | undefined {
+  for (const meaning of ['time', 'date'] as const) {
+    const text = columns.samples(meaning)[0];
+    if (text === undefined || kindOf(columns.samples(meaning)) !== 'other') continue;
+    const [datePart = ''] = text.split(/[T\s]/);
+    const parsed = parseDate(datePart);
+    if (parsed.kind === 'refused' && parsed.reason !== 'not a date') {
+      const advice = parsed.reason === 'no such day' ? 'check it' : 'write it as YYYY-MM-DD';
+      return `cannot read the date "${text}" in the column "${columns.written(meaning)}": ${parsed.reason}; ${advice}`;
+    }
+  }
+  return undefined;
+}
