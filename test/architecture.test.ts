@@ -45,7 +45,8 @@ interface Import {
 function importsOf(path: string): Import[] {
   const text = readFileSync(path, 'utf8');
   const file = relative(SRC, path).split(sep).join('/');
-  const pattern = /(?:from|import)\s*\(?\s*'([^']+)'/g;
+  // The formatter puts a blank behind `from`; a key called 'bearing from' has none.
+  const pattern = /(?:from|import)(?:\s+|\s*\(\s*)'([^']+)'/g;
   return [...text.matchAll(pattern)].map((match) => ({file, target: match[1]!}));
 }
 

@@ -46,12 +46,18 @@ export function readColumns(header: readonly CsvCell[], path: string): Column[] 
 }
 
 /** A row as the block of keys that a YAML file would hold in its place. */
-export function mappingFromRow(row: CsvRow, columns: readonly Column[]): MappingNode {
+export function mappingFromRow(row: CsvRow, columns: readonly Column[], path: string): MappingNode {
   const entries: MappingEntry[] = [];
   const blocks = new Map<string, MappingEntry[]>();
   row.cells.forEach(({text, lineNumber}, index) => {
     const column = columns[index];
     if (column === undefined) return;
+    if (column.unit !== '' && /[a-z]$/i.test(text)) {
+      throw new InputError(
+        `${column.key}: the column is in ${column.unit}, found "${text}"; write the number alone`,
+        {path, lineNumber},
+      );
+    }
     const entry: MappingEntry = {
       key: column.key,
       lineNumber,
@@ -68,7 +74,6 @@ export function mappingFromRow(row: CsvRow, columns: readonly Column[]): Mapping
 }
 
 function withUnit(text: string, unit: string): string {
-  // A cell that carries its own unit keeps it; the reader sees both and says so if they clash.
   return text === '' || unit === '' ? text : `${text} ${unit}`;
 }
 

@@ -31,9 +31,13 @@ function marksOf(text: string, path: string): Mark[] {
   if (/\.(ya?ml)$/i.test(path)) return marksFromYaml(text, path);
   if (/\.(csv|tsv)$/i.test(path)) return marksFromCsv(text, path);
   if (/\.(snx|sinex)$/i.test(path)) return marksFromSinex(readSinex(text, path));
-  return /^(?:- )?[\w ]+:(?:\s|$)/m.test(text)
-    ? marksFromYaml(text, path)
-    : marksFromCsv(text, path);
+  return beginsWithKey(text) ? marksFromYaml(text, path) : marksFromCsv(text, path);
+}
+
+/** Whether the first line that says something is a key with its colon, and no header of columns. */
+function beginsWithKey(text: string): boolean {
+  const first = text.split(/\r\n|\n|\r/).find((line) => /^\s*[^\s#]/.test(line)) ?? '';
+  return /^[\w ]+:(?:\s|$)/.test(first);
 }
 
 function marksFromYaml(text: string, path: string): Mark[] {
@@ -51,7 +55,9 @@ function marksFromYaml(text: string, path: string): Mark[] {
 function marksFromCsv(text: string, path: string): Mark[] {
   const table = readCsv(text, path);
   const columns = readColumns(table.header, path);
-  return table.rows.map((row) => markFromNode(mappingFromRow(row, columns), NOTHING_SHARED, path));
+  return table.rows.map((row) =>
+    markFromNode(mappingFromRow(row, columns, path), NOTHING_SHARED, path),
+  );
 }
 
 function markFromNode(node: Node, shared: SharedEntry, path: string): Mark {
@@ -78,7 +84,7 @@ const NOTHING_SHARED: SharedEntry = {
 /** A node left as it is, to be read once the name in it is known. */
 function asNode(): Shape<Node> {
   return {
-    example: 'name: PILLAR 4',
+    example: '{name: PILLAR 4, latitude: 48.1, longitude: 16.2}',
     hint: '',
     schema: markShape.schema,
     read: (node: Node, _place: Place) => node,

@@ -93,7 +93,8 @@ export function readLength(text: string): ReadLength | RefusedQuantity {
 /** A plain decimal number with a decimal point. */
 export function readNumber(text: string): ReadNumber | RefusedQuantity {
   const trimmed = text.trim();
-  if (NUMBER.test(trimmed)) return {kind: 'number', value: Number(trimmed)};
+  // Adding zero turns −0 into 0, which the result may not hold.
+  if (NUMBER.test(trimmed)) return {kind: 'number', value: Number(trimmed) + 0};
   const mended = trimmed.replace(/[\u2212\u2013]/g, '-');
   if (NUMBER.test(mended)) {
     return refused(`found a long dash in "${trimmed}"; write the sign as a hyphen: ${mended}`);
@@ -141,7 +142,8 @@ function knownUnit(unit: string): LengthUnit | undefined {
 /** One unit in the last digit: 0.001 for "1.543", 1 for "12". */
 function stepOf(number: string): number {
   const point = number.indexOf('.');
-  return point < 0 ? 1 : 10 ** -(number.length - point - 1);
+  // Read as a decimal, since 10 ** -4 is not the number nearest to 0.0001.
+  return point < 0 ? 1 : Number(`1e-${number.length - point - 1}`);
 }
 
 function refused(message: string): RefusedQuantity {

@@ -86,7 +86,7 @@ function readMapping<F extends Fields>(
     refuse(
       place,
       node.lineNumber,
-      `expected keys of its own, indented below, found ${described(node)}; write ${example}`,
+      `expected keys of its own, indented below, found ${described(node)}; write for example ${example}`,
     );
   }
   refuseUnknownKeys(

@@ -137,6 +137,11 @@ function field({text}: Line, first: number, last: number): string {
   return text.slice(first - 1, last).trim();
 }
 
+/** Whether a blank stands on both sides: a line shifted by one column would lose a digit unseen. */
+function standsAlone({text}: Line, first: number, last: number): boolean {
+  return (text[first - 2] ?? ' ') === ' ' && (text[last] ?? ' ') === ' ';
+}
+
 function siteFrom(line: Line): SinexSite {
   return {
     code: field(line, 2, 5),
@@ -193,7 +198,7 @@ const FORTRAN_NUMBER = /^[+-]?(?:\d+\.?\d*|\.\d+)(?:[ED][+-]?\d+)?$/i;
 
 function numberFrom(line: Line, first: number, last: number, path: string): number {
   const written = field(line, first, last);
-  if (!FORTRAN_NUMBER.test(written)) {
+  if (!FORTRAN_NUMBER.test(written) || !standsAlone(line, first, last)) {
     throw new InputError(
       `expected a number in columns ${first} to ${last}, found "${written}"; is the line whole and aligned?`,
       {path, lineNumber: line.lineNumber},
@@ -205,6 +210,7 @@ function numberFrom(line: Line, first: number, last: number, path: string): numb
 /** `YY:DDD:SSSSS` as a decimal year; two-digit years up to 50 belong to this century. */
 function epochFrom(line: Line, first: number, path: string): number | undefined {
   const written = field(line, first, first + 11);
+  if (!standsAlone(line, first, first + 11)) throw badEpoch(line, first, path);
   if (written === '' || written === '00:000:00000') return undefined;
   const parts = /^(\d{2}):(\d{3}):(\d{5})$/.exec(written);
   const shortYear = Number(parts?.[1]);
@@ -216,12 +222,17 @@ function epochFrom(line: Line, first: number, path: string): number | undefined 
     civilFromDayOfYear(year, dayNumber) === undefined ||
     second > SECONDS_PER_DAY
   ) {
-    throw new InputError(
-      `expected an epoch YY:DDD:SSSSS in columns ${first} to ${first + 11}, found "${written}"; is the line whole and aligned?`,
-      {path, lineNumber: line.lineNumber},
-    );
+    throw badEpoch(line, first, path);
   }
   return year + (dayNumber - 1 + second / SECONDS_PER_DAY) / daysInYear(year);
+}
+
+function badEpoch(line: Line, first: number, path: string): InputError {
+  const written = field(line, first, first + 11);
+  return new InputError(
+    `expected an epoch YY:DDD:SSSSS in columns ${first} to ${first + 11}, found "${written}"; is the line whole and aligned?`,
+    {path, lineNumber: line.lineNumber},
+  );
 }
 
 function covarianceFrom(block: Block, size: number, path: string): SymmetricMatrix {

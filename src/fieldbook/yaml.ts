@@ -1,4 +1,13 @@
-import {isAlias, isMap, isScalar, isSeq, LineCounter, parseDocument, type YAMLError} from 'yaml';
+import {
+  isAlias,
+  isMap,
+  isScalar,
+  isSeq,
+  LineCounter,
+  parseDocument,
+  type YAMLError,
+  type YAMLMap,
+} from 'yaml';
 import {InputError} from '../errors.ts';
 import type {ListNode, MappingEntry, MappingNode, Node, ScalarNode} from './node.ts';
 
@@ -24,7 +33,6 @@ export function readYaml(text: string, path: string): MappingNode {
     schema: 'failsafe',
     lineCounter: lines,
     prettyErrors: false,
-    logLevel: 'silent',
   });
   const source: Source = {path, text, lines};
   const error = document.errors[0];
@@ -32,14 +40,14 @@ export function readYaml(text: string, path: string): MappingNode {
   const strange = document.warnings[0];
   if (strange) throw translated(strange, source, undefined);
   if (document.contents === null) return {kind: 'mapping', entries: [], lineNumber: 1};
-  const root = nodeFrom(document.contents, source, 0);
-  if (root.kind !== 'mapping') {
-    throw new InputError(
+  if (!isMap(document.contents)) {
+    fail(
+      source,
+      lineOf(document.contents, source),
       'expected lines of the form "key: value"; write a space after each colon, and no text before the first key',
-      {path, lineNumber: root.lineNumber},
     );
   }
-  return root;
+  return mappingFrom(document.contents, source, 0);
 }
 
 interface Source {
@@ -54,20 +62,30 @@ function nodeFrom(value: unknown, source: Source, depth: number): Node {
     fail(source, lineNumber, `blocks are nested more than ${MAX_DEPTH} deep; remove brackets`);
   }
   if (isAlias(value)) {
-    fail(source, lineNumber, `"*${value.source}" repeats another value; write the value out`);
+    fail(
+      source,
+      lineNumber,
+      `"*${value.source}" stands for a value written elsewhere; write the value out, or put text with * into quotes`,
+    );
   }
   if ((isScalar(value) || isMap(value) || isSeq(value)) && value.anchor !== undefined) {
-    fail(source, lineNumber, `"&${value.anchor}" names a value; put text with & into quotes`);
+    fail(
+      source,
+      lineNumber,
+      `"&${value.anchor}" names a value to be repeated; remove it, or put text with & into quotes`,
+    );
   }
-  if (isMap(value)) {
-    const entries = value.items.map((pair) => entryFrom(pair, source, depth));
-    return {kind: 'mapping', entries, lineNumber} satisfies MappingNode;
-  }
+  if (isMap(value)) return mappingFrom(value, source, depth);
   if (isSeq(value)) {
     const items = value.items.map((item) => nodeFrom(item, source, depth + 1));
     return {kind: 'list', items, lineNumber} satisfies ListNode;
   }
   return scalarFrom(value, source, lineNumber);
+}
+
+function mappingFrom(value: YAMLMap, source: Source, depth: number): MappingNode {
+  const entries = value.items.map((pair) => entryFrom(pair, source, depth));
+  return {kind: 'mapping', entries, lineNumber: lineOf(value, source)};
 }
 
 function entryFrom(
