@@ -2,7 +2,6 @@ import {SECONDS_PER_DAY} from '../time/calendar.ts';
 import {Burst, Fix, GsaGroup} from './burst.ts';
 import type {NmeaBatch} from './decode.ts';
 import {EpochTrack} from './epoch-track.ts';
-import {NO_DATE} from './field-reader.ts';
 import {LogAccount} from './log-account.ts';
 import {SatelliteSampler} from './satellite-sampler.ts';
 import {
@@ -12,6 +11,7 @@ import {
   type SentenceColumns,
   SentenceKind,
 } from './sentence-columns.ts';
+import {NO_DATE} from './sentence-fields.ts';
 import {SentenceStatus} from './status.ts';
 
 /**
@@ -71,6 +71,11 @@ export class NmeaAssembler {
   readonly #gll = new EpochTrack();
   readonly #open: Burst[] = [];
   readonly #free: Burst[] = [];
+  /** The last of the open bursts. */
+  #newest: Burst | undefined;
+  #lastTimeS = Number.NaN;
+  /** Rows taken from each of the columns of the batch. */
+  readonly #rows = new Uint32Array(SENTENCE_KINDS);
   /** Number of the newest burst, from 2 on. */
   #serial = 1;
   /** Where in the batch the satellites of the next GSA row begin. */
@@ -94,16 +99,16 @@ export class NmeaAssembler {
 
   /** Takes the next batch; nothing of it is kept but what has been assembled. */
   add({columns, account, datums}: NmeaBatch): void {
-    const rows = new Uint32Array(SENTENCE_KINDS);
+    const {order} = columns;
+    this.#rows.fill(0);
     this.#idAt = 0;
     this.#sampler.beginBatch();
-    const {order} = columns;
     for (let k = 0; k < order.count; k += 1) {
-      const kind = (order.kind[k] ?? 0) as SentenceKind;
-      const isFix = kind === SentenceKind.gga || kind === SentenceKind.gns;
-      const counter = isFix ? SentenceKind.gga : kind;
-      const row = rows[counter] ?? 0;
-      rows[counter] = row + 1;
+      const kind = order.kind[k] ?? 0;
+      // GGA and GNS share their columns.
+      const rowsOf = kind === SentenceKind.gns ? SentenceKind.gga : kind;
+      const row = this.#rows[rowsOf] ?? 0;
+      this.#rows[rowsOf] = row + 1;
       this.#take(kind, columns, row);
     }
     this.#account.add(account);
@@ -142,33 +147,29 @@ export class NmeaAssembler {
     return this.#fixes.builder.count === 0;
   }
 
-  #take(kind: SentenceKind, columns: SentenceColumns, row: number): void {
+  #take(kind: number, columns: SentenceColumns, row: number): void {
     switch (kind) {
       case SentenceKind.gga:
       case SentenceKind.gns:
         this.#takeFix(kind === SentenceKind.gga, columns, row);
         return;
       case SentenceKind.rmc: {
-        const timeOfDayS = columns.rmc.timeOfDayS[row] ?? Number.NaN;
-        if (Number.isNaN(timeOfDayS)) return;
-        this.#seeTime(timeOfDayS);
-        this.#burstAt(timeOfDayS).takeRmc(columns.rmc, row, this.#account.lineFeeds);
-        this.#seeDateOfPlan(timeOfDayS, columns.rmc.dateDays[row] ?? NO_DATE);
+        const {rmc} = columns;
+        const burst = this.#burstOf(rmc.timeOfDayS, row);
+        if (burst === undefined) return;
+        burst.takeRmc(rmc, row, this.#account.lineFeeds);
+        if (this.#noFixYet) this.#datePlan(burst, rmc.dateDays, row);
         return;
       }
-      case SentenceKind.gst: {
-        const timeOfDayS = columns.gst.timeOfDayS[row] ?? Number.NaN;
-        if (Number.isNaN(timeOfDayS)) return;
-        this.#seeTime(timeOfDayS);
-        this.#burstAt(timeOfDayS).takeGst(columns.gst, row);
+      case SentenceKind.gst:
+        this.#burstOf(columns.gst.timeOfDayS, row)?.takeGst(columns.gst, row);
         return;
-      }
       case SentenceKind.zda: {
-        const timeOfDayS = columns.zda.timeOfDayS[row] ?? Number.NaN;
-        if (Number.isNaN(timeOfDayS)) return;
-        this.#seeTime(timeOfDayS);
-        this.#burstAt(timeOfDayS).takeZda(columns.zda, row);
-        this.#seeDateOfPlan(timeOfDayS, columns.zda.dateDays[row] ?? NO_DATE);
+        const {zda} = columns;
+        const burst = this.#burstOf(zda.timeOfDayS, row);
+        if (burst === undefined) return;
+        burst.takeZda(zda, row);
+        if (this.#noFixYet) this.#datePlan(burst, zda.dateDays, row);
         return;
       }
       case SentenceKind.gsa:
@@ -178,27 +179,25 @@ export class NmeaAssembler {
         this.#sampler.take(columns, row, this.#account);
         return;
       case SentenceKind.gll:
-        this.#takeGll(columns, row);
+        if (this.#noFixYet) this.#takeGll(columns, row);
         return;
       default:
         return;
     }
   }
 
-  #takeFix(isGga: boolean, columns: SentenceColumns, row: number): void {
-    const {fixes} = columns;
+  #takeFix(isGga: boolean, {fixes}: SentenceColumns, row: number): void {
     const hasPosition = !Number.isNaN(fixes.latitudeDeg[row] ?? Number.NaN);
     if (!hasPosition) this.#withoutPosition += 1;
-    const timeOfDayS = fixes.timeOfDayS[row] ?? Number.NaN;
-    if (Number.isNaN(timeOfDayS)) return;
     const satellites = fixes.satellites[row] ?? NO_SATELLITES;
     if (isGga && satellites > MOST_IN_GGA && satellites !== NO_SATELLITES) {
       this.#countsBeyondTwelve = true;
     }
-    this.#seeTime(timeOfDayS);
-    const talker = fixes.talker[row] ?? 0;
-    let burst = this.#burstAt(timeOfDayS);
-    if (hasPosition && burst.holds(isGga, talker)) burst = this.#newBurst(timeOfDayS);
+    let burst = this.#burstOf(fixes.timeOfDayS, row);
+    if (burst === undefined) return;
+    if (hasPosition && burst.holds(isGga, fixes.talker[row] ?? 0)) {
+      burst = this.#newBurst(fixes.timeOfDayS, row);
+    }
     burst.takeFix(isGga, fixes, row, this.#account.lineFeeds);
   }
 
@@ -219,44 +218,53 @@ export class NmeaAssembler {
   /** GLL stands alone: what the other sentences yield must not depend on it. */
   #takeGll({gll}: SentenceColumns, row: number): void {
     const timeOfDayS = gll.timeOfDayS[row] ?? Number.NaN;
-    if (!this.#noFixYet || Number.isNaN(timeOfDayS) || Number.isNaN(gll.latitudeDeg[row])) return;
+    if (Number.isNaN(timeOfDayS) || Number.isNaN(gll.latitudeDeg[row])) return;
     this.#gll.days.advance(timeOfDayS, this.#gll.builder.count);
     this.#plan.takePlan(gll, row, this.#account.lineFeeds);
     this.#gll.addPlan(timeOfDayS, this.#plan, gll.status[row] === SentenceStatus.void);
   }
 
-  #seeTime(timeOfDayS: number): void {
-    if (timeOfDayS >= SECONDS_PER_DAY) this.#leapSeconds += 1;
-    this.#sampler.seeTime(timeOfDayS, this.#fixes.days, this.#fixes.builder.count);
-  }
-
-  #seeDateOfPlan(timeOfDayS: number, dateDays: number): void {
-    if (!this.#noFixYet || dateDays === NO_DATE) return;
+  #datePlan({timeOfDayS}: Burst, dateDays: Int32Array, row: number): void {
+    const day = dateDays[row] ?? NO_DATE;
+    if (day === NO_DATE) return;
     const {days, builder} = this.#gll;
     days.advance(timeOfDayS, builder.count);
-    days.seeDate(dateDays, builder.count, true);
+    days.seeDate(day, builder.count, true);
   }
 
-  /** The open burst of that time, the newest if there are several, or a new one. */
-  #burstAt(timeOfDayS: number): Burst {
-    for (let k = this.#open.length - 1; k >= 0; k -= 1) {
-      const burst = this.#open[k];
-      if (burst?.timeOfDayS !== timeOfDayS) continue;
-      if (k === this.#open.length - 1 && this.#pending.count > 0) {
-        burst.inside.add(this.#pending);
+  /**
+   * The open burst of a time, the newest if there are several, or a new one; undefined for a
+   * sentence without a time. Columns are passed, as a double that is passed may be put on the heap.
+   */
+  #burstOf(timesOfDayS: Float64Array, row: number): Burst | undefined {
+    const timeOfDayS = timesOfDayS[row] ?? Number.NaN;
+    if (Number.isNaN(timeOfDayS)) return undefined;
+    if (timeOfDayS !== this.#lastTimeS) {
+      this.#lastTimeS = timeOfDayS;
+      if (timeOfDayS >= SECONDS_PER_DAY) this.#leapSeconds += 1;
+      this.#sampler.seeTime(timeOfDayS, this.#fixes.days, this.#fixes.builder.count);
+    }
+    const newest = this.#newest;
+    if (newest?.timeOfDayS === timeOfDayS) {
+      if (this.#pending.count > 0) {
+        newest.inside.add(this.#pending);
         this.#pending.clear();
       }
-      return burst;
+      return newest;
     }
-    return this.#newBurst(timeOfDayS);
+    for (let k = this.#open.length - 2; k >= 0; k -= 1) {
+      const burst = this.#open[k];
+      if (burst?.timeOfDayS === timeOfDayS) return burst;
+    }
+    return this.#newBurst(timesOfDayS, row);
   }
 
-  #newBurst(timeOfDayS: number): Burst {
+  #newBurst(timesOfDayS: Float64Array, row: number): Burst {
     if (this.#open.length === OPEN_BURSTS) this.#flushOldest();
-    const before = this.#open.at(-1);
+    const before = this.#newest;
     const burst = this.#free.pop() ?? new Burst();
     this.#serial += 1;
-    burst.begin(timeOfDayS);
+    burst.begin(timesOfDayS, row);
     if (this.#pending.count > 0) {
       before?.trailing.add(this.#pending);
       burst.leading.add(this.#pending);
@@ -264,6 +272,7 @@ export class NmeaAssembler {
       this.#pending.clear();
     }
     this.#open.push(burst);
+    this.#newest = burst;
     return burst;
   }
 
@@ -304,7 +313,7 @@ export class NmeaAssembler {
 
   #countTalkers(burst: Burst): void {
     this.#repeatedByTalkers += 1;
-    for (const talker of burst.ggaTalkers) this.#talkers.add(talker);
+    for (const talker of burst.ggaTalkers.list()) this.#talkers.add(talker);
   }
 }
 

@@ -1,5 +1,4 @@
 import {FixClass} from '../epochs/epochs.ts';
-import {NO_DATE} from './field-reader.ts';
 import {rankOfClass} from './mode-indicator.ts';
 import type {
   FixColumns,
@@ -9,10 +8,13 @@ import type {
   RmcColumns,
   ZdaColumns,
 } from './sentence-columns.ts';
+import {NO_DATE} from './sentence-fields.ts';
 import {SentenceStatus} from './status.ts';
 
 const NO_SATELLITES = 255;
 const NO_STATION = 65_535;
+/** More than any log has at one time. */
+const MOST_TALKERS = 8;
 const TALKER_GN = 0x474e;
 
 /** What consecutive GSA sentences say together. */
@@ -107,14 +109,35 @@ function isBetter(fixes: FixColumns, row: number, than: Fix): boolean {
   return rank > 0 || (rank === 0 && fixes.talker[row] === TALKER_GN && than.talker !== TALKER_GN);
 }
 
+/** A few talkers, without growing and shrinking an array at every epoch. */
+class Talkers {
+  count = 0;
+  readonly #talkers = new Uint16Array(MOST_TALKERS);
+
+  add(talker: number): void {
+    if (this.count === MOST_TALKERS) return;
+    this.#talkers[this.count] = talker;
+    this.count += 1;
+  }
+
+  includes(talker: number): boolean {
+    for (let k = 0; k < this.count; k += 1) if (this.#talkers[k] === talker) return true;
+    return false;
+  }
+
+  list(): number[] {
+    return [...this.#talkers.subarray(0, this.count)];
+  }
+}
+
 /** The sentences of one epoch: those that carry its time and the timeless ones among them. */
 export class Burst {
   timeOfDayS = Number.NaN;
   readonly gga = new Fix();
   readonly gns = new Fix();
-  /** Talkers whose positions were taken from GGA, from GNS. */
-  readonly ggaTalkers: number[] = [];
-  readonly gnsTalkers: number[] = [];
+  /** Talkers of GGA and of GNS that gave positions. */
+  readonly ggaTalkers = new Talkers();
+  readonly gnsTalkers = new Talkers();
   rmcValid = false;
   rmcVoid = false;
   /** Position of RMC, for a log without any other. */
@@ -133,13 +156,13 @@ export class Burst {
   /** HDOP of the burst that `leading` may belong to instead. */
   hdopBefore = Number.NaN;
 
-  begin(timeOfDayS: number): void {
-    this.timeOfDayS = timeOfDayS;
+  begin(timesOfDayS: Float64Array, row: number): void {
+    this.timeOfDayS = timesOfDayS[row] ?? Number.NaN;
     this.gga.clear();
     this.gns.clear();
     this.rmc.clear();
-    this.ggaTalkers.length = 0;
-    this.gnsTalkers.length = 0;
+    this.ggaTalkers.count = 0;
+    this.gnsTalkers.count = 0;
     this.rmcValid = false;
     this.rmcVoid = false;
     this.sigmaEastM = Number.NaN;
@@ -167,7 +190,7 @@ export class Burst {
 
   /** Whether several talkers gave a position of this epoch. */
   get repeatedByTalkers(): boolean {
-    return this.ggaTalkers.length > 1;
+    return this.ggaTalkers.count > 1;
   }
 
   /** Whether a position of this kind and talker is there already, so that another is a new epoch. */
@@ -178,7 +201,7 @@ export class Burst {
   takeFix(isGga: boolean, fixes: FixColumns, row: number, lineFeedsBefore: number): void {
     const fix = isGga ? this.gga : this.gns;
     if (!Number.isNaN(fixes.latitudeDeg[row] ?? Number.NaN)) {
-      (isGga ? this.ggaTalkers : this.gnsTalkers).push(fixes.talker[row] ?? 0);
+      (isGga ? this.ggaTalkers : this.gnsTalkers).add(fixes.talker[row] ?? 0);
     }
     if (isBetter(fixes, row, fix)) fix.take(fixes, row, lineFeedsBefore);
   }

@@ -9,7 +9,6 @@ import {
 } from './account.ts';
 import {AddressCounts, addressLength} from './addresses.ts';
 import {asciiOf, BANG, COMMA, CR, DOLLAR, HASH, hexValue, LF, STAR, textEnd} from './bytes.ts';
-import {FieldReader} from './field-reader.ts';
 import {decodeGga} from './gga.ts';
 import {decodeGll} from './gll.ts';
 import {decodeGns} from './gns.ts';
@@ -26,6 +25,7 @@ import {
   type SentenceColumns,
   SentenceKind,
 } from './sentence-columns.ts';
+import {SentenceFields} from './sentence-fields.ts';
 import {datumOfDtm} from './uncommon.ts';
 import {decodeZda} from './zda.ts';
 
@@ -103,7 +103,7 @@ export interface DecodeOptions {
 export class NmeaDecoder {
   readonly #trustAbsentChecksum: boolean;
   readonly #columns: SentenceColumns;
-  readonly #fields = new FieldReader();
+  readonly #fields = new SentenceFields();
   readonly #addresses = new AddressCounts();
   /** Where the fields of each RMC and GLL row begin and end, for a second look. */
   readonly #rmcFrom: Uint32Array;
@@ -116,6 +116,7 @@ export class NmeaDecoder {
   #isLast = false;
   #account = emptyAccount();
   #window = new SampleWindow(DECODER_OPEN_S, true);
+  #lastTimeS = Number.NaN;
   #positions = 0;
   #datums: string[] = [];
   #lastDtm = new Uint8Array(0);
@@ -147,6 +148,7 @@ export class NmeaDecoder {
     this.#isLast = isLast;
     this.#account = emptyAccount();
     this.#window = new SampleWindow(DECODER_OPEN_S, true);
+    this.#lastTimeS = Number.NaN;
     this.#positions = 0;
     this.#datums = [];
     this.#lastDtm = new Uint8Array(0);
@@ -353,14 +355,15 @@ export class NmeaDecoder {
     const kind = this.#addresses.count(this.#bytes, start, length);
     if (kind === -1) return false;
     if (kind === SentenceKind.ignored || kind === SentenceKind.proprietary) return true;
-    this.#fields.begin(this.#bytes, start + length + 2, star);
-    const fault = this.#decode(kind, start, star);
+    const from = start + length + 2;
+    if (kind <= SentenceKind.zda) this.#fields.split(this.#bytes, from, star);
+    const fault = this.#decode(kind, start, from, star);
     if (fault === Rejection.none) countOne(this.#account.decoded, kind);
     else this.#reject(fault, start, Math.min(star + 3, this.#length));
     return true;
   }
 
-  #decode(kind: SentenceKind, start: number, star: number): Rejection {
+  #decode(kind: SentenceKind, start: number, from: number, star: number): Rejection {
     const columns = this.#columns;
     const fields = this.#fields;
     const lineFeeds = this.#account.lineFeeds;
@@ -382,29 +385,29 @@ export class NmeaDecoder {
           fixes.longitudeDeg[row] = Number.NaN;
         }
         if (!Number.isNaN(fixes.latitudeDeg[row] ?? Number.NaN)) this.#positions += 1;
-        return this.#timed(kind, fixes.timeOfDayS[row]);
+        return this.#timed(kind, fixes.timeOfDayS, row);
       }
       case SentenceKind.rmc: {
         const {rmc} = columns;
         const row = rmc.count;
         rmc.talker[row] = talker;
         rmc.lineFeedsBefore[row] = lineFeeds;
-        this.#rmcFrom[row] = fields.place;
+        this.#rmcFrom[row] = from;
         this.#rmcEnd[row] = star;
         const fault = decodeRmc(fields, rmc);
-        return fault === Rejection.none ? this.#timed(kind, rmc.timeOfDayS[row]) : fault;
+        return fault === Rejection.none ? this.#timed(kind, rmc.timeOfDayS, row) : fault;
       }
       case SentenceKind.gst: {
         const {gst} = columns;
         const row = gst.count;
         const fault = decodeGst(fields, gst);
-        return fault === Rejection.none ? this.#timed(kind, gst.timeOfDayS[row]) : fault;
+        return fault === Rejection.none ? this.#timed(kind, gst.timeOfDayS, row) : fault;
       }
       case SentenceKind.zda: {
         const {zda} = columns;
         const row = zda.count;
         const fault = decodeZda(fields, zda);
-        return fault === Rejection.none ? this.#timed(kind, zda.timeOfDayS[row]) : fault;
+        return fault === Rejection.none ? this.#timed(kind, zda.timeOfDayS, row) : fault;
       }
       case SentenceKind.gsa: {
         const fault = decodeGsa(fields, columns.gsa, columns.gsaIds, talker);
@@ -415,7 +418,7 @@ export class NmeaDecoder {
         if (this.#window.open) this.#keepGsv(start, star);
         return Rejection.none;
       case SentenceKind.gll:
-        this.#keepGll(star);
+        this.#keepGll(from, star);
         return Rejection.none;
       default:
         this.#takeDatum(start, star);
@@ -429,9 +432,14 @@ export class NmeaDecoder {
     order.count += 1;
   }
 
-  #timed(kind: SentenceKind, timeOfDayS: number | undefined): Rejection {
+  /** The column is passed, not the time: a double that is passed may be put on the heap. */
+  #timed(kind: SentenceKind, timesOfDayS: Float64Array, row: number): Rejection {
     this.#order(kind);
-    if (timeOfDayS !== undefined && !Number.isNaN(timeOfDayS)) this.#window.see(timeOfDayS);
+    const timeOfDayS = timesOfDayS[row] ?? Number.NaN;
+    if (timeOfDayS !== this.#lastTimeS && !Number.isNaN(timeOfDayS)) {
+      this.#lastTimeS = timeOfDayS;
+      this.#window.see(timeOfDayS);
+    }
     return Rejection.none;
   }
 
@@ -446,14 +454,14 @@ export class NmeaDecoder {
     this.#order(SentenceKind.gsv);
   }
 
-  #keepGll(star: number): void {
+  #keepGll(from: number, star: number): void {
     const {gll} = this.#columns;
     const row = gll.count;
     gll.timeOfDayS[row] = Number.NaN;
     gll.latitudeDeg[row] = Number.NaN;
     gll.longitudeDeg[row] = Number.NaN;
     gll.lineFeedsBefore[row] = this.#account.lineFeeds;
-    this.#gllFrom[row] = this.#fields.place;
+    this.#gllFrom[row] = from;
     this.#gllEnd[row] = star;
     gll.count = row + 1;
     this.#order(SentenceKind.gll);
@@ -473,11 +481,11 @@ export class NmeaDecoder {
   #lookAgain(): void {
     const {rmc, gll, decimals} = this.#columns;
     for (let row = 0; row < rmc.count; row += 1) {
-      this.#fields.begin(this.#bytes, this.#rmcFrom[row] ?? 0, this.#rmcEnd[row] ?? 0);
+      this.#fields.split(this.#bytes, this.#rmcFrom[row] ?? 0, this.#rmcEnd[row] ?? 0);
       decodeRmcPosition(this.#fields, rmc, row, decimals.rmc);
     }
     for (let row = 0; row < gll.count; row += 1) {
-      this.#fields.begin(this.#bytes, this.#gllFrom[row] ?? 0, this.#gllEnd[row] ?? 0);
+      this.#fields.split(this.#bytes, this.#gllFrom[row] ?? 0, this.#gllEnd[row] ?? 0);
       decodeGll(this.#fields, gll, row, decimals.gll);
     }
   }

@@ -1,5 +1,4 @@
 import {FixClass} from '../epochs/epochs.ts';
-import type {FieldReader} from './field-reader.ts';
 import {
   finishFix,
   takeAgeAndStation,
@@ -8,8 +7,11 @@ import {
 } from './fix-fields.ts';
 import {Rejection} from './rejections.ts';
 import type {FixColumns, PrintedDecimals} from './sentence-columns.ts';
+import type {SentenceFields} from './sentence-fields.ts';
 
 const METRES = 0x4d; // M
+const ALTITUDE = 8;
+const SEPARATION = 10;
 
 /**
  * Class by the quality indicator 0 to 8.
@@ -33,26 +35,27 @@ const CLASS_OF_QUALITY: readonly FixClass[] = [
  * separation and its unit, age of corrections, station.
  */
 export function decodeGga(
-  fields: FieldReader,
+  fields: SentenceFields,
   fixes: FixColumns,
   decimals: PrintedDecimals,
 ): Rejection {
   const row = fixes.count;
   takeTimeAndPosition(fields, fixes, decimals);
-  const quality = fields.whole();
+  const quality = fields.whole(5);
   fixes.fixClass[row] = CLASS_OF_QUALITY[quality] ?? FixClass.unknown;
   takeSatellitesAndHdop(fields, fixes);
-  metresTo(fields, fixes.altitudeM, row);
-  if (fields.decimals > decimals.altitude) decimals.altitude = fields.decimals;
-  metresTo(fields, fixes.separationM, row);
-  if (fields.decimals > decimals.separation) decimals.separation = fields.decimals;
-  takeAgeAndStation(fields, fixes);
+  fields.decimalTo(fixes.altitudeM, row, ALTITUDE);
+  fields.decimalTo(fixes.separationM, row, SEPARATION);
+  checkMetres(fields, ALTITUDE);
+  checkMetres(fields, SEPARATION);
+  decimals.altitude = Math.max(decimals.altitude, fields.decimals(ALTITUDE));
+  decimals.separation = Math.max(decimals.separation, fields.decimals(SEPARATION));
+  takeAgeAndStation(fields, fixes, 12);
   return finishFix(fields, fixes);
 }
 
-/** A value and, in the next field, its unit; a value in another unit than metres is refused. */
-function metresTo(fields: FieldReader, column: Float64Array, row: number): void {
-  fields.decimalTo(column, row);
-  const unit = fields.letter();
-  if (unit !== METRES && unit !== 0 && !Number.isNaN(column[row])) fields.fault = Rejection.unit;
+/** A height is followed by its unit; a height in another unit than metres is refused. */
+function checkMetres(fields: SentenceFields, field: number): void {
+  const unit = fields.letter(field + 1);
+  if (unit !== METRES && unit !== 0 && fields.letter(field) !== 0) fields.fault = Rejection.unit;
 }

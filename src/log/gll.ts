@@ -1,8 +1,8 @@
 import {FixClass} from '../epochs/epochs.ts';
-import type {FieldReader} from './field-reader.ts';
 import {classOfMode} from './mode-indicator.ts';
 import {Rejection} from './rejections.ts';
 import type {GllColumns, PrintedDecimals} from './sentence-columns.ts';
+import type {SentenceFields} from './sentence-fields.ts';
 import {SentenceStatus, statusOf} from './status.ts';
 
 /**
@@ -10,18 +10,16 @@ import {SentenceStatus, statusOf} from './status.ts';
  * a sentence that cannot be read leaves its row absent and is not rejected.
  */
 export function decodeGll(
-  fields: FieldReader,
+  fields: SentenceFields,
   gll: GllColumns,
   row: number,
   decimals: PrintedDecimals,
 ): void {
-  fields.latitudeTo(gll.latitudeDeg, row);
-  const latitudeDecimals = fields.decimals;
-  fields.longitudeTo(gll.longitudeDeg, row);
-  const longitudeDecimals = fields.decimals;
-  fields.timeOfDayTo(gll.timeOfDayS, row);
-  const status = statusOf(fields.letter());
-  const mode = fields.letter();
+  fields.latitudeTo(gll.latitudeDeg, row, 0);
+  fields.longitudeTo(gll.longitudeDeg, row, 2);
+  fields.timeOfDayTo(gll.timeOfDayS, row, 4);
+  const status = statusOf(fields.letter(5));
+  const mode = fields.letter(6);
   gll.status[row] = status;
   gll.fixClass[row] = mode === 0 ? FixClass.unknown : classOfMode(mode);
   const sum = Math.abs(gll.latitudeDeg[row] ?? 0) + Math.abs(gll.longitudeDeg[row] ?? 0);
@@ -31,6 +29,6 @@ export function decodeGll(
     gll.longitudeDeg[row] = Number.NaN;
     return;
   }
-  decimals.latitude = Math.max(decimals.latitude, latitudeDecimals);
-  decimals.longitude = Math.max(decimals.longitude, longitudeDecimals);
+  decimals.latitude = Math.max(decimals.latitude, fields.decimals(0));
+  decimals.longitude = Math.max(decimals.longitude, fields.decimals(2));
 }

@@ -1,8 +1,8 @@
 import {SatelliteSystem} from '../epochs/epochs.ts';
 import type {SatellitesBuilder} from '../epochs/satellites-builder.ts';
-import type {FieldReader} from './field-reader.ts';
 import {Rejection} from './rejections.ts';
 import {systemOfNumber, systemOfTalker} from './satellite-system.ts';
+import type {SentenceFields} from './sentence-fields.ts';
 
 /** Total, number, satellites in view; then four fields per satellite and, maybe, a signal id. */
 const HEAD_FIELDS = 3;
@@ -23,15 +23,15 @@ export class SatelliteSample {
   readonly #value = new Float64Array(1);
 
   /** Takes a GSV sentence; a carrier-to-noise ratio of zero means "not tracked". */
-  take(fields: FieldReader, talker: number): Rejection {
-    fields.skip(HEAD_FIELDS);
-    const satellites = Math.trunc(fields.fieldsLeft() / FIELDS_PER_SATELLITE);
+  take(fields: SentenceFields, talker: number): Rejection {
+    const satellites = Math.trunc((fields.count - HEAD_FIELDS) / FIELDS_PER_SATELLITE);
     const ofTalker = systemOfTalker(talker);
     for (let k = 0; k < satellites; k += 1) {
-      const number = fields.whole();
-      const elevationDeg = this.#decimal(fields);
-      const azimuthDeg = this.#decimal(fields);
-      const ratio = this.#decimal(fields);
+      const field = HEAD_FIELDS + k * FIELDS_PER_SATELLITE;
+      const number = fields.whole(field);
+      const elevationDeg = this.#decimal(fields, field + 1);
+      const azimuthDeg = this.#decimal(fields, field + 2);
+      const ratio = this.#decimal(fields, field + 3);
       if (fields.fault !== Rejection.none) return fields.fault;
       if (number <= 0) continue;
       const system = ofTalker === SatelliteSystem.unknown ? systemOfNumber(number) : ofTalker;
@@ -41,8 +41,8 @@ export class SatelliteSample {
     return Rejection.none;
   }
 
-  #decimal(fields: FieldReader): number {
-    fields.decimalTo(this.#value, 0);
+  #decimal(fields: SentenceFields, field: number): number {
+    fields.decimalTo(this.#value, 0, field);
     return this.#value[0] ?? Number.NaN;
   }
 

@@ -2,11 +2,11 @@ import {SatellitesBuilder} from '../epochs/satellites-builder.ts';
 import {SECONDS_PER_DAY} from '../time/calendar.ts';
 import {asciiOf} from './bytes.ts';
 import type {DayTrack} from './day-track.ts';
-import {FieldReader} from './field-reader.ts';
 import {SatelliteSample} from './gsv.ts';
 import {ASSEMBLER_OPEN_S, SampleWindow} from './gsv-window.ts';
 import type {LogAccount} from './log-account.ts';
 import type {SentenceColumns} from './sentence-columns.ts';
+import {SentenceFields} from './sentence-fields.ts';
 
 /** Where the fields of a GSV sentence begin: behind `$`, the address and a comma. */
 const FIELDS_AT = 7;
@@ -19,7 +19,7 @@ export class SatelliteSampler {
   readonly samples: Array<{readonly epoch: number; readonly firstRow: number}> = [];
   readonly #window = new SampleWindow(ASSEMBLER_OPEN_S, false);
   readonly #sample = new SatelliteSample();
-  readonly #fields = new FieldReader();
+  readonly #fields = new SentenceFields();
   #sampleS = 0;
   #sampleEpoch = 0;
   #textAt = 0;
@@ -42,7 +42,7 @@ export class SatelliteSampler {
     const end = from + (gsv.bytes[row] ?? 0);
     this.#textAt = end;
     if (!this.#window.open) return;
-    this.#fields.begin(gsvText.byte, from + FIELDS_AT, end);
+    this.#fields.split(gsvText.byte, from + FIELDS_AT, end);
     const talker = ((gsvText.byte[from + 1] ?? 0) << 8) | (gsvText.byte[from + 2] ?? 0);
     const reason = this.#sample.take(this.#fields, talker);
     const lineNumber = account.lineFeeds + (gsv.lineFeedsBefore[row] ?? 0) + 1;

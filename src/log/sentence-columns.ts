@@ -97,12 +97,14 @@ export interface KindColumn extends Columns {
 export const SentenceKind = {
   /** Verified and counted only. */
   ignored: 0,
+  // Decoded at once.
   gga: 1,
   gns: 2,
   rmc: 3,
   gst: 4,
   gsa: 5,
   zda: 6,
+  // Looked at only if needed.
   gsv: 7,
   gll: 8,
   dtm: 9,
