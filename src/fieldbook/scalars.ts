@@ -226,7 +226,7 @@ interface ScalarShape<T> {
 }
 
 /** A shape that is read from text alone. */
-export function scalar<T>({example, hint, schema, read}: ScalarShape<T>): Shape<T> {
+function scalar<T>({example, hint, schema, read}: ScalarShape<T>): Shape<T> {
   return {
     example,
     hint: hint ?? `, as ${example}`,

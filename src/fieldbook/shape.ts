@@ -26,7 +26,7 @@ export interface Shape<T> {
 }
 
 export type JsonSchema = {readonly [key: string]: JsonValue};
-export type JsonValue =
+type JsonValue =
   | string
   | number
   | boolean

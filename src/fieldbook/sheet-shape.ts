@@ -27,10 +27,10 @@ const OFFSET_M = {least: -1, most: 1};
 const SIGMA_M = {least: 0, most: 1000};
 const ECCENTRIC_M = {least: -1000, most: 1000};
 
-export const POINTS = ['mark', 'antenna reference point', 'phase centre', 'not stated'] as const;
-export const MEASURED_TO = ['antenna reference point', 'slant mark', 'phase centre'] as const;
-export const HEIGHT_USED = ['opening', 'mean', 'interpolated'] as const;
-export const STATED_SOURCES = [
+const POINTS = ['mark', 'antenna reference point', 'phase centre', 'not stated'] as const;
+const MEASURED_TO = ['antenna reference point', 'slant mark', 'phase centre'] as const;
+const HEIGHT_USED = ['opening', 'mean', 'interpolated'] as const;
+const STATED_SOURCES = [
   'antenna height',
   'centring',
   'base',

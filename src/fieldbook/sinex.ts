@@ -13,14 +13,14 @@ export interface Sinex {
   readonly covariance: SymmetricMatrix | undefined;
 }
 
-export interface SinexSite {
+interface SinexSite {
   readonly code: string;
   readonly point: string;
   readonly domes: string;
   readonly description: string;
 }
 
-export interface SinexEpochs {
+interface SinexEpochs {
   readonly code: string;
   readonly point: string;
   readonly solution: string;
@@ -30,7 +30,7 @@ export interface SinexEpochs {
   readonly mean: number | undefined;
 }
 
-export interface SinexEstimate {
+interface SinexEstimate {
   /** Counted from 1, as in the file. */
   readonly index: number;
   /** STAX, STAY, STAZ, VELX, … */

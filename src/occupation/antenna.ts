@@ -9,7 +9,7 @@ import type {Enu} from '../geodesy/types.ts';
 import type {OccupationFacts, PointMeant, Severity} from './result.ts';
 
 /** Readings of one height that lie further apart than this are a finding; guides read to 1 mm. */
-export const READING_LIMIT_M = 0.003;
+const READING_LIMIT_M = 0.003;
 /** Room for the last bit of lengths that came from other units. */
 const ROUND_OFF_M = 1e-9;
 
