@@ -20,6 +20,7 @@ import {TableClock} from './table-time.ts';
 /** A geocentric distance between the deepest places on Earth and beyond the satellites. */
 const RADIUS_LIMITS_M = [6.2e6, 5e7] as const;
 const HEIGHT_LIMITS_M = [-20_000, 4.4e7] as const;
+const POWERS_OF_TEN = Array.from({length: 16}, (_, power) => Number(`1e${power}`));
 const DEGREES_PER_RADIAN = 180 / Math.PI;
 const NOT_GIVEN_SATELLITES = 255;
 const NOT_GIVEN_STATION = 65_535;
@@ -191,7 +192,7 @@ export class RowDecoder {
     }
     const place = geodeticFromEcef({xM, yM, zM}, this.#ellipsoid);
     this.#ellipsoidalHeightM = place.ellipsoidalHeightM;
-    this.#heightStepM = Math.min(this.#heightStepM, x.factor / 10 ** decimals);
+    this.#heightStepM = smaller(this.#heightStepM, x.factor, decimals);
     return place;
   }
 
@@ -229,18 +230,12 @@ export class RowDecoder {
     this.#separationM = separationM;
     const {ellipsoidalHeight, altitude, separation} = columns;
     if (ellipsoidalHeight !== null && !Number.isNaN(ellipsoidal)) {
-      this.#heightStepM = Math.min(
-        this.#heightStepM,
-        ellipsoidalHeight.factor / 10 ** heightDecimals,
-      );
+      this.#heightStepM = smaller(this.#heightStepM, ellipsoidalHeight.factor, heightDecimals);
     } else if (altitude !== null && !Number.isNaN(altitudeM)) {
-      this.#heightStepM = Math.min(this.#heightStepM, altitude.factor / 10 ** altitudeDecimals);
+      this.#heightStepM = smaller(this.#heightStepM, altitude.factor, altitudeDecimals);
     }
     if (separation !== null && !Number.isNaN(separationM)) {
-      this.#separationStepM = Math.min(
-        this.#separationStepM,
-        separation.factor / 10 ** separationDecimals,
-      );
+      this.#separationStepM = smaller(this.#separationStepM, separation.factor, separationDecimals);
     }
     return {latitudeDeg, longitudeDeg: wrappedLongitudeDeg(longitude), ellipsoidalHeightM};
   }
@@ -257,7 +252,7 @@ export class RowDecoder {
     const number = this.#numbers.decode(bytes, from, to);
     const {state} = this.#numbers;
     if (state === NumberState.present && !sexagesimal) {
-      this.#seeAngleStep(kind, column.factor / 10 ** this.#numbers.decimals);
+      this.#seeAngleStep(kind, column.factor, this.#numbers.decimals);
       return number * column.factor;
     }
     if (state === NumberState.absent) return this.#refuseNumber('no position');
@@ -269,13 +264,13 @@ export class RowDecoder {
     }
     const decimals = /\.(\d*)/.exec(text)?.[1]?.length ?? 0;
     const parts = text.match(/\d+(\.\d*)?/g)?.length ?? 1;
-    this.#seeAngleStep(kind, 1 / 10 ** decimals / 60 ** (parts - 1));
+    this.#seeAngleStep(kind, 1 / 60 ** (parts - 1), decimals);
     return parsed.degrees;
   }
 
-  #seeAngleStep(kind: 'latitude' | 'longitude', stepDeg: number): void {
-    if (kind === 'latitude') this.#latitudeStep = Math.min(this.#latitudeStep, stepDeg);
-    else this.#longitudeStep = Math.min(this.#longitudeStep, stepDeg);
+  #seeAngleStep(kind: 'latitude' | 'longitude', factor: number, decimals: number): void {
+    if (kind === 'latitude') this.#latitudeStep = smaller(this.#latitudeStep, factor, decimals);
+    else this.#longitudeStep = smaller(this.#longitudeStep, factor, decimals);
   }
 
   #quality(bytes: Uint8Array): FixClass {
@@ -360,6 +355,12 @@ export class RowDecoder {
 
 function wholeBelow(value: number, notGiven: number): number {
   return value >= 0 && value < notGiven ? Math.floor(value) : notGiven;
+}
+
+/** The step of a number with so many decimals, or the step so far if that is smaller. */
+function smaller(step: number, factor: number, decimals: number): number {
+  const own = factor / (POWERS_OF_TEN[decimals] ?? 10 ** decimals);
+  return Math.min(own, step);
 }
 
 function finite(step: number): number {
