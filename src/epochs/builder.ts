@@ -38,6 +38,9 @@ interface ColumnKind<T> {
 
 const COLUMN_NAMES = Object.keys(COLUMNS) as ColumnName[];
 
+/** Before the first epoch nothing is allocated: most builders of a reader stay empty. */
+const NO_BLOCK: EpochColumns = createBlock(0);
+
 /**
  * Columns that grow by one epoch at a time, in blocks that are joined once at the end.
  *
@@ -45,33 +48,36 @@ const COLUMN_NAMES = Object.keys(COLUMNS) as ColumnName[];
  * the caller writes what the log gives. Memory: 83 bytes per epoch; while joining, one column more.
  */
 export class EpochsBuilder {
-  /** The columns being filled; another object after every 65,536 epochs. */
-  block: EpochColumns = createBlock(BLOCK_EPOCHS);
-  #row = 0;
-  readonly #full: EpochColumns[] = [];
+  #blocks: Partial<EpochColumns>[] = [];
+  #block: EpochColumns = NO_BLOCK;
+  #count = 0;
 
   get count(): number {
-    return this.#full.length * BLOCK_EPOCHS + this.#row;
+    return this.#count;
+  }
+
+  /** The columns being filled, from the first `add` on; other ones after every 65,536 epochs. */
+  get block(): EpochColumns {
+    return this.#block;
   }
 
   add(): number {
-    if (this.#row === BLOCK_EPOCHS) {
-      this.#full.push(this.block);
-      this.block = createBlock(BLOCK_EPOCHS);
-      this.#row = 0;
+    const row = this.#count % BLOCK_EPOCHS;
+    if (row === 0) {
+      this.#block = createBlock(BLOCK_EPOCHS);
+      this.#blocks.push(this.#block);
     }
-    const row = this.#row;
-    this.#row += 1;
+    this.#count += 1;
     return row;
   }
 
   /** The epochs added so far, in the order of adding; the builder is empty afterwards. */
   finish(): Epochs {
-    const {count} = this;
-    const blocks: Partial<EpochColumns>[] = [...this.#full, this.block];
-    this.#full.length = 0;
-    this.#row = 0;
-    this.block = createBlock(BLOCK_EPOCHS);
+    const count = this.#count;
+    const blocks = this.#blocks;
+    this.#blocks = [];
+    this.#block = NO_BLOCK;
+    this.#count = 0;
     return {count, ...mapColumns((name) => joined(name, blocks, count))};
   }
 }

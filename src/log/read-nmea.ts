@@ -4,8 +4,8 @@ import type {LogContents, LogReader, ReadOptions} from './contents.ts';
 import {NmeaDecoder} from './decode.ts';
 import {nmeaContents} from './nmea-contents.ts';
 
-/** Bytes decoded at a time; smaller batches fit the cache better, larger ones gain nothing. */
-export const BATCH_BYTES = 1 << 20;
+/** Bytes decoded at a time: what is decoded stays in the cache until it is assembled. */
+export const BATCH_BYTES = 1 << 18;
 
 /** Reads NMEA 0183; `NmeaDecoder` says what is a line, `NmeaAssembler` what is an epoch. */
 export function createNmeaReader(options: ReadOptions): LogReader {

@@ -23,6 +23,8 @@ const SOUTH = 0x53;
 const EAST = 0x45;
 const WEST = 0x57;
 
+const FIRST_GPS_DAY = daysFromCivil({year: 1980, month: 1, day: 6});
+
 /** `dateDays` of a sentence without a date. */
 export const NO_DATE = -0x8000_0000;
 
@@ -232,32 +234,43 @@ export class SentenceFields {
     column[row] = angleDeg;
   }
 
-  /** `ddmmyy` as days since 1970-01-01, years 80 to 99 in the last century; `NO_DATE` if absent. */
+  /** `ddmmyy` as days since 1970-01-01, `NO_DATE` if absent. */
   shortDateDays(field: number): number {
     const shape = this.#shapes[field] ?? EMPTY;
     if (shape === EMPTY) return NO_DATE;
     if (shape !== (NUMBER | (6 << WHOLE_DIGITS_SHIFT))) this.fault = Rejection.date;
     const whole = this.#wholes[field] ?? 0;
-    const shortYear = whole % 100;
-    // GPS time began in 1980.
-    const year = shortYear < 80 ? 2000 + shortYear : 1900 + shortYear;
+    const year = fullYear(whole % 100);
     return this.#daysOf(year, Math.trunc(whole / 100) % 100, Math.trunc(whole / 10_000));
   }
 
-  /** Three fields: day, month, year; `NO_DATE` unless all three are there. */
+  /**
+   * Three fields: day, month, year; `NO_DATE` unless all three are there. Some instruments print two
+   * digits of the year.
+   */
   longDateDays(field: number): number {
     const day = this.whole(field);
     const month = this.whole(field + 1);
     const year = this.whole(field + 2);
-    return day < 0 || month < 0 || year < 0 ? NO_DATE : this.#daysOf(year, month, day);
+    if (day < 0 || month < 0 || year < 0) return NO_DATE;
+    return this.#daysOf(this.length(field + 2) === 2 ? fullYear(year) : year, month, day);
   }
 
+  /** A date before GPS time is what a receiver prints that does not know the date. */
   #daysOf(year: number, month: number, day: number): number {
     const date = {year, month, day};
-    if (isCivilDate(date)) return daysFromCivil(date);
-    this.fault = Rejection.date;
-    return NO_DATE;
+    if (!isCivilDate(date)) {
+      this.fault = Rejection.date;
+      return NO_DATE;
+    }
+    const days = daysFromCivil(date);
+    return days < FIRST_GPS_DAY ? NO_DATE : days;
   }
+}
+
+/** The year that two digits stand for: GPS time began in 1980. */
+function fullYear(shortYear: number): number {
+  return shortYear < 80 ? 2000 + shortYear : 1900 + shortYear;
 }
 
 function firstDigits(bytes: Uint8Array, from: number, digits: number): number {
