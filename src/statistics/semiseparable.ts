@@ -1,0 +1,103 @@
+import type {NoiseModel, Term} from './noise-models.ts';
+import {termsOf} from './noise-models.ts';
+import type {TimeCells} from './time-cells.ts';
+
+/**
+ * The Cholesky factor of a covariance that is a diagonal plus a few exponentials, V = L D Lᵀ, for
+ * cells at any spacing.
+ *
+ * Method: semiseparable factorisation, O(m J²) for m cells and J exponentials; exact, gaps and
+ * unequal counts included.
+ * Source: Foreman-Mackey, Agol, Ambikasaran & Angus (2017), AJ 154, 220, section 3,
+ * doi:10.3847/1538-3881/aa9332.
+ */
+export interface Factor {
+  readonly logDeterminant: number;
+  /** m values 1/√d. */
+  readonly inverseRoot: Float64Array;
+  /** m × J gains and decays from the cell before. */
+  readonly gain: Float64Array;
+  readonly decay: Float64Array;
+  readonly weights: Float64Array;
+}
+
+export function factorOf(model: NoiseModel, cells: TimeCells): Factor {
+  const terms = termsOf(model, cells.widthS);
+  return factorOfTerms(terms, diagonal(model, terms, cells), cells.index);
+}
+
+/** White noise falls with the number of epochs in a cell, relative to the median cell. */
+function diagonal(model: NoiseModel, terms: readonly Term[], {counts}: TimeCells): Float64Array {
+  const sorted = counts.slice().sort();
+  const median = sorted[sorted.length >> 1]!;
+  const correlated = terms.reduce((sum, {atZero}) => sum + atZero, 0);
+  return counts.map((count) => (model.whiteShare * median) / count + correlated);
+}
+
+function factorOfTerms(
+  terms: readonly Term[],
+  diagonalOf: Float64Array,
+  index: Int32Array,
+): Factor {
+  const m = index.length;
+  const j = terms.length;
+  const weights = Float64Array.from(terms, ({beyond}) => beyond);
+  const inverseRoot = new Float64Array(m);
+  const gain = new Float64Array(m * j);
+  const decay = new Float64Array(m * j);
+  const s = new Float64Array(j * j);
+  const us = new Float64Array(j);
+  let logDeterminant = 0;
+  for (let n = 0; n < m; n++) {
+    if (n > 0) {
+      const steps = index[n]! - index[n - 1]!;
+      const pivot = 1 / (inverseRoot[n - 1]! * inverseRoot[n - 1]!);
+      for (let a = 0; a < j; a++) decay[n * j + a] = terms[a]!.decay ** steps;
+      for (let a = 0; a < j; a++) {
+        const ga = gain[(n - 1) * j + a]! * pivot;
+        const da = decay[n * j + a]!;
+        for (let b = 0; b <= a; b++) {
+          const value = da * decay[n * j + b]! * (s[a * j + b]! + ga * gain[(n - 1) * j + b]!);
+          s[a * j + b] = value;
+          s[b * j + a] = value;
+        }
+      }
+    }
+    let d = diagonalOf[n]!;
+    for (let a = 0; a < j; a++) {
+      let dot = 0;
+      for (let b = 0; b < j; b++) dot += s[a * j + b]! * weights[b]!;
+      us[a] = dot;
+      d -= dot * weights[a]!;
+    }
+    logDeterminant += Math.log(d);
+    inverseRoot[n] = 1 / Math.sqrt(d);
+    for (let a = 0; a < j; a++) gain[n * j + a] = (1 - us[a]!) / d;
+  }
+  return {logDeterminant, inverseRoot, gain, decay, weights};
+}
+
+/**
+ * L⁻¹ applied to a column and scaled to unit variance: what is left white if the model is right.
+ */
+export function whiten(factor: Factor, values: Float64Array): Float64Array {
+  const {inverseRoot, gain, decay, weights} = factor;
+  const m = values.length;
+  const j = weights.length;
+  const out = new Float64Array(m);
+  const f = new Float64Array(j);
+  let previous = 0;
+  for (let n = 0; n < m; n++) {
+    let z = values[n]!;
+    if (n > 0) {
+      for (let a = 0; a < j; a++) {
+        const fa = decay[n * j + a]! * (f[a]! + gain[(n - 1) * j + a]! * previous);
+        f[a] = fa;
+        z -= weights[a]! * fa;
+      }
+    }
+    previous = z;
+    out[n] = z * inverseRoot[n]!;
+  }
+  return out;
+}
