@@ -1,4 +1,4 @@
-import {DOT, MINUS, PLUS, ZERO} from './bytes.ts';
+import {MINUS, PLUS, ZERO} from './bytes.ts';
 import {textOf} from './delimited.ts';
 
 /** Powers of ten that a double holds exactly. */
@@ -75,18 +75,24 @@ export class NumberDecoder {
       this.state = NumberState.absent;
       return Number.NaN;
     }
-    const text =
-      this.#mark === DOT ? written : written.replace(String.fromCharCode(this.#mark), '.');
-    if (!NUMBER.test(text)) {
-      this.state = NumberState.unreadable;
-      return Number.NaN;
-    }
+    const mark = String.fromCharCode(this.#mark);
+    // Where the comma has the decimals, a point parts thousands, and those are not read.
+    const text = mark === '.' ? written : written.replace('.', '?').replace(mark, '.');
+    if (!NUMBER.test(text)) return this.#unreadable();
     // Fortran writes the exponent of a double as D.
     const [mantissa = '', exponent = '0'] = text.split(/[ed]/i);
     const point = mantissa.indexOf('.');
     const behind = point < 0 ? 0 : mantissa.length - point - 1;
     this.decimals = Math.max(0, behind - Number(exponent));
+    const value = Number(`${mantissa}e${exponent}`);
+    if (!Number.isFinite(value)) return this.#unreadable();
     this.state = NumberState.present;
-    return Number(`${mantissa}e${exponent}`);
+    return value;
+  }
+
+  #unreadable(): number {
+    this.decimals = 0;
+    this.state = NumberState.unreadable;
+    return Number.NaN;
   }
 }

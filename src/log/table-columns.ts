@@ -146,13 +146,18 @@ function headerNames(shape: TableShape, path: string): readonly string[] {
     );
   }
   const names = trimmedTo(shape.header, shape.fields);
-  if (names.length === shape.fields) return names;
+  if (names.length === shape.fields || leavesEmptyEnd(names.length, shape)) return names;
   const parted = namesWithPartedTime(names, shape);
   if (parted !== undefined) return parted;
   throw new InputError(
     `the header names ${names.length} columns and the rows have ${shape.fields}; the header reads ${names.join(', ')}`,
     {path},
   );
+}
+
+/** Rows that end in a delimiter have an empty field that nothing names. */
+function leavesEmptyEnd(names: number, {fields, samples}: TableShape): boolean {
+  return names === fields - 1 && samples.every((texts) => (texts[fields - 1] ?? '') === '');
 }
 
 /** A header that ends in a delimiter has one empty name too many. */
@@ -184,7 +189,7 @@ function givenNames(given: readonly string[], shape: TableShape, path: string): 
   const names = open ? given.slice(0, -1) : given;
   const missing = shape.fields - names.length;
   if (open && missing >= 0) return [...names, ...Array.from({length: missing}, () => '-')];
-  if (missing === 0) return names;
+  if (missing === 0 || leavesEmptyEnd(names.length, shape)) return names;
   throw new InputError(
     `--columns names ${names.length} columns and the rows have ${shape.fields}; write - for each column to leave out, or ... at the end`,
     {path},

@@ -25,8 +25,9 @@ const WORDS: readonly (readonly [RegExp, FixClass])[] = [
   [/^(rtk)?float(ing)?$/, FixClass.float],
   [/^(dgps|dgnss|sbas|diff(erential)?)$/, FixClass.differential],
   [/^(single|spp|auto(nomous)?|standalone|gps|gnss)$/, FixClass.autonomous],
-  [/^ppp$/, FixClass.precise],
-  [/^(dr|deadreckoning|estimated|manual|simulat(or|ed|ion)|extrapolated)$/, FixClass.notMeasured],
+  [/^(ppp|precise)$/, FixClass.precise],
+  [/^(dr|deadreckoning|estimated|manual|simulat(or|ed|ion)|notmeasured)$/, FixClass.notMeasured],
+  [/^unknown$/, FixClass.unknown],
 ];
 
 /** The class that a word in a quality column means; undefined for a word that means nothing. */

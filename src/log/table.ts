@@ -3,7 +3,7 @@ import type {Satellites} from '../epochs/epochs.ts';
 import {InputError} from '../errors.ts';
 import {BANG, HASH} from './bytes.ts';
 import type {LogContents, LogFinding, LogReader, ReadOptions} from './contents.ts';
-import {isBlank, textOf} from './delimited.ts';
+import {type Delimiter, isBlank, textOf} from './delimited.ts';
 import {LineCutter} from './delimited-lines.ts';
 import {TableAccount} from './table-account.ts';
 import {
@@ -133,8 +133,13 @@ class TableReader implements LogReader {
       account.ignore('header');
       return;
     }
-    if (table === undefined || isComment(bytes, first, to, table.layout)) {
+    if (isComment(bytes, first, to, table?.layout.delimiter ?? null)) {
       account.ignore('comment');
+      return;
+    }
+    // Without a single row, what is neither blank nor a comment is a header.
+    if (table === undefined) {
+      account.ignore('header');
       return;
     }
     const reason = table.rows.take(bytes, from, to, lineNumber);
@@ -214,7 +219,7 @@ interface OpenTable {
   readonly findings: readonly LogFinding[];
 }
 
-/** @returns undefined when there is nothing but blank lines and comments */
+/** @returns undefined when there is nothing but blank lines, comments and a header */
 function openTable(
   head: readonly KeptLine[],
   options: ReadOptions,
@@ -227,7 +232,7 @@ function openTable(
     if (!tooLong && text.trim() !== '') lines.push({text, lineNumber: k + 1});
   });
   const shape = tableShape(lines, options.name);
-  if (shape === undefined) return undefined;
+  if (shape === undefined || shape.samples.length === 0) return undefined;
   const columns = namedColumns(shape, options.table, options.name);
   const chosen = timeColumns(columns, options.table, options.date !== null);
   const position = positionColumns(columns);
@@ -236,7 +241,7 @@ function openTable(
   const layout: TableLayout = {
     delimiter: shape.delimiter,
     decimalMark: shape.decimalMark,
-    fields: shape.fields,
+    fields: columns.names.length,
     time: chosen.time,
     timeScale: chosen.timeScale,
     position,
@@ -322,11 +327,16 @@ function findingsOf(table: OpenTable, firstGpsSeconds: number): LogFinding[] {
   return findings;
 }
 
-function isComment(bytes: Uint8Array, first: number, to: number, layout: TableLayout): boolean {
+function isComment(
+  bytes: Uint8Array,
+  first: number,
+  to: number,
+  delimiter: Delimiter | null,
+): boolean {
   const byte = bytes[first];
   if (byte === HASH || byte === PERCENT || byte === BANG) return true;
   if (byte === SLASH) return first + 1 < to && bytes[first + 1] === SLASH;
-  return byte === SEMICOLON && layout.delimiter !== 'semicolon';
+  return byte === SEMICOLON && delimiter !== 'semicolon';
 }
 
 /** Files that were put one behind the other repeat their header. */
