@@ -164,6 +164,16 @@ function stepValues(step: Step) {
   };
 }
 
+/** Where the uncertainty of the mean stands in the result. */
+const UNCERTAINTY = [
+  'standardUncertaintyM',
+  'uncertainty95M',
+  'ellipse95',
+  'covarianceEnuM2',
+  'independentLooks',
+  'correlationTimeS',
+].flatMap((name) => [`position.${name}`, `segments[].position.${name}`]);
+
 /** What limits the interval of the mean: each reason once, with the axes that it touches. */
 export function noticeSession(sessions: readonly Session[], notices: NoticeList): void {
   const axesOf = new Map<string, Set<string>>();
@@ -173,7 +183,7 @@ export function noticeSession(sessions: readonly Session[], notices: NoticeList)
     axesOf.set(code, known);
   }
   for (const [code, axes] of axesOf) {
-    notices.add('caution', code, ['position.uncertainty95M'], {axes: [...axes].join(', ')});
+    notices.add('caution', code, UNCERTAINTY, {axes: [...axes].join(', ')});
   }
 }
 

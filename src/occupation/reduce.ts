@@ -38,7 +38,7 @@ import {scatterAbout} from './scatter.ts';
 import {type ScreenOutcome, screenByRules} from './screen.ts';
 import {screenNeighbours} from './screen-neighbours.ts';
 import {screeningOf} from './screening-of-record.ts';
-import {analyseSession, type Session} from './session.ts';
+import {type Session, sessionOf} from './session.ts';
 import {sheetItems} from './sheet-items.ts';
 import {movementLimit, stabilityOf} from './stability.ts';
 import {statedContributions} from './stated-contributions.ts';
@@ -232,7 +232,7 @@ function session(
   indices: Uint32Array,
   account: EpochAccount,
 ): Session {
-  return analyseSession(log.epochs.gpsSeconds, columns, indices, account.resolutionM);
+  return sessionOf(log.epochs.gpsSeconds, columns, indices, account.resolutionM);
 }
 
 /** The stretches between material steps; the whole record when there is none. */

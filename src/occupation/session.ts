@@ -1,6 +1,11 @@
-import {moments} from '../statistics/moments.ts';
-import type {LocalColumns} from './local-columns.ts';
-import {taken} from './local-columns.ts';
+import {r95} from '../statistics/accuracy-measures.ts';
+import {
+  analyseSession,
+  type ComponentAnalysis,
+  type Movement,
+  type SessionAnalysis,
+} from '../statistics/analyse-session.ts';
+import {type LocalColumns, taken} from './local-columns.ts';
 import type {PerAxis} from './result.ts';
 
 /** A step that the statistics find, before anybody asks whether it matters. */
@@ -24,42 +29,128 @@ export interface Session {
   readonly toGpsSeconds: number;
   /** Mean of the epochs about the origin of the columns. */
   readonly meanM: PerAxis<number | null>;
+  /** By scatter and correlation alone. */
   readonly standardUncertaintyM: PerAxis<number | null> | null;
+  /** The same with the movement that was found taken out: the noise alone. */
+  readonly quietUncertaintyM: PerAxis<number | null> | null;
   /** Correlation of the errors of the east and north means. */
   readonly eastNorthCorrelation: number;
+  /** What the digits of the log can hide after averaging; null where they are fine. */
   readonly quantisationM: PerAxis<number | null> | null;
   readonly independentLooks: PerAxis<number | null> | null;
   readonly correlationTimeS: PerAxis<number | null> | null;
-  readonly movement: 'none' | 'step' | 'drift' | 'settling' | 'cannot tell';
+  readonly movement: Movement;
   readonly drift: PerAxis<FoundDrift | null>;
   readonly steps: readonly FoundStep[];
   /** Codes of what limits the statements above, for notices. */
   readonly limits: readonly {readonly code: string; readonly axes: readonly string[]}[];
+  /** Time for a 95 % horizontal radius of the session's own; null when it cannot be told. */
+  readonly timeForRadius: (radiusM: number) => {aboutS: number; allowS: number} | null;
 }
 
-export function analyseSession(
+const AXES = ['east', 'north', 'up'] as const;
+/** Half-width of 95 % of a normal distribution in standard deviations. */
+const NORMAL_95 = 1.959963984540054;
+/** Rounding that could hide less than this part of the session's own figure is not worth a row. */
+const NOTICEABLE_SHARE = 0.01;
+
+/** Averages one stretch and asks the statistics everything about it. */
+export function sessionOf(
   gpsSeconds: Float64Array,
   columns: LocalColumns,
   indices: Uint32Array,
-  _resolutionM: PerAxis<number | null>,
+  resolutionM: PerAxis<number | null>,
 ): Session {
-  const mean = (column: Float64Array) => {
-    const value = moments(taken(column, indices))?.mean;
-    return value === undefined || Number.isNaN(value) ? null : value;
-  };
+  const times = taken(gpsSeconds, indices);
+  const firstS = times[0]!;
+  const axes = columns.heightKind === 'none' ? AXES.slice(0, 2) : AXES;
+  const analysis = analyseSession({
+    elapsedS: times.map((time) => time - firstS),
+    components: axes.map((axis) => taken(columns[`${axis}M`], indices)),
+    resolutions: axes.map((axis) => resolutionM[axis] ?? 0),
+  });
+  const {components} = analysis;
+  const told = components.some(({halfWidth95}) => halfWidth95 !== undefined);
   return {
     indices,
-    fromGpsSeconds: gpsSeconds[indices[0]!]!,
-    toGpsSeconds: gpsSeconds[indices[indices.length - 1]!]!,
-    meanM: {east: mean(columns.eastM), north: mean(columns.northM), up: mean(columns.upM)},
-    standardUncertaintyM: null,
-    eastNorthCorrelation: 0,
-    quantisationM: null,
-    independentLooks: null,
-    correlationTimeS: null,
-    movement: 'cannot tell',
-    drift: {east: null, north: null, up: null},
-    steps: [],
-    limits: [],
+    fromGpsSeconds: firstS,
+    toGpsSeconds: times[times.length - 1]!,
+    meanM: perAxis(components, ({mean}) => mean),
+    standardUncertaintyM: told ? perAxis(components, sigma('halfWidth95')) : null,
+    quietUncertaintyM: told ? perAxis(components, sigma('quietHalfWidth95')) : null,
+    eastNorthCorrelation: analysis.planCorrelation,
+    quantisationM: quantisation(components),
+    independentLooks: told ? perAxis(components, (one) => one.independentLooks) : null,
+    correlationTimeS: told ? perAxis(components, (one) => one.correlationTimeS) : null,
+    movement: analysis.movement,
+    drift: perAxis(components, foundDrift),
+    steps: analysis.steps.map(({elapsedS, interval95S: [from, to], sizes}) => ({
+      gpsSeconds: firstS + elapsedS,
+      interval95GpsSeconds: [firstS + from, firstS + to],
+      sizeM: {east: sizes[0] ?? null, north: sizes[1] ?? null, up: sizes[2] ?? null},
+    })),
+    limits: analysis.limits.map(({code, components: concerned}) => ({
+      code,
+      axes: concerned.map((component) => AXES[component]!),
+    })),
+    timeForRadius: (radiusM) => timeForRadius(analysis, radiusM),
+  };
+}
+
+function perAxis<T>(
+  components: readonly ComponentAnalysis[],
+  value: (component: ComponentAnalysis) => T | undefined,
+): PerAxis<T | null> {
+  const at = (component: ComponentAnalysis | undefined) =>
+    component === undefined ? null : (value(component) ?? null);
+  return {east: at(components[0]), north: at(components[1]), up: at(components[2])};
+}
+
+function sigma(name: 'halfWidth95' | 'quietHalfWidth95') {
+  return (component: ComponentAnalysis) => {
+    const halfWidth = component[name];
+    return halfWidth === undefined ? undefined : halfWidth / NORMAL_95;
+  };
+}
+
+function quantisation(components: readonly ComponentAnalysis[]): PerAxis<number | null> | null {
+  const noticeable = components.some(
+    ({quantisation95, halfWidth95}) => quantisation95 > NOTICEABLE_SHARE * (halfWidth95 ?? 0),
+  );
+  return noticeable ? perAxis(components, (one) => one.quantisation95 / NORMAL_95) : null;
+}
+
+function foundDrift({drift}: ComponentAnalysis): FoundDrift | undefined {
+  if (drift === undefined) return undefined;
+  const {perS, halfWidth95PerS, detectablePerS} = drift;
+  return {
+    rateMPerS: perS,
+    interval95MPerS: [perS - halfWidth95PerS, perS + halfWidth95PerS],
+    detectableMPerS: detectablePerS,
+  };
+}
+
+/** Both plan axes shrink alike, so the radius asks the same part of each. */
+function timeForRadius(
+  analysis: SessionAnalysis,
+  radiusM: number,
+): {aboutS: number; allowS: number} | null {
+  const [east, north] = analysis.components;
+  if (east?.halfWidth95 === undefined || north?.halfWidth95 === undefined) return null;
+  const [sigmaEast, sigmaNorth] = [east.halfWidth95 / NORMAL_95, north.halfWidth95 / NORMAL_95];
+  const now = r95({
+    eastEast: sigmaEast ** 2,
+    northNorth: sigmaNorth ** 2,
+    eastNorth: analysis.planCorrelation * sigmaEast * sigmaNorth,
+  });
+  const part = radiusM / now;
+  const times = [east, north].map(({halfWidth95}, component) =>
+    analysis.requiredTime(component, part * halfWidth95!),
+  );
+  const known = times.filter((time) => time !== undefined);
+  if (known.length < times.length) return null;
+  return {
+    aboutS: Math.max(...known.map(({aboutS}) => aboutS)),
+    allowS: Math.max(...known.map(({allowS}) => allowS)),
   };
 }

@@ -14,7 +14,8 @@ export interface MovementLimit {
 
 /**
  * How much movement matters: what the user says, else twice the session's own 95 % uncertainty of
- * the mean, or a third of the tolerance where that is smaller.
+ * the mean, or a third of the tolerance where that is smaller. The uncertainty is that of the noise
+ * alone: a jump would otherwise enlarge the very limit that it is held against.
  */
 export function movementLimit(
   session: Session,
@@ -22,7 +23,7 @@ export function movementLimit(
   asked: readonly Asked[],
 ): MovementLimit {
   if (stated !== null) return {horizontal: stated, up: stated};
-  const sigma = session.standardUncertaintyM;
+  const sigma = session.quietUncertaintyM;
   const widest = (values: readonly (number | null | undefined)[]) => {
     const known = values.filter((value) => value !== null && value !== undefined);
     return known.length === 0 ? null : 2 * NORMAL_95 * Math.max(...known);

@@ -2,6 +2,7 @@ import {
   compassWord,
   counted,
   formatClock,
+  formatCount,
   formatDuration,
   formatLength,
   formatPercent,
@@ -41,18 +42,19 @@ export interface MovementFacts {
   }[];
   /** The largest total over the record that counts as movement, if any. */
   readonly driftM: number | null;
-  /** The slowest steady drift that would have been seen, metres per hour. */
-  readonly detectableMPerHour: number | null;
+}
+
+/** What "no drift" is worth: the slowest steady drift that would have been seen. */
+export function driftPower(detectableMPerHour: number | null): string {
+  return detectableMPerHour === null
+    ? ''
+    : `A steady drift of ${formatLength(detectableMPerHour)} per hour would have been seen. `;
 }
 
 /** Under the figure over time. */
 export function movementFinding(facts: MovementFacts): string {
   const material = facts.steps.filter((step) => step.material);
   const small = facts.steps.filter((step) => !step.material);
-  const power =
-    facts.detectableMPerHour === null
-      ? ''
-      : ` A steady drift of ${formatLength(facts.detectableMPerHour)} per hour would have been seen.`;
   switch (facts.verdict) {
     case 'stepped': {
       const [first] = material;
@@ -70,18 +72,22 @@ export function movementFinding(facts: MovementFacts): string {
       return 'The receiver travels: these are not positions of one point.';
     case 'still':
       return small.length === 0
-        ? `No jump and no drift is found.${power}`
-        : `No movement that matters; ${counted(small.length, 'small jump')} of at most ${formatLength(Math.max(...small.map(({sizeM}) => sizeM)))} found.${power}`;
+        ? 'No jump and no drift is found.'
+        : `No movement that matters; ${counted(small.length, 'small jump')} of at most ${formatLength(Math.max(...small.map(({sizeM}) => sizeM)))} found.`;
     default:
       return 'Whether the point moved cannot be told from this record.';
   }
 }
+
+/** No log prints steps as fine as this. */
+const SAME_PLACE_M = 1e-6;
 
 /** Under the histograms: the radius that holds 95 % against what a normal distribution says. */
 export function scatterFinding(observedM: number | null, normalM: number | null): string {
   if (observedM === null || normalM === null || !(normalM > 0)) {
     return 'How often each offset occurs.';
   }
+  if (observedM < SAME_PLACE_M) return 'All epochs have one and the same position.';
   const ratio = observedM / normalM;
   const shape =
     ratio > 1.12
@@ -118,8 +124,7 @@ export function skyFinding(
   blockedDeg: {readonly azimuthDeg: number; readonly elevationDeg: number} | null,
 ): string {
   const total = systems.reduce((sum, {satellites}) => sum + satellites, 0);
-  const parts = systems.map(({name, satellites}) => `${name} ${satellites}`);
-  const seen = `${counted(total, 'satellite')} seen: ${joined(parts)}`;
+  const seen = `${counted(total, 'satellite')} of ${counted(systems.length, 'system')} seen`;
   if (blockedDeg === null) return `${seen}.`;
   return `${seen}; nothing heard below ${Math.round(blockedDeg.elevationDeg)}° toward the ${compassWord(blockedDeg.azimuthDeg)}.`;
 }
@@ -164,5 +169,5 @@ export function offsetAgainstUncertainty(distanceM: number, radius95M: number): 
 export function epochsUsedOf(used: number, read: number): string {
   if (read === 0) return 'no epoch';
   if (used === read) return `all ${counted(read, 'epoch')}`;
-  return `${used} of ${counted(read, 'epoch')} (${formatPercent(used / read)})`;
+  return `${formatCount(used)} of ${counted(read, 'epoch')} (${formatPercent(used / read)})`;
 }

@@ -14,6 +14,20 @@ import {type NoticeValues, numberIn, type Sentence, textIn} from './sentence.ts'
  * never "the tripod moved".
  */
 const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
+  'too-short': () =>
+    'The record is too short to see errors that change more slowly than it lasts, so no 95 % figure is given: only the scatter of single epochs. Log at least a few minutes.',
+  'few-cells': () =>
+    'Too few epochs are spread over the record to tell how sure its mean is. Log more often or longer.',
+  'mostly-gaps': () =>
+    'More than half of the record is missing: whether it sat still cannot be told from what is left.',
+  'no-spread': (v) =>
+    `The values of ${textIn(v, 'axes')} never change: held, frozen or coarser than their noise. The mean is known no better than half a step of the digits.`,
+  'resolution-dominates': (v) =>
+    `The digits of ${textIn(v, 'axes')} are coarser than the noise, so averaging cannot look between them, and movement is not tested there. Log more decimals.`,
+  'slow-errors': (v) =>
+    `The record lasts less than about six times as long as its errors do (${textIn(v, 'axes')}): the 95 % figure leans on an assumed model of the noise. Only a second occupation, hours later, really checks it.`,
+  'few-looks': (v) =>
+    `The record is worth fewer than four independent looks (${textIn(v, 'axes')}): its mean is little surer than a single look.`,
   travelling: () =>
     'The receiver was travelling during this record, so no mean is given. `stillmark contents` lists the periods during which it stood; take one with --stand N.',
   'no-usable-epoch': (v) =>

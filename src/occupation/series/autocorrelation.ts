@@ -15,6 +15,8 @@ const LEAST_EPOCHS = 40;
 const PRODUCTS = 250_000;
 /** A record with more holes than this many empty slots per epoch is not put on a grid. */
 const SLOTS_PER_EPOCH = 8;
+/** Equal positions scatter by rounding only. */
+const LEAST_DEVIATION_M = 1e-9;
 
 /**
  * Method: epochs on a regular grid of the interval, holes left out; at each lag the mean product
@@ -31,7 +33,7 @@ export function autocorrelationOf(columns: UsedColumns, intervalS: number | null
   const axis = (valuesM: Float64Array) => {
     const grid = new Float64Array(slots).fill(Number.NaN);
     const {mean, deviation} = meanAndDeviation(valuesM);
-    if (!(deviation > 0)) return null;
+    if (!(deviation > LEAST_DEVIATION_M)) return null;
     for (let i = 0; i < count; i++) {
       const slot = Math.round((gpsSeconds[i]! - gpsSeconds[0]!) / intervalS);
       grid[slot] = (valuesM[i]! - mean) / deviation;
