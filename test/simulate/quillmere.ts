@@ -47,7 +47,7 @@ export const HARBOUR_NMEA: NmeaOptions = {
   startS: 0,
   minuteDecimals: 8,
   heightDecimals: 4,
-  separationDecimals: 1,
+  separationDecimals: 3,
   sentences: [
     ['GGA', 1],
     ['RMC', 1],
