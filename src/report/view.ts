@@ -20,9 +20,12 @@ import {
   budgetTable,
   inputViews,
   lineTable,
+  looksTable,
   scatterTable,
   screeningTable,
   settingsTable,
+  stepsTable,
+  systemsTable,
 } from './view/tables.ts';
 import {headlineNumber, verdictView} from './view/verdict.ts';
 
@@ -58,6 +61,9 @@ export async function pageView(context: ReportContext, renderer: Renderer, css: 
     notices: noticeViews(context),
     causes,
     scatter: scatterTable(context),
+    looks: looksTable(context),
+    steps: stepsTable(context),
+    systems: systemsTable(context),
     budget: budgetTable(context),
     screening: screeningTable(context),
     lines: lineTable(context),
@@ -131,9 +137,12 @@ interface SectionHead {
   readonly title: string;
 }
 
-/** Line breaks stay, indentation goes. */
+/** Line breaks stay; indentation and comments go. */
 function squeezed(css: string): string {
-  return css.replace(/\n\s+/g, '\n');
+  return css
+    .replace(/\/\*.*?\*\//gs, '')
+    .replace(/\n\s+/g, '\n')
+    .trim();
 }
 
 /** Numbered, so that a reviewer can point at them. */

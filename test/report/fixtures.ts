@@ -488,7 +488,7 @@ function offsets(series: ChartSeries, heights: boolean): PerAxis<number | null> 
 }
 
 function positionOf(spec: SampleSpec, series: ChartSeries): Position {
-  const known = series.spanS >= 60;
+  const known = series.spanS >= 59 && spec.whiteM + spec.slowM > 0;
   const halfM = halfWidthM(spec, Math.max(series.spanS, 1));
   const looks = (spec.whiteM ** 2 + spec.slowM ** 2) / Math.max(1e-12, (halfM / 1.96) ** 2);
   const perAxis = (value: number, up: number) => ({

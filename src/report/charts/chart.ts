@@ -44,7 +44,6 @@ export const COLOUR = {
   estimate: '#c84a00',
   flagged: '#8a2f7a',
   third: '#00795a',
-  hole: '#d5dae1',
 } as const;
 
 /** Density from few to many. */
@@ -95,7 +94,7 @@ export function panelName(text: string): Spec {
 export function pixelPaths(paths: readonly Spec[], mark: Spec, encoding: Spec = {}): Spec {
   return {
     data: {values: paths},
-    mark: {type: 'point', size: 4, x: 0, y: 0, ...mark},
+    mark: {type: 'point', size: 4, x: 0, y: 0, opacity: 1, ...mark},
     encoding: {shape: {field: 'path', type: 'nominal', scale: null}, ...encoding},
   };
 }

@@ -52,7 +52,7 @@ function panel(
     type: 'quantitative',
     title: null,
     scale: {domain: [fromM * unit.perM, toM * unit.perM], nice: false, zero: false},
-    axis: {...tickAxis(roundTicks(fromM * unit.perM, toM * unit.perM, 5)), grid: false},
+    axis: {...tickAxis(roundTicks(fromM * unit.perM, toM * unit.perM, 6)), grid: false},
   };
   const y = {
     type: 'quantitative',

@@ -30,7 +30,7 @@ export interface OverTime {
 }
 
 const SIZES = {
-  wide: {plotPx: 640, panelsPx: 330, leastPanelPx: 54, gapPx: 34, ticks: 9, left: 52},
+  wide: {plotPx: 640, panelsPx: 310, leastPanelPx: 54, gapPx: 32, ticks: 9, left: 52},
   narrow: {plotPx: 284, panelsPx: 330, leastPanelPx: 60, gapPx: 34, ticks: 4, left: 50},
 };
 const STRIP_PX = 14;
@@ -141,7 +141,7 @@ function panelTitle({axis, originM}: AxisFrame, unit: LengthUnit, reference: str
   const from = axis === 'up' ? 'from' : 'of';
   if (originM === 0) return `${NAMES[axis]} ${from} ${reference}, ${unit.name}`;
   const away = proseNumber(originM * unit.perM, offsetDecimals(originM, unit), true);
-  return `${NAMES[axis]} ${from} its mean, ${unit.name} (mean: ${away} from ${reference})`;
+  return `${NAMES[axis]} ${from} its mean, ${unit.name} (${away} from ${reference})`;
 }
 
 interface TimeAxis {
@@ -211,7 +211,7 @@ function panelSpec(
 
 function loneEpoch(x: Spec, y: Spec): Spec {
   return {
-    mark: {type: 'point', filled: true, size: 30, color: COLOUR.data},
+    mark: {type: 'point', filled: true, opacity: 1, size: 30, color: COLOUR.data},
     encoding: {x, y: {...y, field: 'median'}},
   };
 }
@@ -340,7 +340,7 @@ function stripSpec(input: OverTimeInput, time: TimeAxis): Spec {
   const leftOut = bins.leftOut.map(({startS, share}) => ({
     from: startS,
     to: startS + Math.max(bins.binS, leastS),
-    top: Math.round(STRIP_PX * (1 - Math.max(0.3, share)) * 10) / 10,
+    top: Math.round(STRIP_PX * (1 - Math.max(0.16, share)) * 10) / 10,
   }));
   const heading = input.narrow ? 'Left out, and gaps' : 'Epochs left out, and gaps';
   return {

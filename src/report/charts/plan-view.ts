@@ -12,6 +12,7 @@ export interface PlanViewInput {
   readonly epochEllipse: Ellipse | null;
   /** null when the reference is not a mark. */
   readonly mark: {readonly toleranceM: number | null} | null;
+  readonly referenceName: string;
   readonly units: UnitChoice;
 }
 
@@ -50,7 +51,7 @@ export function planView(input: PlanViewInput): PlanView {
   const unit = unitFor(largest, input.units);
   const classFloors = densityFloors(cells.count);
   const layers: Spec[] = [
-    frameLayer(frame, unit, mark === null ? 'reference' : 'mark'),
+    frameLayer(frame, unit, input.referenceName),
     pixelPaths(
       cellPaths(cells, classFloors, toPx, pxPerM),
       {filled: true, clip: true},

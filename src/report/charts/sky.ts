@@ -6,17 +6,15 @@ const CENTRE_PX = PLOT_PX / 2;
 const RADIUS_PX = 116;
 const LABEL_ROOM_PX = 15;
 
-export interface SkyChart {
-  readonly chart: Chart;
-  /** Signal strengths at which the shades begin, in dB-Hz; the first shade holds all below. */
-  readonly floorsDbHz: readonly number[];
-}
-
-/** Shades from weak to strong. */
+/** Signal strengths at which the shades of cells begin, in dB-Hz; the first holds all below. */
 export const STRENGTH_FLOORS_DB_HZ = [0, 30, 35, 40, 45, 50] as const;
 
+/** Signal strengths at which the wider paths begin, and the widths. */
+export const TRACK_FLOORS_DB_HZ = [0, 35, 40, 45] as const;
+const TRACK_WIDTHS_PX = [1, 2, 3.2, 4.6] as const;
+
 /** The sky seen from the antenna: zenith in the middle, horizon at the rim, north up. */
-export function skyChart(sky: Sky): SkyChart {
+export function skyChart(sky: Sky): Chart {
   const layer: Spec[] = [
     ...(sky.kind === 'cells' ? cellLayers(sky) : []),
     ringLayer(),
@@ -24,13 +22,10 @@ export function skyChart(sky: Sky): SkyChart {
     ...compassLayers(),
   ];
   return {
-    chart: {
-      spec: {width: PLOT_PX, height: PLOT_PX, layer},
-      widthPx: PLOT_PX,
-      heightPx: PLOT_PX,
-      padding: {left: 38, right: 38, top: 4, bottom: 4},
-    },
-    floorsDbHz: STRENGTH_FLOORS_DB_HZ,
+    spec: {width: PLOT_PX, height: PLOT_PX, layer},
+    widthPx: PLOT_PX,
+    heightPx: PLOT_PX,
+    padding: {left: 38, right: 38, top: 4, bottom: 4},
   };
 }
 
@@ -85,63 +80,82 @@ function compassLayers(): Spec[] {
   ];
 }
 
-/** Paths of satellites in the shade of their strength, and their names where they end. */
+/** Paths of satellites, wider where the signal was stronger, and their names where they end. */
 function trackLayers({tracks}: SkyTracks): Spec[] {
-  const paths = RAMP.map(() => '');
+  const paths = TRACK_WIDTHS_PX.map(() => '');
   let unheard = '';
   for (const track of tracks) {
-    for (let i = 0; i < track.azimuthDeg.length; i++) {
-      const strength = track.carrierToNoiseDbHz[i] ?? null;
-      const piece = pieceOf(track, i);
-      if (strength === null) unheard += piece;
-      else paths[shadeOf(strength)] += piece;
-    }
+    const strength = medianOf(track.carrierToNoiseDbHz);
+    const path = track.azimuthDeg.map((_, i) => pieceOf(track, i)).join('');
+    if (strength === null) unheard += path;
+    else paths[widthClass(strength)] += path;
   }
-  const drawn = paths
-    .map((path, k) => ({path, stroke: RAMP[Math.max(1, k)]}))
-    .filter(({path}) => path !== '');
+  const line = {filled: false, fill: null, strokeCap: 'round'};
   return [
     ...(unheard === ''
       ? []
       : [
           pixelPaths([{path: unheard}], {
-            filled: false,
-            fill: null,
+            ...line,
             stroke: COLOUR.axis,
-            strokeWidth: 1,
-            strokeDash: [2, 2],
+            strokeWidth: 1.2,
+            strokeDash: [1, 3],
           }),
         ]),
-    pixelPaths(
-      drawn,
-      {filled: false, fill: null, strokeWidth: 2.6, strokeCap: 'round'},
-      {stroke: {field: 'stroke', type: 'nominal', scale: null}},
+    ...paths.flatMap((path, k) =>
+      path === ''
+        ? []
+        : [
+            pixelPaths([{path}], {
+              ...line,
+              stroke: COLOUR.data,
+              strokeWidth: TRACK_WIDTHS_PX[k],
+            }),
+          ],
     ),
     pixelTexts(trackNames(tracks), {baseline: 'middle', dy: -8}),
   ];
 }
 
-/** From this point to the next of its track; a lone point is a dot. */
+function widthClass(strengthDbHz: number): number {
+  let found = 0;
+  TRACK_FLOORS_DB_HZ.forEach((floor, k) => {
+    if (strengthDbHz >= floor) found = k;
+  });
+  return found;
+}
+
+/** Median of the strengths heard; null when the satellite was never heard. */
+function medianOf(values: readonly (number | null)[]): number | null {
+  const heard = values.filter((value) => value !== null).sort((a, b) => a - b);
+  return heard[Math.floor(heard.length / 2)] ?? null;
+}
+
+/** The step from the point before to this one; the first point of a path is a dot. */
 function pieceOf(track: SkyTrack, i: number): string {
   const [x, y] = place(track.azimuthDeg[i]!, track.elevationDeg[i]!);
-  if (track.azimuthDeg.length === 1) return `M${px(x - 1)},${y}h2`;
-  if (i + 1 >= track.azimuthDeg.length) return '';
-  const [nextX, nextY] = place(track.azimuthDeg[i + 1]!, track.elevationDeg[i + 1]!);
+  const start = `M${px(x - 0.3)},${y}h.6`;
+  if (i === 0) return start;
+  const [fromX, fromY] = place(track.azimuthDeg[i - 1]!, track.elevationDeg[i - 1]!);
   // Neighbouring samples lie close together; a leap means that the satellite was lost between.
-  if (Math.hypot(nextX - x, nextY - y) > RADIUS_PX / 4) return '';
-  return `M${x},${y}L${nextX},${nextY}`;
+  return Math.hypot(x - fromX, y - fromY) > RADIUS_PX / 4 ? start : `L${x},${y}`;
 }
 
 function trackNames(tracks: readonly SkyTrack[]) {
+  // The names of the rings are taken.
   const placed: {x: number; y: number; text: string}[] = [];
+  const rings = [RADIUS_PX / 3, (RADIUS_PX * 2) / 3].map((r) => ({
+    x: CENTRE_PX + 12,
+    y: CENTRE_PX - r + 2,
+  }));
   for (const track of tracks) {
     const last = track.azimuthDeg.length - 1;
     if (last < 0) continue;
     const [x, y] = place(track.azimuthDeg[last]!, track.elevationDeg[last]!);
-    const crowded = placed.some(
+    const crowded = [...placed, ...rings].some(
       (other) => Math.abs(other.x - x) < 2 * LABEL_ROOM_PX && Math.abs(other.y - y) < LABEL_ROOM_PX,
     );
-    const onCompass = Math.abs(x - CENTRE_PX) < 24 || Math.abs(y - CENTRE_PX) < 14;
+    const onCompass = Math.abs(x - CENTRE_PX) < 30 || Math.abs(y - CENTRE_PX) < 22;
     if (!crowded && !(onCompass && Math.hypot(x - CENTRE_PX, y - CENTRE_PX) > RADIUS_PX * 0.8)) {
       placed.push({x, y, text: track.label});
     }

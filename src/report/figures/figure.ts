@@ -16,7 +16,8 @@ export type KeyShape =
   | 'block-data'
   | 'block-estimate'
   | 'dash-third'
-  | `ramp-${number}`;
+  | `ramp-${number}`
+  | `width-${number}`;
 
 export interface LegendKey {
   readonly shape: KeyShape;

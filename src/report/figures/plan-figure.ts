@@ -2,7 +2,13 @@ import {planFinding} from '../../wording/findings.ts';
 import {counted, formatGivenLength, formatLength} from '../../wording/numbers.ts';
 import {RAMP} from '../charts/chart.ts';
 import {planView, shadesFor} from '../charts/plan-view.ts';
-import {hasMark, horizontalToleranceM, type ReportContext, singlePosition} from '../context.ts';
+import {
+  hasMark,
+  horizontalToleranceM,
+  type ReportContext,
+  referenceName,
+  singlePosition,
+} from '../context.ts';
 import {absent, type FigureOrReason, type LegendKey} from './figure.ts';
 
 const TITLE = 'Plan view of the single epochs';
@@ -22,6 +28,7 @@ export function planFigure(context: ReportContext): FigureOrReason {
     meanEllipse: position?.ellipse95 ?? null,
     epochEllipse: position === null ? null : scaledTo95(scatter?.observed.ellipse ?? null),
     mark: hasMark(context) ? {toleranceM} : null,
+    referenceName: referenceName(context),
     units: options.units,
   });
   const legend: LegendKey[] = [...densityKeys(view.classFloors)];

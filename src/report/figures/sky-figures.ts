@@ -2,9 +2,8 @@ import type {Setting} from '../../occupation/result.ts';
 import type {Sky} from '../../occupation/series/sky.ts';
 import {signalFinding, skyFinding} from '../../wording/findings.ts';
 import {formatDuration} from '../../wording/numbers.ts';
-import {RAMP} from '../charts/chart.ts';
 import {signalPanels} from '../charts/signal.ts';
-import {STRENGTH_FLOORS_DB_HZ, skyChart} from '../charts/sky.ts';
+import {STRENGTH_FLOORS_DB_HZ, skyChart, TRACK_FLOORS_DB_HZ} from '../charts/sky.ts';
 import type {ReportContext} from '../context.ts';
 import {absent, type FigureOrReason, type LegendKey} from './figure.ts';
 
@@ -21,17 +20,11 @@ export function skyFigure({series, result}: ReportContext): FigureOrReason {
       table ? 'a table of positions names no satellites' : 'the log has no GSV sentences',
     );
   }
-  const {chart} = skyChart(series.sky);
+  const chart = skyChart(series.sky);
   const tracks = series.sky.kind === 'tracks';
-  const legend: LegendKey[] = STRENGTH_FLOORS_DB_HZ.map((floor, k) => ({
-    shape: `ramp-${tracks ? Math.max(1, k) : k}` as const,
-    text:
-      k === 0
-        ? `under ${STRENGTH_FLOORS_DB_HZ[1]}`
-        : k === RAMP.length - 1
-          ? `${floor}+ dB-Hz`
-          : `${floor}`,
-  }));
+  const legend = tracks
+    ? strengthKeys(TRACK_FLOORS_DB_HZ, 'width')
+    : strengthKeys(STRENGTH_FLOORS_DB_HZ, 'ramp');
   if (!tracks) legend.push({shape: 'line-estimate', text: 'lowest signal heard'});
   return {
     kind: 'figure',
@@ -39,13 +32,21 @@ export function skyFigure({series, result}: ReportContext): FigureOrReason {
     title: SKY,
     finding: skyFinding(series.sky.systems, blockedToward(series.sky)),
     note: tracks
-      ? 'Zenith in the middle, horizon at the rim. Paths darken with signal strength; names stand at their ends.'
+      ? 'Zenith in the middle, horizon at the rim. Paths are wider where the signal was stronger (median of the path), dotted where none was heard; names stand at their ends.'
       : 'Zenith in the middle, horizon at the rim. Cells show the median signal strength.',
     wide: chart,
     narrow: null,
     legend,
     readout: [],
   };
+}
+
+function strengthKeys(floors: readonly number[], kind: 'width' | 'ramp'): LegendKey[] {
+  return floors.map((floor, k) => {
+    const last = k === floors.length - 1;
+    const text = k === 0 ? `under ${floors[1]}` : last ? `${floor}+ dB-Hz` : `${floor}+`;
+    return {shape: `${kind}-${k}`, text};
+  });
 }
 
 /** The eighth of the circle with the highest lowest signal, when that is high. */

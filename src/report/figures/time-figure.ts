@@ -1,6 +1,6 @@
 import type {PerAxis, Result} from '../../occupation/result.ts';
 import type {TimeBins} from '../../occupation/series/time-bins.ts';
-import {movementFinding} from '../../wording/findings.ts';
+import {driftPower, movementFinding} from '../../wording/findings.ts';
 import {counted, formatDuration, formatLength, proseNumber} from '../../wording/numbers.ts';
 import {type OverTimeInput, overTime} from '../charts/over-time.ts';
 import {clockAfter, secondsBetween} from '../charts/ticks.ts';
@@ -54,9 +54,8 @@ export function timeFigure(context: ReportContext): FigureOrReason {
         material: step.material,
       })),
       driftM: largestDrift(result, series.spanS),
-      detectableMPerHour: detectable(result),
     }),
-    note: `${capital(wide.unit.name)} are equally tall in all panels. ${bins} Times are UTC. Point at the chart to read it.`,
+    note: `${driftPower(detectable(result))}${capital(wide.unit.name)} are equally tall in all panels. ${bins} Times are UTC. Point at the chart to read it.`,
     wide: wide.chart,
     narrow: narrow.chart,
     legend,

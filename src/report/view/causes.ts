@@ -1,7 +1,7 @@
 import {fixed} from '../../wording/numbers.ts';
 import type {ReportContext} from '../context.ts';
 import {lengthColumn, numberCell, textCell} from './columns.ts';
-import {head, numberHead, row, type Table} from './table.ts';
+import {head, numberHead, row, stacking, type Table} from './table.ts';
 
 /** The suspected causes in the order of how well they fit, with what to do about each. */
 export function causesTable({result, options}: ReportContext): Table | null {
@@ -21,7 +21,7 @@ export function causesTable({result, options}: ReportContext): Table | null {
     numberCell(column.cell(p.up)),
   ];
   const name = column.unit.name;
-  return {
+  return stacking({
     caption: 'The offset measured, and what each suspected cause predicts; the best fit first',
     heads: [
       head('Cause'),
@@ -41,5 +41,5 @@ export function causesTable({result, options}: ReportContext): Table | null {
         ]),
       ),
     ],
-  };
+  });
 }

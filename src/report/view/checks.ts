@@ -169,15 +169,15 @@ function movementChecks({result, series, options}: ReportContext): CheckDraft[] 
   const power = (drift: {detectableMPerHour: number} | null) =>
     drift === null ? '' : `${formatLength(drift.detectableMPerHour)} per hour would have been seen`;
   return [
-    draft(
-      'Largest jump in plan',
-      jump,
-      limits.horizontal,
-      stability.steps.some((step) => step.material),
-      stability.steps.length === 0
-        ? 'none found'
-        : `${counted(stability.steps.length, 'jump')} found`,
-    ),
+    tested && stability.steps.length === 0
+      ? {name: 'Jumps of the positions', tone: 'within' as const, outcome: 'none found'}
+      : draft(
+          'Largest jump in plan',
+          jump,
+          limits.horizontal,
+          stability.steps.some((step) => step.material),
+          `${counted(stability.steps.length, 'jump')} found`,
+        ),
     draft(
       'Drift over the record in plan',
       plan,
@@ -327,10 +327,7 @@ function budgetCheck({budget}: Result): CheckDraft {
   if (missing.length === 0) return {name, tone: 'within', outcome: 'complete'};
   return {
     name,
-    measured: String(missing.length),
-    limit: '0',
-    unit: 'missing',
-    tone: 'look',
+    tone: 'not tested',
     outcome: 'incomplete',
     note: `not included: ${joined(missing.map(({source}) => source))}`,
   };

@@ -1,6 +1,10 @@
 import {fixed} from '../../wording/numbers.ts';
 import {type LengthUnit, offsetDecimals, type UnitChoice, unitFor} from '../units.ts';
 
+/** Beside values this fine, a column stays in millimetres up to lengths that need metres alone. */
+const FINE_M = 0.02;
+const LARGEST_BESIDE_FINE_M = 10;
+
 /** A column of lengths in one unit with the same decimals, written as plain numbers. */
 export interface LengthColumn {
   readonly unit: LengthUnit;
@@ -13,9 +17,15 @@ export function lengthColumn(
   units: UnitChoice,
 ): LengthColumn {
   let largestM = 0;
-  for (const valueM of valuesM) largestM = Math.max(largestM, Math.abs(valueM ?? 0));
-  const unit = unitFor(largestM, units);
-  const decimals = offsetDecimals(largestM, unit);
+  let finestM = Number.POSITIVE_INFINITY;
+  for (const valueM of valuesM) {
+    const sizeM = Math.abs(valueM ?? 0);
+    largestM = Math.max(largestM, sizeM);
+    if (sizeM > 0) finestM = Math.min(finestM, sizeM);
+  }
+  const mixed = finestM < FINE_M && largestM < LARGEST_BESIDE_FINE_M;
+  const unit = unitFor(mixed ? finestM : largestM, units);
+  const decimals = offsetDecimals(mixed ? finestM : largestM, unit);
   return {
     unit,
     cell: (valueM) =>
@@ -27,12 +37,14 @@ export function lengthColumn(
 export interface Cell {
   readonly text: string;
   readonly numeric: boolean;
+  /** The head of its column, where a phone shows the table as a list. */
+  readonly label: string;
 }
 
 export function numberCell(text: string): Cell {
-  return {text, numeric: text !== ''};
+  return {text, numeric: text !== '', label: ''};
 }
 
 export function textCell(text: string): Cell {
-  return {text, numeric: false};
+  return {text, numeric: false, label: ''};
 }

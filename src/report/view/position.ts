@@ -12,7 +12,7 @@ import {
 import {hasMark, type ReportContext, referenceName} from '../context.ts';
 import {largeUnit} from '../units.ts';
 import {lengthColumn, numberCell, textCell} from './columns.ts';
-import {head, numberHead, type Row, row, type Table} from './table.ts';
+import {fixedTable, head, numberHead, type Row, row, stacking, type Table} from './table.ts';
 
 /** Offsets, uncertainty and scatter per axis; null where the record has no one position. */
 export function offsetTable(context: ReportContext): Table | null {
@@ -52,19 +52,19 @@ export function offsetTable(context: ReportContext): Table | null {
     ),
   );
   const name = column.unit.name;
-  return {
+  return fixedTable({
     caption:
       offsets === null
-        ? 'How well the mean is known, and how single epochs scatter'
-        : `Mean minus ${referenceName(context)}, local horizon`,
+        ? 'How well the mean is known; SD: one epoch'
+        : `Mean minus ${referenceName(context)}, local horizon; SD: one epoch`,
     heads: [
       head('Direction'),
       ...(offsets === null ? [] : [numberHead(`Offset ${name}`)]),
       numberHead(`95 % ± ${name}`),
-      numberHead(`SD of one epoch ${name}`),
+      numberHead(`SD ${name}`),
     ],
     rows,
-  };
+  });
 }
 
 const AXIS_NAMES = {east: 'East', north: 'North', up: 'Up'} as const;
@@ -84,11 +84,11 @@ function distance({east, north}: {east: number | null; north: number | null}): n
 export function coordinateTable(context: ReportContext): Table | null {
   const position = context.result.position;
   if (position === null) return null;
-  return {
+  return fixedTable({
     caption: coordinateCaption(position),
     heads: [head('Coordinate'), numberHead('Value'), head('Unit')],
     rows: coordinateRows(position, context),
-  };
+  });
 }
 
 function coordinateCaption({of, frame, frameFrom, coordinateEpoch}: Position): string {
@@ -149,7 +149,7 @@ function angleRow(
   if (angles === 'dms') {
     const decimals = arcSecondDecimals(metreDecimals);
     const text = formatDms(sexagesimal(degrees, decimals), decimals, hemispheres);
-    return row(name, [{text, numeric: false}, textCell('')]);
+    return row(name, [textCell(text), textCell('')]);
   }
   const text = fixed(degrees, degreeDecimals(metreDecimals));
   return row(name, [numberCell(text), textCell(hemispheres === 'NS' ? '° north' : '° east')]);
@@ -164,7 +164,7 @@ export function segmentTable(context: ReportContext): Table | null {
   const ups = segments.map((segment) => segment.position.uncertainty95M?.up);
   const column = lengthColumn([...radii, ...ups], options.units);
   const first = segments[0]?.position;
-  return {
+  return stacking({
     caption: `Each part has its own mean. ${first === undefined ? '' : coordinateCaption(first)}`,
     heads: [
       head('Part, UTC'),
@@ -176,7 +176,7 @@ export function segmentTable(context: ReportContext): Table | null {
       numberHead(`95 % up ${column.unit.name}`),
     ],
     rows: segments.map((segment) => segmentRow(segment, column, context)),
-  };
+  });
 }
 
 function segmentRow(

@@ -5,6 +5,23 @@ export interface Table {
   readonly caption: string;
   readonly heads: readonly Head[];
   readonly rows: readonly Row[];
+  /** Whether a phone shows it as a list. */
+  readonly stacks: boolean;
+}
+
+/** The same table, ready to be shown as a list: every cell knows the head of its column. */
+export function stacking(table: Omit<Table, 'stacks'>): Table {
+  const labels = table.heads.slice(1).map(({text}) => text);
+  const rows = table.rows.map((line) => ({
+    ...line,
+    cells: line.cells.map((cell, i) => ({...cell, label: labels[i] ?? ''})),
+  }));
+  return {...table, rows, stacks: true};
+}
+
+/** A table that keeps its form and scrolls sideways where it does not fit. */
+export function fixedTable(table: Omit<Table, 'stacks'>): Table {
+  return {...table, stacks: false};
 }
 
 export interface Head {

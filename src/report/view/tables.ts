@@ -2,7 +2,7 @@ import type {InputAccount, PerAxis, ScatterMeasures} from '../../occupation/resu
 import {fixed, formatCount, formatUtc} from '../../wording/numbers.ts';
 import type {ReportContext} from '../context.ts';
 import {lengthColumn, numberCell, textCell} from './columns.ts';
-import {head, numberHead, row, type Table} from './table.ts';
+import {fixedTable, head, numberHead, row, stacking, type Table} from './table.ts';
 
 const NOT_INCLUDED = 'not included';
 
@@ -23,7 +23,7 @@ export function budgetTable({result, options}: ReportContext): Table | null {
     numberCell(column.cell(u?.up)),
   ];
   const name = column.unit.name;
-  return {
+  return stacking({
     caption: 'Standard uncertainties; 95 % is about twice as much',
     heads: [
       head('Source'),
@@ -51,59 +51,119 @@ export function budgetTable({result, options}: ReportContext): Table | null {
             ),
           ]),
     ],
-  };
+  });
 }
 
-/** Scatter of single epochs as observed, and as a normal distribution would have it. */
+/** Scatter of single epochs as observed, as a normal distribution would have it, and as believed. */
 export function scatterTable({result, options}: ReportContext): Table | null {
   const {scatter} = result;
   if (scatter === null) return null;
-  const {observed, normalTheory} = scatter.aboutMean;
-  const about = scatter.aboutReference.observed;
-  const measures = [observed, normalTheory, about];
-  const receiver = result.screening.receiverSigmaM;
-  const column = lengthColumn(measures.flatMap(valuesOf), options.units);
-  const line = (name: string, of: (m: ScatterMeasures) => number | null | undefined) =>
-    row(
-      name,
-      measures.map((m) => numberCell(column.cell(of(m)))),
-    );
-  const name = column.unit.name;
-  const rows = [
-    line('Standard deviation, east', (m) => m.standardDeviationM.east),
-    line('Standard deviation, north', (m) => m.standardDeviationM.north),
-    line('Standard deviation, up', (m) => m.standardDeviationM.up),
-    line('Root mean square distance in plan', (m) => m.drmsM),
-    line('Radius that holds 50 %', (m) => m.cepM),
-    line('Radius that holds 95 %', (m) => m.r95M),
-    line('Standard ellipse, long half-axis', (m) => m.ellipse?.semiMajorM),
-    line('Standard ellipse, short half-axis', (m) => m.ellipse?.semiMinorM),
-    row(
-      'Standard ellipse, azimuth of the long axis, degrees',
-      measures.map((m) => numberCell(m.ellipse === null ? '' : fixed(m.ellipse.azimuthDeg, 0))),
-    ),
+  const {aboutMean, aboutReference} = scatter;
+  const lines: [string, ScatterMeasures][] = [
+    ['About the mean, observed', aboutMean.observed],
+    ['About the mean, if normal', aboutMean.normalTheory],
+    ['About the reference, observed', aboutReference.observed],
   ];
+  const receiver = result.screening.receiverSigmaM;
   if (receiver !== null) {
-    for (const axis of ['east', 'north', 'up'] as const) {
-      rows.push(
-        row(`Receiver's own sigma, ${axis}, median`, [
-          numberCell(column.cell(receiver[axis])),
-          textCell(''),
-          textCell(''),
-        ]),
-      );
-    }
+    const none = {drmsM: null, cepM: null, r95M: null, ellipse: null};
+    lines.push(["Receiver's own sigma, median", {standardDeviationM: receiver, ...none}]);
   }
-  return {
-    caption: `Scatter of single epochs, ${name}`,
+  const column = lengthColumn(
+    lines.flatMap(([, measures]) => valuesOf(measures)),
+    options.units,
+  );
+  return stacking({
+    caption: `Scatter of single epochs in ${column.unit.name}. SD: standard deviation; DRMS: root mean square distance in plan; 50 % and 95 %: radii in plan that hold so many; a, b: half-axes of the ellipse of one standard deviation, and the azimuth of a in degrees`,
     heads: [
-      head('Measure'),
-      numberHead('About the mean, observed'),
-      numberHead('About the mean, if normal'),
-      numberHead('About the reference, observed'),
+      head('Scatter'),
+      ...['SD east', 'SD north', 'SD up', 'DRMS', '50 %', '95 %', 'a', 'b', 'azimuth'].map(
+        numberHead,
+      ),
     ],
-    rows: rows.filter(({cells}) => cells.some(({text}) => text !== '')),
-  };
+    rows: lines.map(([name, m]) =>
+      row(name, [
+        ...[m.standardDeviationM.east, m.standardDeviationM.north, m.standardDeviationM.up].map(
+          (valueM) => numberCell(column.cell(valueM)),
+        ),
+        ...[m.drmsM, m.cepM, m.r95M, m.ellipse?.semiMajorM, m.ellipse?.semiMinorM].map((valueM) =>
+          numberCell(column.cell(valueM)),
+        ),
+        numberCell(m.ellipse === null ? '' : fixed(m.ellipse.azimuthDeg, 0)),
+      ]),
+    ),
+  });
+}
+
+/** What the epochs are worth, per direction. */
+export function looksTable({result, options}: ReportContext): Table | null {
+  const position = result.position;
+  if (position?.independentLooks == null || position.correlationTimeS === null) return null;
+  const {independentLooks: looks, correlationTimeS: times, uncertainty95M: u} = position;
+  const column = lengthColumn([u?.east, u?.north, u?.up], options.units);
+  const axes = (['east', 'north', 'up'] as const).filter((axis) => looks[axis] !== null);
+  return fixedTable({
+    caption: 'Independent looks and correlation time of the record',
+    heads: [
+      head('Direction'),
+      numberHead('Looks'),
+      numberHead('Correlation s'),
+      numberHead(`95 % ± ${column.unit.name}`),
+    ],
+    rows: axes.map((axis) =>
+      row(axis === 'up' ? 'Up' : axis === 'east' ? 'East' : 'North', [
+        numberCell(fixed(looks[axis] ?? 0, (looks[axis] ?? 0) < 9.95 ? 1 : 0)),
+        numberCell(times[axis] === null ? '' : fixed(times[axis], times[axis] < 9.95 ? 1 : 0)),
+        numberCell(column.cell(u?.[axis])),
+      ]),
+    ),
+  });
+}
+
+/** Every jump found, whether it matters or not; null when there was none. */
+export function stepsTable({result, options}: ReportContext): Table | null {
+  const {steps} = result.stability;
+  if (steps.length === 0) return null;
+  const column = lengthColumn(
+    steps.flatMap((step) => [step.eastM, step.northM, step.upM]),
+    options.units,
+  );
+  const name = column.unit.name;
+  return stacking({
+    caption: 'Jumps of the positions, after minus before',
+    heads: [
+      head('UTC'),
+      numberHead(`East ${name}`),
+      numberHead(`North ${name}`),
+      numberHead(`Up ${name}`),
+      head('Weight'),
+      head('Beside it in the log'),
+    ],
+    rows: steps.map((step) =>
+      row(formatUtc(step.utc), [
+        numberCell(column.cell(step.eastM)),
+        numberCell(column.cell(step.northM)),
+        numberCell(column.cell(step.upM)),
+        textCell(step.material ? 'matters' : 'below the movement limit'),
+        textCell(step.beside.join(', ')),
+      ]),
+    ),
+  });
+}
+
+/** How many satellites of each system were seen. */
+export function systemsTable({series}: ReportContext): Table | null {
+  if (series.sky === null) return null;
+  const {systems} = series.sky;
+  const total = systems.reduce((sum, {satellites}) => sum + satellites, 0);
+  return fixedTable({
+    caption: 'Satellites seen during the record',
+    heads: [head('System'), numberHead('Satellites')],
+    rows: [
+      ...systems.map(({name, satellites}) => row(name, [numberCell(String(satellites))])),
+      row('All', [numberCell(String(total))], true),
+    ],
+  });
 }
 
 function valuesOf(m: ScatterMeasures): (number | null | undefined)[] {
@@ -120,7 +180,7 @@ export function screeningTable({result}: ReportContext): Table {
   const left = Object.entries(epochs.screened)
     .filter(([, count]) => count > 0)
     .sort(([a, n], [b, m]) => m - n || (a < b ? -1 : 1));
-  return {
+  return fixedTable({
     caption: 'What happened to each epoch',
     heads: [head('Fate'), head('Rule'), numberHead('Epochs'), numberHead('Share %')],
     rows: [
@@ -128,7 +188,7 @@ export function screeningTable({result}: ReportContext): Table {
       ...left.map(([reason, count]) => line('Left out', reason, count)),
       line('Read', 'all of the above', epochs.read, true),
     ],
-  };
+  });
 }
 
 /** What happened to each line of each input; the rows add up to the lines of the files. */
@@ -143,11 +203,11 @@ export function lineTable({result}: ReportContext): Table {
       of('total', '', lines.total, true),
     ];
   });
-  return {
+  return fixedTable({
     caption: 'What happened to each line',
     heads: [head('File'), head('Fate'), head('Type or reason'), numberHead('Lines')],
     rows,
-  };
+  });
 }
 
 function sorted(counts: Readonly<Record<string, number>>): [string, number][] {
@@ -189,11 +249,11 @@ export function settingsTable({result}: ReportContext): Table | null {
     .filter(([, setting]) => setting.from !== 'default')
     .sort(([a], [b]) => (a < b ? -1 : 1));
   if (chosen.length === 0) return null;
-  return {
+  return fixedTable({
     caption: 'Settings that differ from the defaults',
     heads: [head('Setting'), head('Value'), head('From')],
     rows: chosen.map(([name, {value, from}]) =>
       row(name, [textCell(value === null ? 'none' : String(value)), textCell(from)]),
     ),
-  };
+  });
 }

@@ -4,6 +4,8 @@ import {offsetAgainstUncertainty} from '../../wording/findings.ts';
 import {
   counted,
   formatAzimuth,
+  formatClock,
+  formatCount,
   formatGivenLength,
   formatLength,
   proseNumber,
@@ -70,7 +72,8 @@ function keyNumbers(context: ReportContext): KeyNumber[] {
   const {result, options} = context;
   const position = result.position;
   const u = position?.uncertainty95M ?? null;
-  const keys: KeyNumber[] = [];
+  const keys: KeyNumber[] = position === null ? movementKeys(context) : [];
+  if (keys.length > 0) return keys;
   if (result.comparison !== null) keys.push(...offsetKeys(context));
   keys.push(
     lengthKey('95 % in plan', u?.horizontalRadius ?? null, options.units, 'radius, of the mean'),
@@ -82,6 +85,28 @@ function keyNumbers(context: ReportContext): KeyNumber[] {
   }
   keys.push(looksKey(result));
   return keys;
+}
+
+/** Where movement split the record: how far, into how many parts, and how far apart. */
+function movementKeys({result, options}: ReportContext): KeyNumber[] {
+  const {segments, stability, scatter} = result;
+  const [jump] = stability.steps
+    .filter((step) => step.material)
+    .map((step) => ({utc: step.utc, sizeM: Math.hypot(step.eastM, step.northM, step.upM ?? 0)}))
+    .sort((a, b) => b.sizeM - a.sizeM);
+  if (jump === undefined || segments.length < 2) return [];
+  const r95M = scatter?.aboutMean.observed.r95M ?? null;
+  return [
+    lengthKey('Largest jump', jump.sizeM, options.units, `at ${formatClock(jump.utc)} UTC`),
+    {
+      label: 'Parts',
+      value: String(segments.length),
+      unit: '',
+      qualifier: 'each with its own mean',
+    },
+    lengthKey('One epoch', r95M, options.units, 'radius that holds 95 %'),
+    looksKey(result),
+  ];
 }
 
 function offsetKeys({result, options}: ReportContext): KeyNumber[] {
@@ -133,9 +158,9 @@ function looksKey({position, epochs}: Result): KeyNumber {
   if (known.length === 0)
     return {
       label: 'Epochs used',
-      value: String(epochs.used),
+      value: formatCount(epochs.used),
       unit: '',
-      qualifier: `of ${epochs.read} read`,
+      qualifier: `of ${formatCount(epochs.read)} read`,
     };
   const fewest = Math.min(...known);
   return {
