@@ -15,8 +15,8 @@ export const LOG_SENTENCES: Readonly<Record<string, Sentence>> = {
     `${counted(numberIn(v, 'dates'), 'date')} in the log contradict the others and were not believed.`,
   'leap-second-seen': (v) =>
     v.known === true
-      ? `The log runs through a leap second (23:59:60 in ${counted(numberIn(v, 'sentences'), 'sentence')}).`
-      : `The log has a second 23:59:60 (${counted(numberIn(v, 'sentences'), 'sentence')}) on a day without a leap second in the table; those epochs were not used.`,
+      ? `The log runs through a leap second (23:59:60 in ${counted(numberIn(v, 'times'), 'time')}).`
+      : `The log has a second 23:59:60 (${counted(numberIn(v, 'times'), 'time')}) on a day without a leap second in the table; those epochs were not used.`,
   'rollover-suspected': (v) =>
     `The date ${textIn(v, 'date')} looks like a GPS week rollover (${textIn(v, 'because')}): the true date may be ${textIn(v, 'dateAfterRollover')}. Check it against the booking sheet; coordinates at a coordinate epoch depend on it.`,
   'time-back': (v) =>
@@ -62,6 +62,30 @@ export const LOG_SENTENCES: Readonly<Record<string, Sentence>> = {
     `The table dates its rows by the day only (column ${textIn(v, 'column')}); each stands at 00:00.`,
   'time-scale-assumed': (v) =>
     `The table does not say on which scale its times are (${textIn(v, 'columns')}): taken as UTC. State --time-scale gps if they are GPS time.`,
+  'table-columns': (v) => {
+    const unused = textIn(v, 'unused');
+    return `Columns used: ${textIn(v, 'used')}${unused === '' ? '' : `; not used: ${unused}`}.`;
+  },
+  'quality-as-gga': (v) =>
+    `The numbers of the column ${textIn(v, 'column')} were read as the fix qualities of GGA (4 fixed, 5 float, 2 differential, 1 autonomous).`,
+  'quality-from-comment': (v) =>
+    `The numbers of the column ${textIn(v, 'column')} were read as a comment of the table explains them.`,
+  'height-taken-as-ellipsoidal': (v) =>
+    `The column ${textIn(v, 'column')} was taken as the ellipsoidal height. Name it with --columns if it is a height above a geoid.`,
+  'altitude-without-separation': (v) =>
+    `The column ${textIn(v, 'column')} is a height above a geoid and no separation stands beside it: no ellipsoidal height is known.`,
+  'sigma-correlation-assumed-zero': (v) =>
+    `The sigmas ${textIn(v, 'columns')} come without correlations: they were turned into east, north and up as if they had none.`,
+  'sigmas-zero': (v) =>
+    `${counted(numberIn(v, 'rows'), 'row')} state a sigma of zero, which says nothing; it was not believed.`,
+  'gps-week-below-1024': (v) =>
+    `The GPS week ${numberIn(v, 'week')} lies before the first rollover: perhaps it is counted modulo 1024. Check the date against the booking sheet.`,
+  'logs-overlap': (v) =>
+    `The logs overlap: ${counted(numberIn(v, 'epochs'), 'epoch')} given twice were left out.`,
+  'datums-differ': (v) =>
+    `The logs state different datums (${textIn(v, 'datums')}): do not average them together.`,
+  'resolutions-differ': () =>
+    'The logs print positions with different numbers of decimals; the coarsest counts.',
 };
 
 function stepsText(values: NoticeValues): string {

@@ -13,7 +13,7 @@ import {type NoticeValues, numberIn, type Sentence, textIn} from './sentence.ts'
  * One sentence per code: what is so, and what to do about it. A jump is "the positions jumped",
  * never "the tripod moved".
  */
-const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
+export const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
   'too-short': () =>
     'The record is too short to see errors that change more slowly than it lasts, so no 95 % figure is given: only the scatter of single epochs. Log at least a few minutes.',
   'few-cells': () =>
@@ -72,7 +72,7 @@ const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
 };
 
 /** Why a value is missing, for the notices that explain nulls. */
-const MISSING_SENTENCES: Readonly<Record<string, Sentence>> = {
+export const MISSING_SENTENCES: Readonly<Record<string, Sentence>> = {
   'not-given': () => 'Not given: facts of the occupation that no field sheet or option stated.',
   'nothing-compared': () => 'Nothing was compared: `check` compares with a known mark.',
   'frame-not-stated': () =>
