@@ -2,6 +2,8 @@ import type {Epochs} from './epochs.ts';
 
 /** Epochs per block: a block is 5.4 MB, and joining the blocks copies each column once. */
 const BLOCK_EPOCHS = 65_536;
+/** The first block is small, as most logs are short. */
+const FIRST_BLOCK_EPOCHS = 4096;
 
 /** One array per column of `Epochs`, all of the same length. */
 export type EpochColumns = Omit<Epochs, 'count'>;
@@ -48,36 +50,43 @@ const NO_BLOCK: EpochColumns = createBlock(0);
  * the caller writes what the log gives. Memory: 83 bytes per epoch; while joining, one column more.
  */
 export class EpochsBuilder {
-  #blocks: Partial<EpochColumns>[] = [];
+  #blocks: Block[] = [];
   #block: EpochColumns = NO_BLOCK;
-  #count = 0;
+  #row = 0;
+  #rows = 0;
+  #countBefore = 0;
 
   get count(): number {
-    return this.#count;
+    return this.#countBefore + this.#row;
   }
 
-  /** The columns being filled, from the first `add` on; other ones after every 65,536 epochs. */
+  /** The columns being filled, from the first `add` on; other ones when those are full. */
   get block(): EpochColumns {
     return this.#block;
   }
 
   add(): number {
-    const row = this.#count % BLOCK_EPOCHS;
-    if (row === 0) {
-      this.#block = createBlock(BLOCK_EPOCHS);
-      this.#blocks.push(this.#block);
+    if (this.#row === this.#rows) {
+      this.#countBefore += this.#rows;
+      this.#rows = this.#rows === 0 ? FIRST_BLOCK_EPOCHS : BLOCK_EPOCHS;
+      this.#row = 0;
+      this.#block = createBlock(this.#rows);
+      this.#blocks.push({from: this.#countBefore, columns: {...this.#block}});
     }
-    this.#count += 1;
+    const row = this.#row;
+    this.#row += 1;
     return row;
   }
 
   /** The epochs added so far, in the order of adding; the builder is empty afterwards. */
   finish(): Epochs {
-    const count = this.#count;
+    const {count} = this;
     const blocks = this.#blocks;
     this.#blocks = [];
     this.#block = NO_BLOCK;
-    this.#count = 0;
+    this.#row = 0;
+    this.#rows = 0;
+    this.#countBefore = 0;
     return {count, ...mapColumns((name) => joined(name, blocks, count))};
   }
 }
@@ -125,15 +134,21 @@ function createBlock(length: number): EpochColumns {
   });
 }
 
+/** A part of the columns, which goes when they have been joined. */
+interface Block {
+  readonly from: number;
+  readonly columns: {-readonly [Name in ColumnName]?: EpochColumns[Name]};
+}
+
 /** Joins one column and lets go of its parts, so that only one column exists twice at a time. */
-function joined(name: ColumnName, blocks: Partial<EpochColumns>[], count: number): Column {
+function joined(name: ColumnName, blocks: readonly Block[], count: number): Column {
   const to = COLUMNS[name].create(count);
-  blocks.forEach((block, k) => {
-    const from = block[name];
-    if (from === undefined) return;
-    to.set(from.subarray(0, Math.min(BLOCK_EPOCHS, count - k * BLOCK_EPOCHS)), k * BLOCK_EPOCHS);
-    delete block[name];
-  });
+  for (const {from, columns} of blocks) {
+    const part = columns[name];
+    if (part === undefined) continue;
+    to.set(part.subarray(0, Math.min(part.length, count - from)), from);
+    delete columns[name];
+  }
   return to;
 }
 

@@ -119,6 +119,7 @@ export class NmeaAssembler {
   }
 
   finish(): AssembledLog {
+    this.#newest?.trailing.add(this.#pending);
     while (this.#open.length > 0) this.#flushOldest();
     this.#sampler.finish();
     const source = this.#source();

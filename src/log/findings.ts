@@ -19,7 +19,7 @@ export interface FindingValues {
   /** The date lies so far back that it may be a week count that has run over. */
   'rollover-suspected': {date: string; dateAfterRollover: string; because: string};
   /** 23:59:60 occurs; `known` tells whether the list of leap seconds has it on that day. */
-  'leap-second-seen': {sentences: number; known: boolean};
+  'leap-second-seen': {times: number; known: boolean};
   // Order and repetition.
   'time-back': {times: number; largestS: number; firstLineNumber: number};
   /** Epochs at the time of the epoch before them. */

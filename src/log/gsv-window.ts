@@ -29,11 +29,6 @@ export class SampleWindow {
     return this.#open;
   }
 
-  /** Time of the sample that the window is open for; NaN before the first time. */
-  get startS(): number {
-    return this.#startS;
-  }
-
   /** To be told every time that a sentence carries; says whether a new sample begins. */
   see(timeOfDayS: number): boolean {
     const interval = Math.floor(timeOfDayS / SAMPLE_INTERVAL_S);
@@ -45,9 +40,5 @@ export class SampleWindow {
     }
     if (Math.abs(timeOfDayS - this.#startS) > this.#openS) this.#open = false;
     return false;
-  }
-
-  close(): void {
-    this.#open = false;
   }
 }

@@ -65,7 +65,7 @@ function dateFindings({log, options, dated, input, epochs}: Known): LogFinding[]
   }
   if (log.leapSeconds > 0) {
     const known = dated.runs.some(({day}) => hasLeapSecond(day));
-    found.push(finding('leap-second-seen', 'note', {sentences: log.leapSeconds, known}));
+    found.push(finding('leap-second-seen', 'note', {times: log.leapSeconds, known}));
   }
   return found;
 }

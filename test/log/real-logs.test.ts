@@ -425,7 +425,7 @@ describe('real recordings', () => {
     for (const [fixClass, count] of Object.entries(facts.classes)) {
       expect(epochs.fixClass.filter((one) => one === Number(fixClass))).toHaveLength(count);
     }
-    expect(findingOf(contents, 'no-position')?.values['sentences'] ?? 0).toBe(
+    expect(findingOf(contents, 'no-position')?.values.sentences ?? 0).toBe(
       facts.withoutPosition ?? 0,
     );
     if (facts.decimals !== undefined) {
