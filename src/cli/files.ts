@@ -97,7 +97,11 @@ async function* unpacked(source: AsyncGenerator<Uint8Array>): AsyncGenerator<Uin
   if (first.done === true) return;
   const all = prefixed(first.value, source);
   if (first.value[0] === 0x1f && first.value[1] === 0x8b) {
-    yield* Readable.from(all).compose(createGunzip({chunkSize: READ_BLOCK_BYTES}));
+    const gunzip = createGunzip({chunkSize: READ_BLOCK_BYTES});
+    // A failure reaches us twice, through the blocks and through the pipeline: once is enough.
+    const feeding = pipeline(Readable.from(all), gunzip).catch(() => undefined);
+    yield* gunzip;
+    await feeding;
   } else {
     yield* all;
   }

@@ -17,9 +17,35 @@ const EXIT_STATUSES = [
   '             3 cannot tell, or no position   70 a defect of stillmark',
 ].join('\n');
 
+/** The parser drops a lone hyphen among the files; this stands for it on the way through. */
+const STANDARD_INPUT_WORD = '<standard input>';
+
+function withStandardInput<T extends {readonly log: readonly string[]}>(argv: T): T {
+  return {...argv, log: argv.log.map((word) => (word === STANDARD_INPUT_WORD ? '-' : word))};
+}
+
+/**
+ * Ties a value that begins with a hyphen to its option, or the parser takes it for an option: `-`
+ * for a standard stream, and southern latitudes.
+ */
+function tied(words: readonly string[]): string[] {
+  const joined: string[] = [];
+  for (let i = 0; i < words.length; i++) {
+    const word = words[i] ?? '';
+    const next = words[i + 1] ?? '';
+    if (/^--[a-z][a-z-]*$/.test(word) && /^-($|[\d.])/.test(next)) {
+      joined.push(`${word}=${next}`);
+      i++;
+    } else {
+      joined.push(word === '-' ? STANDARD_INPUT_WORD : word);
+    }
+  }
+  return joined;
+}
+
 async function run(words: readonly string[]): Promise<number> {
   let status: number = STATUS.done;
-  const parser = commands(yargs([...words]), (answer) => {
+  const parser = commands(yargs(tied(words)), (answer) => {
     status = answer;
   })
     .scriptName('stillmark')
@@ -48,19 +74,22 @@ function commands(parser: Argv, answer: (status: number) => void): Argv {
       'contents <log..>',
       'What is in these logs, and what is wrong with them',
       (args) => contentsOptions(inputOptions(args)),
-      async (argv) => answer(await (await import('./contents.ts')).contents(argv)),
+      async (argv) =>
+        answer(await (await import('./contents.ts')).contents(withStandardInput(argv))),
     )
     .command(
       'reduce <log..>',
       'One occupation: position, honest uncertainty, report',
       (args) => outputOptions(reduceOptions(inputOptions(args))),
-      async (argv) => answer(await (await import('./reduce.ts')).reduce(argv, 'reduce')),
+      async (argv) =>
+        answer(await (await import('./reduce.ts')).reduce(withStandardInput(argv), 'reduce')),
     )
     .command(
       'check <log..>',
       'The same against a known mark and a tolerance; the verdict sets the exit status',
       (args) => outputOptions(checkOptions(reduceOptions(inputOptions(args)))),
-      async (argv) => answer(await (await import('./reduce.ts')).reduce(argv, 'check')),
+      async (argv) =>
+        answer(await (await import('./reduce.ts')).reduce(withStandardInput(argv), 'check')),
     );
 }
 

@@ -26,7 +26,15 @@ export function headlineFacts(result: Result) {
     up95M: shown?.uncertainty95M?.up ?? null,
     materialStep: largest ?? null,
     segments: segments.length,
+    rests: restsOn(result),
   };
+}
+
+/** What the 95 % figures leave out, or take from elsewhere, in one word. */
+function restsOn({budget}: Result): 'base not included' | 'service included' | null {
+  const row = budget.find(({sharedBy}) => sharedBy === 'base' || sharedBy === 'service');
+  if (row?.sharedBy === 'service') return 'service included';
+  return row?.sharedBy === 'base' && row.standardUncertaintyM === null ? 'base not included' : null;
 }
 
 function durationS({occupation: {startUtc, endUtc}}: Result): number {

@@ -22,6 +22,8 @@ export interface HeadlineFacts {
   readonly up95M: number | null;
   readonly materialStep: {readonly utc: string; readonly sizeM: number} | null;
   readonly segments: number;
+  /** What the 95 % figures leave out or include beyond the record. */
+  readonly rests: 'base not included' | 'service included' | null;
 }
 
 export interface HeadlineRequirement {
@@ -88,8 +90,13 @@ function reduceHeadline(facts: HeadlineFacts): Headline {
   return {
     tone: facts.stability === 'still' ? 'within' : 'look',
     status: facts.stability === 'still' ? 'Position found' : 'Position found, stillness open',
-    sentence: `${name} is known within ${formatLength(facts.radius95M)} in plan${height} (95 %), ${still}.`,
+    sentence: `${name} is known within ${formatLength(facts.radius95M)} in plan${height} (${levelWords(facts)}), ${still}.`,
   };
+}
+
+function levelWords({rests}: HeadlineFacts): string {
+  if (rests === 'base not included') return '95 %, relative to its base';
+  return rests === 'service included' ? '95 %, with the errors of the positioning service' : '95 %';
 }
 
 function isMovement(stability: string): boolean {
@@ -166,5 +173,6 @@ function openSentence(facts: HeadlineFacts): string {
   }
   const uncertainty = open[0]?.of === 'up' && facts.up95M !== null ? facts.up95M : facts.radius95M;
   const limits = open.map(({of, toleranceM}) => limitWords(of, toleranceM)).join(' and ');
-  return `${offset}; with a 95 % uncertainty of ${formatLength(uncertainty)} that is neither surely inside nor surely outside the ${limits} asked for.`;
+  const service = facts.rests === 'service included' ? ', the positioning service included,' : '';
+  return `${offset}; with a 95 % uncertainty of ${formatLength(uncertainty)}${service} that is neither surely inside nor surely outside the ${limits} asked for.`;
 }

@@ -41,6 +41,8 @@ const LONGEST_WITH_TRACKS_S = 6 * 3600;
 /** Points of all tracks together: what one figure can carry. */
 const TRACK_POINTS = 900;
 const SHORTEST_STEP_S = 60;
+/** More steps would show the whole degrees of GSV as a staircase. */
+const STEPS_OF_A_TRACK = 20;
 
 const SYSTEM_NAMES: ReadonlyMap<number, {letter: string; name: string}> = new Map([
   [SatelliteSystem.unknown, {letter: 'X', name: 'system not stated'}],
@@ -94,7 +96,11 @@ function tracksOf(satellites: Satellites, firstS: number, spanS: number): SkyTra
   for (let i = 0; i < satellites.count; i++) {
     bySize.add(satellites.system[i]! * 65_536 + satellites.satelliteId[i]!);
   }
-  const stepS = Math.max(SHORTEST_STEP_S, (spanS * bySize.size) / TRACK_POINTS);
+  const stepS = Math.max(
+    SHORTEST_STEP_S,
+    spanS / STEPS_OF_A_TRACK,
+    (spanS * bySize.size) / TRACK_POINTS,
+  );
   for (let i = 0; i < satellites.count; i++) {
     const elevationDeg = satellites.elevationDeg[i]!;
     const azimuthDeg = satellites.azimuthDeg[i]!;
