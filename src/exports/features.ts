@@ -23,9 +23,10 @@ export function mappedPositions({position, segments}: Result): MappedPosition[] 
   }));
 }
 
-/** The name under which a position appears. */
-export function positionName({occupation}: Result, part: number | null): string {
-  const name = occupation.mark ?? 'Position';
+/** The name under which a position appears; one that is not the mark's says what it is of. */
+export function positionName({occupation}: Result, {part, position}: MappedPosition): string {
+  const mark = occupation.mark ?? 'Position';
+  const name = position.of === 'mark' ? mark : `${mark} (${position.of})`;
   return part === null ? name : `${name}, part ${part}`;
 }
 

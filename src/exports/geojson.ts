@@ -39,8 +39,8 @@ export function resultGeoJson(result: Result): string {
 }
 
 function featuresOf(result: Result, mapped: MappedPosition): object[] {
-  const {position, part} = mapped;
-  const name = positionName(result, part);
+  const {position} = mapped;
+  const name = positionName(result, mapped);
   const features: object[] = [
     feature(
       {type: 'Point', coordinates: coordinates(position.geodetic)},

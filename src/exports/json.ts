@@ -31,7 +31,8 @@ function inOrder(value: unknown, schema: Schema, path: string): unknown {
     case 'boolean':
       return value;
     case 'number':
-      if (!Number.isFinite(value) || Object.is(value, -0)) throw misfit(path, String(value));
+      if (Object.is(value, -0)) throw misfit(path, 'negative zero');
+      if (!Number.isFinite(value)) throw misfit(path, String(value));
       return value;
     case 'object':
       return value === null ? null : composite(value, schema, path);

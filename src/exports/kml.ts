@@ -44,8 +44,9 @@ ${placemarks.join('\n')}
 
 type Data = readonly (readonly [name: string, value: string | number | null])[];
 
-function placemarksOf(result: Result, {position, part, fromUtc, toUtc}: MappedPosition): string[] {
-  const name = positionName(result, part);
+function placemarksOf(result: Result, mapped: MappedPosition): string[] {
+  const {position, fromUtc, toUtc} = mapped;
+  const name = positionName(result, mapped);
   const {uncertainty95M} = position;
   const data: Data = [
     ['kind', 'position'],

@@ -118,7 +118,9 @@ function fileBlocks(result: Result, position: Position): string[] {
 
 function siteId({occupation}: Result, code: string, {position}: Solution): string[] {
   const {latitudeDeg, longitudeDeg, ellipsoidalHeightM} = position.geodetic;
-  const name = left(occupation.mark ?? 'MARK', 22);
+  // Coordinates of an antenna must not pass for those of the mark below it.
+  const point = position.of === 'mark' ? '' : 'ANTENNA OVER ';
+  const name = left(`${point}${occupation.mark ?? 'MARK'}`, 22);
   const east = longitudeDeg < 0 ? longitudeDeg + 360 : longitudeDeg;
   const height = (ellipsoidalHeightM ?? 0).toFixed(1).padStart(7);
   return block('SITE/ID', [

@@ -230,7 +230,7 @@ function decimalMark(
 }
 
 /** The beginning of a line for a message. */
-export function excerpt(text: string): string {
+function excerpt(text: string): string {
   const shown = text.replace(/[^\x20-\x7e]/g, '·');
   return shown.length > 60 ? `${shown.slice(0, 60)}…` : shown;
 }
