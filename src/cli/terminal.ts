@@ -137,7 +137,8 @@ function facts(result: Result): string[] {
       result.segments.length > 1
         ? `  ${formatUtc(segment.fromUtc).slice(11)} to ${formatUtc(segment.toUtc).slice(11)}`
         : '';
-    lines.push(['position', `${positionText(segment.position)}${span}`]);
+    const scatterM = result.scatter?.aboutMean.observed.r95M ?? null;
+    lines.push(['position', `${positionText(segment.position, scatterM)}${span}`]);
   }
   const first = result.segments[0]?.position;
   if (first !== undefined) lines.push(['of', `${first.of}; ${frameText(first)}`]);
@@ -160,12 +161,16 @@ function facts(result: Result): string[] {
   return lines.map(([name, text]) => `${name.padEnd(11)}${text}`);
 }
 
-function positionText({geodetic, uncertainty95M, orthometricHeightM}: Position): string {
-  const metres = coordinateDecimals(uncertainty95M?.horizontalRadius ?? null);
+/** As many digits as the uncertainty deserves, or the scatter where there is none. */
+function positionText(
+  {geodetic, uncertainty95M, orthometricHeightM}: Position,
+  scatterM: number | null,
+): string {
+  const metres = coordinateDecimals(uncertainty95M?.horizontalRadius ?? scatterM);
   const degrees = degreeDecimals(metres);
   const north = geodetic.latitudeDeg >= 0 ? 'N' : 'S';
   const east = geodetic.longitudeDeg >= 0 ? 'E' : 'W';
-  const heights = coordinateDecimals(uncertainty95M?.up ?? null);
+  const heights = coordinateDecimals(uncertainty95M?.up ?? scatterM);
   const height =
     geodetic.ellipsoidalHeightM !== null
       ? `ellipsoidal height ${fixed(geodetic.ellipsoidalHeightM, heights)} m`

@@ -40,7 +40,7 @@ import {screenNeighbours} from './screen-neighbours.ts';
 import {screeningOf} from './screening-of-record.ts';
 import {type Session, sessionOf} from './session.ts';
 import {sheetItems} from './sheet-items.ts';
-import {movementLimit, stabilityOf} from './stability.ts';
+import {stabilityOf} from './stability.ts';
 import {statedContributions} from './stated-contributions.ts';
 import {checkVerdict} from './verdict.ts';
 
@@ -112,8 +112,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   const place = request.mark === null ? null : markPlace(request.mark, request.ellipsoid);
   const stability = stabilityOf(
     whole,
-    movementLimit(whole, request.movementLimitM, request.asked),
-    false,
+    {statedM: request.movementLimitM, asked: request.asked},
     ({interval95GpsSeconds: [from, to]}) => besideStep(epochs, from, to, account.intervalS ?? 1),
   );
   const sessions = parts(whole, stability, epochs.gpsSeconds).map((indices) =>

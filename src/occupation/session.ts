@@ -4,6 +4,7 @@ import {
   type ComponentAnalysis,
   type Movement,
   type SessionAnalysis,
+  type TakenOut,
 } from '../statistics/analyse-session.ts';
 import {type LocalColumns, taken} from './local-columns.ts';
 import type {PerAxis} from './result.ts';
@@ -31,8 +32,8 @@ export interface Session {
   readonly meanM: PerAxis<number | null>;
   /** By scatter and correlation alone. */
   readonly standardUncertaintyM: PerAxis<number | null> | null;
-  /** The same with the movement that was found taken out: the noise alone. */
-  readonly quietUncertaintyM: PerAxis<number | null> | null;
+  /** 95 % half-widths of the means had some of the steps, or the drift, not happened. */
+  readonly halfWidths95Without: (movement: TakenOut) => PerAxis<number | null>;
   /** Correlation of the errors of the east and north means. */
   readonly eastNorthCorrelation: number;
   /** What the digits of the log can hide after averaging; null where they are fine. */
@@ -76,8 +77,11 @@ export function sessionOf(
     fromGpsSeconds: firstS,
     toGpsSeconds: times[times.length - 1]!,
     meanM: perAxis(components, ({mean}) => mean),
-    standardUncertaintyM: told ? perAxis(components, sigma('halfWidth95')) : null,
-    quietUncertaintyM: told ? perAxis(components, sigma('quietHalfWidth95')) : null,
+    standardUncertaintyM: told ? perAxis(components, sigma) : null,
+    halfWidths95Without: (movement) => {
+      const [east, north, up] = analysis.halfWidthsWithout(movement);
+      return {east: east ?? null, north: north ?? null, up: up ?? null};
+    },
     eastNorthCorrelation: analysis.planCorrelation,
     quantisationM: quantisation(components),
     independentLooks: told ? perAxis(components, (one) => one.independentLooks) : null,
@@ -106,11 +110,8 @@ function perAxis<T>(
   return {east: at(components[0]), north: at(components[1]), up: at(components[2])};
 }
 
-function sigma(name: 'halfWidth95' | 'quietHalfWidth95') {
-  return (component: ComponentAnalysis) => {
-    const halfWidth = component[name];
-    return halfWidth === undefined ? undefined : halfWidth / NORMAL_95;
-  };
+function sigma({halfWidth95}: ComponentAnalysis): number | undefined {
+  return halfWidth95 === undefined ? undefined : halfWidth95 / NORMAL_95;
 }
 
 function quantisation(components: readonly ComponentAnalysis[]): PerAxis<number | null> | null {

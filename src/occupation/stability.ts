@@ -4,29 +4,34 @@ import type {Drift, PerAxis, Stability, StabilityVerdict, Step} from './result.t
 import type {FoundDrift, FoundStep, Session} from './session.ts';
 
 const SECONDS_PER_HOUR = 3600;
-/** Half-width of 95 % of a normal distribution. */
-const NORMAL_95 = 1.959963984540054;
 
 export interface MovementLimit {
   readonly horizontal: number | null;
   readonly up: number | null;
 }
 
+/** What decides how much movement matters. */
+export interface MovementRule {
+  /** What the user says; it then stands alone. */
+  readonly statedM: number | null;
+  readonly asked: readonly Asked[];
+}
+
 /**
- * How much movement matters: what the user says, else twice the session's own 95 % uncertainty of
- * the mean, or a third of the tolerance where that is smaller. The uncertainty is that of the noise
- * alone: a jump would otherwise enlarge the very limit that it is held against.
+ * How much movement matters: what the user says, else twice the 95 % uncertainty of the mean by the
+ * session alone, or a third of the tolerance where that is smaller.
+ *
+ * @param halfWidths95M  of the record with the movement in question taken out: a jump would
+ *                       otherwise enlarge the very limit that it is held against
  */
-export function movementLimit(
-  session: Session,
-  stated: number | null,
-  asked: readonly Asked[],
+function limitOf(
+  halfWidths95M: PerAxis<number | null>,
+  {statedM, asked}: MovementRule,
 ): MovementLimit {
-  if (stated !== null) return {horizontal: stated, up: stated};
-  const sigma = session.quietUncertaintyM;
-  const widest = (values: readonly (number | null | undefined)[]) => {
-    const known = values.filter((value) => value !== null && value !== undefined);
-    return known.length === 0 ? null : 2 * NORMAL_95 * Math.max(...known);
+  if (statedM !== null) return {horizontal: statedM, up: statedM};
+  const twice = (...values: readonly (number | null)[]) => {
+    const known = values.filter((value) => value !== null);
+    return known.length === 0 ? null : 2 * Math.max(...known);
   };
   const thirdOf = (axes: readonly Asked['of'][]) => {
     const limits = asked.filter(({of}) => axes.includes(of)).map(({toleranceM}) => toleranceM / 3);
@@ -34,11 +39,44 @@ export function movementLimit(
   };
   return {
     horizontal: smaller(
-      widest([sigma?.east, sigma?.north]),
+      twice(halfWidths95M.east, halfWidths95M.north),
       thirdOf(['horizontal', 'east', 'north']),
     ),
-    up: smaller(widest([sigma?.up]), thirdOf(['up'])),
+    up: smaller(twice(halfWidths95M.up), thirdOf(['up'])),
   };
+}
+
+interface Materiality {
+  readonly limit: MovementLimit;
+  /** Numbers of the material steps. */
+  readonly steps: ReadonlySet<number>;
+}
+
+/**
+ * Which steps matter, the largest first: each is held against the limit of the record without it
+ * and without the material ones before it, until one does not matter. In a record that jumps again
+ * and again by as much, no single jump stands out, and none is material.
+ */
+function materialSteps(session: Session, rule: MovementRule): Materiality {
+  const {steps, halfWidths95Without} = session;
+  const order = steps
+    .map(({sizeM}, number) => ({number, sizeM}))
+    .sort((a, b) => horizontalM(b) - horizontalM(a) || a.number - b.number);
+  const material: number[] = [];
+  const drift = session.movement === 'drift';
+  let limit = limitOf(halfWidths95Without({steps: [], drift}), rule);
+  for (const step of order) {
+    limit = limitOf(halfWidths95Without({steps: [...material, step.number], drift}), rule);
+    const matters =
+      exceeds(horizontalM(step), limit.horizontal) || exceeds(step.sizeM.up ?? 0, limit.up);
+    if (!matters) break;
+    material.push(step.number);
+  }
+  return {limit, steps: new Set(material)};
+}
+
+function horizontalM({sizeM: {east, north}}: Pick<FoundStep, 'sizeM'>): number {
+  return Math.hypot(east ?? 0, north ?? 0);
 }
 
 function smaller(a: number | null, b: number | null): number | null {
@@ -52,38 +90,37 @@ function smaller(a: number | null, b: number | null): number | null {
  */
 export function stabilityOf(
   session: Session,
-  limit: MovementLimit,
-  travelling: boolean,
+  rule: MovementRule,
   besideStep: (step: FoundStep) => readonly string[],
 ): Stability {
   const spanS = session.toGpsSeconds - session.fromGpsSeconds;
-  const steps = session.steps.map((step) => stepOf(step, limit, besideStep(step)));
+  const {limit, steps: material} = materialSteps(session, rule);
+  const steps = session.steps.map((step, number) => ({
+    ...stepOf(step, besideStep(step)),
+    material: material.has(number),
+  }));
   const drift: PerAxis<Drift | null> = {
     east: driftOf(session.drift.east, spanS, limit.horizontal),
     north: driftOf(session.drift.north, spanS, limit.horizontal),
     up: driftOf(session.drift.up, spanS, limit.up),
   };
   return {
-    verdict: verdictOf(session, steps, drift, limit, travelling),
+    verdict: verdictOf(session, steps, drift, limit),
     drift,
     steps,
     movementLimitM: limit,
   };
 }
 
-function stepOf(found: FoundStep, limit: MovementLimit, beside: readonly string[]): Step {
+function stepOf(found: FoundStep, beside: readonly string[]): Omit<Step, 'material'> {
   const {east, north, up} = found.sizeM;
-  const horizontalM = Math.hypot(east ?? 0, north ?? 0);
+  const [from, to] = found.interval95GpsSeconds;
   return {
     utc: isoUtc(found.gpsSeconds, 3),
-    interval95Utc: [
-      isoUtc(found.interval95GpsSeconds[0], 3),
-      isoUtc(found.interval95GpsSeconds[1], 3),
-    ],
+    interval95Utc: [isoUtc(from, 3), isoUtc(to, 3)],
     eastM: east ?? 0,
     northM: north ?? 0,
     upM: up,
-    material: exceeds(horizontalM, limit.horizontal) || exceeds(up ?? 0, limit.up),
     beside,
   };
 }
@@ -108,9 +145,7 @@ function verdictOf(
   steps: readonly Step[],
   drift: PerAxis<Drift | null>,
   limit: MovementLimit,
-  travelling: boolean,
 ): StabilityVerdict {
-  if (travelling) return 'travelling';
   if (session.movement === 'cannot tell' || limit.horizontal === null) return 'cannot tell';
   if (steps.some(({material}) => material)) return 'stepped';
   const drifts = [drift.east, drift.north, drift.up].some((axis) => axis?.material === true);

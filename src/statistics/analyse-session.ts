@@ -38,8 +38,6 @@ export interface ComponentAnalysis {
   readonly quantisation95: number;
   readonly independentLooks: number | undefined;
   readonly correlationTimeS: number | undefined;
-  /** The same half-width with the movement that was found taken out: the noise alone. */
-  readonly quietHalfWidth95: number | undefined;
   readonly drift: DriftAnalysis | undefined;
 }
 
@@ -69,6 +67,11 @@ export interface SessionAnalysis {
   readonly steps: readonly StepAnalysis[];
   /** Codes with the components that they concern. */
   readonly limits: readonly {readonly code: SessionLimit; readonly components: readonly number[]}[];
+  /**
+   * Half-widths of the 95 % intervals, per component, of the same record with some of its steps
+   * taken out, or its drift: what they would be had that movement not happened.
+   */
+  readonly halfWidthsWithout: (movement: TakenOut) => readonly (number | undefined)[];
   /** Largest probability that the noise is slower than the record. */
   readonly slowProbability: number;
   /**
@@ -87,6 +90,12 @@ const FEW_LOOKS = 4;
 const SLOW = 0.5;
 /** Spread within a quantum below which averaging cannot look between the digits. */
 const DITHER = 0.3;
+
+/** Movement to be thought away: steps by their number, or the drift. */
+export interface TakenOut {
+  readonly steps: readonly number[];
+  readonly drift: boolean;
+}
 
 /** Everything the record itself can say about its mean and about movement. O(n). */
 export function analyseSession(input: SessionInput): SessionAnalysis {
@@ -156,7 +165,6 @@ function untold(known: readonly Known[], code: SessionLimit): SessionAnalysis {
       quantisation95: quantisation95(one),
       independentLooks: undefined,
       correlationTimeS: undefined,
-      quietHalfWidth95: undefined,
       drift: undefined,
     })),
     planCorrelation: 0,
@@ -164,6 +172,7 @@ function untold(known: readonly Known[], code: SessionLimit): SessionAnalysis {
     steps: [],
     limits: [{code, components: known.map((_, c) => c)}],
     slowProbability: 0,
+    halfWidthsWithout: () => known.map(() => undefined),
     requiredTime: () => undefined,
   };
 }
@@ -186,18 +195,8 @@ function analysed(record: Analysable): SessionAnalysis {
   const uncertainties = meanUncertainties(cells, fits, means, pooled);
   const slowProbability = Math.max(0, ...uncertainties.map((one) => one.slowProbability));
   const movement = movementOf(tested(record, fits), slowProbability);
-  const quietCells = withoutMovement(record, movement);
-  const quiet =
-    quietCells === cells
-      ? uncertainties
-      : meanUncertainties(
-          quietCells,
-          fitModels(quietCells),
-          quietCells.means.map(meanOfCells),
-          pooled,
-        );
   const components = known.map((one, c) =>
-    componentOf(one, c, {record, uncertainties, quiet, drifts: movement.drifts}),
+    componentOf(one, c, {record, uncertainties, drifts: movement.drifts}),
   );
   return {
     components,
@@ -206,6 +205,7 @@ function analysed(record: Analysable): SessionAnalysis {
     steps: movement.steps,
     limits: limitsOf(record, components, uncertainties, movement.testable),
     slowProbability,
+    halfWidthsWithout: (takenOut) => halfWidthsWithout(record, movement, takenOut, pooled),
     requiredTime: (component, target) => {
       const at = varying.indexOf(component);
       const now = components[component]?.halfWidth95;
@@ -226,7 +226,6 @@ function componentOf(
   found: {
     readonly record: Analysable;
     readonly uncertainties: readonly MeanUncertainty[];
-    readonly quiet: readonly MeanUncertainty[];
     readonly drifts: ReadonlyMap<number, Slope>;
   },
 ): ComponentAnalysis {
@@ -242,7 +241,6 @@ function componentOf(
     quantisation95: quantisation95(one),
     independentLooks: looks,
     correlationTimeS: looks === undefined ? undefined : cells.spanS / (2 * looks),
-    quietHalfWidth95: at < 0 ? 0 : found.quiet[at]!.halfWidth95,
     drift: drift === undefined ? undefined : driftOf(drift, cells),
   };
 }
@@ -495,15 +493,26 @@ function sizedSteps(part: Testable, times: readonly TimedStep[]): StepAnalysis[]
   }));
 }
 
-/** All components with the movement that was found taken out; the same cells when there is none. */
-function withoutMovement(
-  {cells, varying, input}: Analysable,
-  {kind, steps, drifts}: FoundMovement,
+function halfWidthsWithout(
+  {cells, varying, known, input}: Analysable,
+  {steps, drifts}: FoundMovement,
+  takenOut: TakenOut,
+  pooled: boolean,
+): (number | undefined)[] {
+  const gone = takenOut.steps.map((step) => steps[step]!);
+  let quiet = withoutSteps(cells, varying, input.elapsedS[0]!, gone);
+  if (takenOut.drift) quiet = withoutLines(quiet, varying, drifts);
+  const found = meanUncertainties(quiet, fitModels(quiet), quiet.means.map(meanOfCells), pooled);
+  return known.map((_, c) => (varying.includes(c) ? found[varying.indexOf(c)]!.halfWidth95 : 0));
+}
+
+function withoutLines(
+  cells: TimeCells,
+  numbers: readonly number[],
+  drifts: ReadonlyMap<number, Slope>,
 ): TimeCells {
-  if (kind === 'step') return withoutSteps(cells, varying, input.elapsedS[0]!, steps);
-  if (kind !== 'drift') return cells;
   const means = cells.means.map((column, at) => {
-    const perCell = drifts.get(varying[at]!)?.perCell ?? 0;
+    const perCell = drifts.get(numbers[at]!)?.perCell ?? 0;
     return column.map((value, k) => value - perCell * cells.index[k]!);
   });
   return {...cells, means};
