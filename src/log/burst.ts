@@ -28,6 +28,7 @@ export class GsaGroup {
   vdop = Number.NaN;
 
   clear(): void {
+    if (this.count === 0) return;
     this.count = 0;
     this.satellites = 0;
     this.pdop = Number.NaN;
@@ -216,7 +217,8 @@ export class Burst {
       this.dateDays = dateDays;
       this.dateOfRmc = true;
     }
-    if (!this.rmc.hasPosition) this.rmc.takePlan(rmc, row, lineFeedsBefore);
+    const hasPlan = !Number.isNaN(rmc.latitudeDeg[row] ?? Number.NaN);
+    if (hasPlan && !this.rmc.hasPosition) this.rmc.takePlan(rmc, row, lineFeedsBefore);
   }
 
   takeGst(gst: GstColumns, row: number): void {

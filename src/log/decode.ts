@@ -356,7 +356,7 @@ export class NmeaDecoder {
     if (kind === -1) return false;
     if (kind === SentenceKind.ignored || kind === SentenceKind.proprietary) return true;
     const from = start + length + 2;
-    if (kind <= SentenceKind.zda) this.#fields.split(this.#bytes, from, star);
+    if (kind <= SentenceKind.zda) this.#fields.begin(this.#bytes, from, star, kind);
     const fault = this.#decode(kind, start, from, star);
     if (fault === Rejection.none) countOne(this.#account.decoded, kind);
     else this.#reject(fault, start, Math.min(star + 3, this.#length));
@@ -481,11 +481,13 @@ export class NmeaDecoder {
   #lookAgain(): void {
     const {rmc, gll, decimals} = this.#columns;
     for (let row = 0; row < rmc.count; row += 1) {
-      this.#fields.split(this.#bytes, this.#rmcFrom[row] ?? 0, this.#rmcEnd[row] ?? 0);
+      const [from, end] = [this.#rmcFrom[row] ?? 0, this.#rmcEnd[row] ?? 0];
+      this.#fields.begin(this.#bytes, from, end, SentenceKind.rmc);
       decodeRmcPosition(this.#fields, rmc, row, decimals.rmc);
     }
     for (let row = 0; row < gll.count; row += 1) {
-      this.#fields.split(this.#bytes, this.#gllFrom[row] ?? 0, this.#gllEnd[row] ?? 0);
+      const [from, end] = [this.#gllFrom[row] ?? 0, this.#gllEnd[row] ?? 0];
+      this.#fields.begin(this.#bytes, from, end, SentenceKind.gll);
       decodeGll(this.#fields, gll, row, decimals.gll);
     }
   }

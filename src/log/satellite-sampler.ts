@@ -5,7 +5,7 @@ import type {DayTrack} from './day-track.ts';
 import {SatelliteSample} from './gsv.ts';
 import {ASSEMBLER_OPEN_S, SampleWindow} from './gsv-window.ts';
 import type {LogAccount} from './log-account.ts';
-import type {SentenceColumns} from './sentence-columns.ts';
+import {type SentenceColumns, SentenceKind} from './sentence-columns.ts';
 import {SentenceFields} from './sentence-fields.ts';
 
 /** Where the fields of a GSV sentence begin: behind `$`, the address and a comma. */
@@ -42,7 +42,7 @@ export class SatelliteSampler {
     const end = from + (gsv.bytes[row] ?? 0);
     this.#textAt = end;
     if (!this.#window.open) return;
-    this.#fields.split(gsvText.byte, from + FIELDS_AT, end);
+    this.#fields.begin(gsvText.byte, from + FIELDS_AT, end, SentenceKind.gsv);
     const talker = ((gsvText.byte[from + 1] ?? 0) << 8) | (gsvText.byte[from + 2] ?? 0);
     const reason = this.#sample.take(this.#fields, talker);
     const lineNumber = account.lineFeeds + (gsv.lineFeedsBefore[row] ?? 0) + 1;

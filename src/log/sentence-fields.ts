@@ -1,22 +1,14 @@
 import {daysFromCivil, isCivilDate} from '../time/calendar.ts';
-import {COMMA, DOT, hexValue, MINUS, PLUS, ZERO} from './bytes.ts';
+import {hexValue, ZERO} from './bytes.ts';
+import {FieldLayout, FieldShape, wholeShape} from './field-layout.ts';
 import {Rejection} from './rejections.ts';
 
-/** 10^0 to 10^22, the powers of ten that a double holds exactly. */
-const POWERS_OF_TEN = Float64Array.from({length: 23}, (_, exponent) => Number(`1e${exponent}`));
+/** By decimals; a double holds them exactly. */
+const POWERS_OF_TEN = Float64Array.from({length: 10}, (_, exponent) => 10 ** exponent);
 
-/** Digits that fit into a 32-bit integer. */
-const MOST_DIGITS = 9;
-/** More than any sentence that is decoded has; further ones are not looked at. */
-const MOST_FIELDS = 40;
-
-// The shape of a field: what it is, its sign, digits before the point, decimals.
-const EMPTY = 0;
-const NUMBER = 0x1000;
-const OTHER = 0x2000;
-const NEGATIVE = 0x100;
-const WHOLE_DIGITS_SHIFT = 4;
-const DIGITS_MASK = 0xf;
+/** Layouts that are kept of each kind of sentence, by their length. */
+const LAYOUTS_PER_KIND = 64;
+const KINDS = 16;
 
 const NORTH = 0x4e;
 const SOUTH = 0x53;
@@ -32,122 +24,83 @@ export const NO_DATE = -0x8000_0000;
  * The fields of one sentence, counted from 0 behind the address, read from its bytes without making
  * strings.
  *
- * Method: one pass over the bytes notes for every field whether it is empty, a number or something
- * else, and gathers the digits before and behind the point as two integers. Decoders then ask for
- * fields by their index. An empty or missing field is absent: NaN, or the value that the method
- * names. A field that is there but cannot be what it should be sets `fault`, at which the decoder
- * looks once, at its end.
+ * Method: the layout of the sentence, which tells where its fields stand, is found among those of
+ * earlier sentences of its kind, or learned. Decoders then ask for fields by their index; a field that
+ * turns out to be of another shape than the layout says has the layout learned anew. An empty or
+ * missing field is absent: NaN, or the value that the method names. A field that is there but
+ * cannot be what it should be sets `fault`, at which the decoder looks once, at its end.
  *
  * Doubles are written to columns, not returned: a returned one may be put on the heap.
  *
- * Accuracy: with up to 15 digits together, the quotient that makes the value is one of two exact
- * numbers, and so the double nearest to what is printed; 16 to 18 digits may miss it by one unit in
- * the last place. Decimals beyond the ninth are passed over (2 µm of latitude).
+ * Accuracy: digits before and behind the point are gathered as two integers. With up to 15 digits
+ * together, the quotient that makes the value is one of two exact numbers, and so the double
+ * nearest to what is printed; 16 to 18 digits may miss it by one unit in the last place. Decimals
+ * beyond the ninth are passed over (2 µm of latitude).
  */
 export class SentenceFields {
   /** Why the sentence cannot be believed; `Rejection.none` while all is well. */
   fault: Rejection = Rejection.none;
   #bytes: Uint8Array = new Uint8Array(0);
-  #count = 0;
-  readonly #shapes = new Int32Array(MOST_FIELDS + 1);
-  readonly #starts = new Int32Array(MOST_FIELDS + 2);
-  readonly #wholes = new Int32Array(MOST_FIELDS + 1);
-  readonly #fractions = new Int32Array(MOST_FIELDS + 1);
+  #from = 0;
+  #end = 0;
+  readonly #layouts: Array<FieldLayout | undefined> = Array(KINDS * LAYOUTS_PER_KIND).fill(
+    undefined,
+  );
+  #layout = new FieldLayout();
+  /** Whether the layout was learned from this very sentence. */
+  #isLearned = false;
+  // The number read last.
+  #whole = 0;
+  #fraction = 0;
 
   get count(): number {
-    return this.#count;
+    return this.#layout.count;
   }
 
   /**
-   * Splits a sentence.
+   * Begins with a sentence.
    *
    * @param from the first byte of the first field
-   * @param end  the place of `*`; the byte there must be readable
+   * @param end  the place of `*`
+   * @param kind a `SentenceKind`: sentences of one kind have similar layouts
    */
-  split(bytes: Uint8Array, from: number, end: number): void {
-    const shapes = this.#shapes;
-    const starts = this.#starts;
-    const wholes = this.#wholes;
-    const fractions = this.#fractions;
-    let count = 0;
-    let at = from;
-    while (at <= end && count < MOST_FIELDS) {
-      starts[count] = at;
-      let byte = at < end ? (bytes[at] ?? 0) : COMMA;
-      if (byte === COMMA) {
-        shapes[count] = EMPTY;
-      } else {
-        let shape = NUMBER;
-        if (byte === MINUS || byte === PLUS) {
-          if (byte === MINUS) shape |= NEGATIVE;
-          at += 1;
-        }
-        const first = at;
-        let value = 0;
-        byte = (bytes[at] ?? 0) - ZERO;
-        while (byte >= 0 && byte <= 9) {
-          value = (Math.imul(value, 10) + byte) | 0;
-          at += 1;
-          byte = (bytes[at] ?? 0) - ZERO;
-        }
-        const wholeDigits = at - first;
-        wholes[count] = value;
-        value = 0;
-        let decimals = 0;
-        if (byte === DOT - ZERO) {
-          const point = at;
-          at += 1;
-          byte = (bytes[at] ?? 0) - ZERO;
-          while (byte >= 0 && byte <= 9) {
-            value = (Math.imul(value, 10) + byte) | 0;
-            at += 1;
-            byte = (bytes[at] ?? 0) - ZERO;
-          }
-          decimals = at - point - 1;
-          if (decimals > MOST_DIGITS) {
-            decimals = MOST_DIGITS;
-            value = firstDigits(bytes, point + 1, MOST_DIGITS);
-          }
-        }
-        fractions[count] = value;
-        const isEnd = at >= end || byte === COMMA - ZERO;
-        if (!isEnd || wholeDigits > MOST_DIGITS || wholeDigits + decimals === 0) {
-          shape = OTHER;
-          while (at < end && bytes[at] !== COMMA) at += 1;
-        }
-        shapes[count] = shape | (wholeDigits << WHOLE_DIGITS_SHIFT) | decimals;
-      }
-      at += 1;
-      count += 1;
-    }
-    starts[count] = at;
-    for (let k = count; k < this.#count; k += 1) shapes[k] = EMPTY;
+  begin(bytes: Uint8Array, from: number, end: number, kind: number): void {
     this.#bytes = bytes;
-    this.#count = count;
+    this.#from = from;
+    this.#end = end;
     this.fault = Rejection.none;
+    const slot = kind * LAYOUTS_PER_KIND + ((end - from) & (LAYOUTS_PER_KIND - 1));
+    let layout = this.#layouts[slot];
+    if (layout === undefined) {
+      layout = new FieldLayout();
+      this.#layouts[slot] = layout;
+    }
+    this.#layout = layout;
+    this.#isLearned = !layout.fits(bytes, from, end);
+    if (this.#isLearned) layout.learn(bytes, from, end);
   }
 
   /** Decimals of a number, of the minutes of an angle; −1 when absent. */
   decimals(field: number): number {
-    const shape = this.#shapes[field] ?? EMPTY;
-    return shape === EMPTY ? -1 : shape & DIGITS_MASK;
+    const shape = this.#shape(field);
+    return shape === FieldShape.empty ? -1 : shape & FieldShape.decimals;
   }
 
   /** The first byte; 0 when absent. */
   letter(field: number): number {
-    if ((this.#shapes[field] ?? EMPTY) === EMPTY) return 0;
-    return this.#bytes[this.#starts[field] ?? 0] ?? 0;
+    return this.#shape(field) === FieldShape.empty ? 0 : this.byte(field, 0);
   }
 
   /** The number of bytes. */
   length(field: number): number {
-    if ((this.#shapes[field] ?? EMPTY) === EMPTY) return 0;
-    return (this.#starts[field + 1] ?? 0) - (this.#starts[field] ?? 0) - 1;
+    if (this.#shape(field) === FieldShape.empty) return 0;
+    const {starts} = this.#layout;
+    return (starts[field + 1] ?? 0) - (starts[field] ?? 0) - 1;
   }
 
   /** The byte at a place in a field, from 0. */
   byte(field: number, place: number): number {
-    return this.#bytes[(this.#starts[field] ?? 0) + place] ?? 0;
+    return this.#bytes[this.#from + (this.#layout.starts[field] ?? 0) + place] ?? 0;
   }
 
   /** One hexadecimal digit; −1 when absent or anything else. */
@@ -157,47 +110,45 @@ export class SentenceFields {
 
   /** A whole number without sign; −1 when absent. */
   whole(field: number): number {
-    const shape = this.#shapes[field] ?? EMPTY;
-    if (shape === EMPTY) return -1;
-    if ((shape & ~(DIGITS_MASK << WHOLE_DIGITS_SHIFT)) !== NUMBER) this.fault = Rejection.number;
-    return this.#wholes[field] ?? 0;
+    const shape = this.#read(field);
+    if (shape === FieldShape.empty) return -1;
+    if ((shape & ~FieldShape.wholeDigits) !== FieldShape.number) this.fault = Rejection.number;
+    return this.#whole;
   }
 
   /** A station that is a number; −1 when absent or named by letters, as some services do. */
   stationId(field: number): number {
-    const shape = this.#shapes[field] ?? EMPTY;
-    const isWhole = (shape & ~(DIGITS_MASK << WHOLE_DIGITS_SHIFT)) === NUMBER;
-    return isWhole ? (this.#wholes[field] ?? 0) : -1;
+    const isWhole = (this.#read(field) & ~FieldShape.wholeDigits) === FieldShape.number;
+    return isWhole ? this.#whole : -1;
   }
 
   decimalTo(column: Float64Array, row: number, field: number): void {
-    const shape = this.#shapes[field] ?? EMPTY;
-    if (shape === EMPTY) {
+    const shape = this.#read(field);
+    if (shape === FieldShape.empty) {
       column[row] = Number.NaN;
       return;
     }
-    if ((shape & NUMBER) === 0) this.fault = Rejection.number;
-    const power = POWERS_OF_TEN[shape & DIGITS_MASK] ?? 1;
-    const size = ((this.#wholes[field] ?? 0) * power + (this.#fractions[field] ?? 0)) / power;
-    column[row] = (shape & NEGATIVE) === 0 ? size : -size;
+    if ((shape & FieldShape.number) === 0) this.fault = Rejection.number;
+    const power = POWERS_OF_TEN[shape & FieldShape.decimals] ?? 1;
+    const size = (this.#whole * power + this.#fraction) / power;
+    column[row] = (shape & FieldShape.negative) === 0 ? size : -size;
   }
 
   /** `hhmmss.s` as seconds of the UTC day; 235960 gives 86400. */
   timeOfDayTo(column: Float64Array, row: number, field: number): void {
-    const shape = this.#shapes[field] ?? EMPTY;
-    if (shape === EMPTY) {
+    const shape = this.#read(field);
+    if (shape === FieldShape.empty) {
       column[row] = Number.NaN;
       return;
     }
-    const whole = this.#wholes[field] ?? 0;
-    const power = POWERS_OF_TEN[shape & DIGITS_MASK] ?? 1;
+    const whole = this.#whole;
+    const power = POWERS_OF_TEN[shape & FieldShape.decimals] ?? 1;
     const hour = Math.trunc(whole / 10_000);
     const minute = Math.trunc(whole / 100) % 100;
-    const second = ((whole % 100) * power + (this.#fractions[field] ?? 0)) / power;
+    const second = ((whole % 100) * power + this.#fraction) / power;
     const isLeapSecond = second >= 60 && second < 61 && hour === 23 && minute === 59;
     if (hour > 23 || minute > 59 || (second >= 60 && !isLeapSecond)) this.fault = Rejection.time;
-    if ((shape & ~DIGITS_MASK) !== (NUMBER | (6 << WHOLE_DIGITS_SHIFT)))
-      this.fault = Rejection.time;
+    if ((shape & ~FieldShape.decimals) !== wholeShape(6)) this.fault = Rejection.time;
     column[row] = hour * 3600 + minute * 60 + second;
   }
 
@@ -218,28 +169,26 @@ export class SentenceFields {
   }
 
   #angleTo(column: Float64Array, row: number, field: number, limitDeg: number): void {
-    const shape = this.#shapes[field] ?? EMPTY;
-    if (shape === EMPTY) {
+    const shape = this.#read(field);
+    if (shape === FieldShape.empty) {
       column[row] = Number.NaN;
       return;
     }
-    const whole = this.#wholes[field] ?? 0;
-    const power = POWERS_OF_TEN[shape & DIGITS_MASK] ?? 1;
-    const degrees = Math.trunc(whole / 100);
-    const minutes = ((whole % 100) * power + (this.#fractions[field] ?? 0)) / power;
+    const power = POWERS_OF_TEN[shape & FieldShape.decimals] ?? 1;
+    const degrees = Math.trunc(this.#whole / 100);
+    const minutes = ((this.#whole % 100) * power + this.#fraction) / power;
     const angleDeg = degrees + minutes / 60;
-    if ((shape & (NUMBER | NEGATIVE)) !== NUMBER || minutes >= 60 || angleDeg > limitDeg) {
-      this.fault = Rejection.position;
-    }
+    const isPlain = (shape & (FieldShape.number | FieldShape.signed)) === FieldShape.number;
+    if (!isPlain || minutes >= 60 || angleDeg > limitDeg) this.fault = Rejection.position;
     column[row] = angleDeg;
   }
 
-  /** `ddmmyy` as days since 1970-01-01, `NO_DATE` if absent. */
+  /** `ddmmyy` as days since 1970-01-01; `NO_DATE` if absent. */
   shortDateDays(field: number): number {
-    const shape = this.#shapes[field] ?? EMPTY;
-    if (shape === EMPTY) return NO_DATE;
-    if (shape !== (NUMBER | (6 << WHOLE_DIGITS_SHIFT))) this.fault = Rejection.date;
-    const whole = this.#wholes[field] ?? 0;
+    const shape = this.#read(field);
+    if (shape === FieldShape.empty) return NO_DATE;
+    if (shape !== wholeShape(6)) this.fault = Rejection.date;
+    const whole = this.#whole;
     const year = fullYear(whole % 100);
     return this.#daysOf(year, Math.trunc(whole / 100) % 100, Math.trunc(whole / 10_000));
   }
@@ -254,6 +203,32 @@ export class SentenceFields {
     const year = this.whole(field + 2);
     if (day < 0 || month < 0 || year < 0) return NO_DATE;
     return this.#daysOf(this.length(field + 2) === 2 ? fullYear(year) : year, month, day);
+  }
+
+  #shape(field: number): number {
+    return this.#layout.shapes[field] ?? FieldShape.empty;
+  }
+
+  /** Reads the digits of a number into `#whole` and `#fraction`; returns the shape of the field. */
+  #read(field: number): number {
+    const shape = this.#shape(field);
+    if (shape === FieldShape.empty) return shape;
+    if (shape !== FieldShape.other) {
+      const start = this.#from + (this.#layout.starts[field] ?? 0);
+      const wholeAt = (shape & FieldShape.signed) === 0 ? start : start + 1;
+      const wholeDigits = (shape & FieldShape.wholeDigits) >> 4;
+      const decimals = shape & FieldShape.decimals;
+      const whole = digitsAt(this.#bytes, wholeAt, wholeDigits);
+      const fraction =
+        decimals === 0 ? 0 : digitsAt(this.#bytes, wholeAt + wholeDigits + 1, decimals);
+      this.#whole = whole;
+      this.#fraction = fraction;
+      if (whole >= 0 && fraction >= 0) return shape;
+    }
+    if (this.#isLearned) return shape;
+    this.#isLearned = true;
+    this.#layout.learn(this.#bytes, this.#from, this.#end);
+    return this.#read(field);
   }
 
   /** A date before GPS time is what a receiver prints that does not know the date. */
@@ -273,8 +248,14 @@ function fullYear(shortYear: number): number {
   return shortYear < 80 ? 2000 + shortYear : 1900 + shortYear;
 }
 
-function firstDigits(bytes: Uint8Array, from: number, digits: number): number {
+/** The number that so many digits make, at most nine; negative when a byte among them is no digit. */
+function digitsAt(bytes: Uint8Array, from: number, digits: number): number {
   let value = 0;
-  for (let k = 0; k < digits; k += 1) value = value * 10 + ((bytes[from + k] ?? 0) - ZERO);
-  return value;
+  let strange = 0;
+  for (let at = from; at < from + digits; at += 1) {
+    const digit = (bytes[at] ?? 0) - ZERO;
+    strange |= digit | (9 - digit);
+    value = (Math.imul(value, 10) + digit) | 0;
+  }
+  return strange < 0 ? -1 : value;
 }
