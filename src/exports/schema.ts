@@ -151,6 +151,15 @@ const STABILITY = object({
       beside: listOf(TEXT),
     }),
   ),
+  settling: orNull(
+    object({
+      timeConstantS: NUMBER,
+      eastM: LENGTH_M,
+      northM: LENGTH_M,
+      upM: orNull(LENGTH_M),
+      material: FLAG,
+    }),
+  ),
   movementLimitM: object({horizontal: orNull(LENGTH_M), up: orNull(LENGTH_M)}),
 });
 

@@ -17,6 +17,7 @@ const RULES: readonly Rule[] = [
     severity: 'absent',
     when: (result) => result.command === 'reduce',
   },
+  {path: /^stability\.settling$/, code: 'no-settling', severity: 'absent'},
   {path: /\.(frame|frameFrom|coordinateEpoch)$/, code: 'frame-not-stated', severity: 'caution'},
   {path: /\.grid$/, code: 'grid-not-asked', severity: 'absent'},
   {path: /\.(sharedBy|id)$/, code: 'budget-row-not-shared', severity: 'absent'},

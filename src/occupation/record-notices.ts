@@ -138,7 +138,15 @@ export function noticeStability({stability, epochs}: Result, notices: NoticeList
       upMPerHour: up?.material === true ? up.rateMPerHour : null,
     });
   }
-  if (stability.verdict === 'settling') notices.add('concern', 'settling', ['position']);
+  const {settling} = stability;
+  if (settling !== null) {
+    const values = {
+      timeConstantS: settling.timeConstantS,
+      sizeM: Math.hypot(settling.eastM, settling.northM, settling.upM ?? 0),
+    };
+    const code = settling.material ? 'settling-material' : 'settling-small';
+    notices.add(settling.material ? 'concern' : 'note', code, ['stability.settling'], values);
+  }
   if (epochs.gaps.length > 0) {
     const longest = epochs.gaps.reduce((a, b) => (b.durationS > a.durationS ? b : a));
     notices.add('note', 'gaps', ['epochs.gaps'], {

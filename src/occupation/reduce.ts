@@ -164,6 +164,7 @@ function withoutPosition(record: Record, outcome: ScreenOutcome): Reduced {
     verdict: travelling ? 'travelling' : 'cannot tell',
     drift: {east: null, north: null, up: null},
     steps: [],
+    settling: null,
     movementLimitM: {horizontal: request.movementLimitM, up: request.movementLimitM},
   };
   const result: Result = {

@@ -214,10 +214,21 @@ export interface Step {
   readonly beside: readonly string[];
 }
 
+/** Settling toward a final value: what was still to come at the start. */
+export interface SettlingFound {
+  readonly timeConstantS: number;
+  readonly eastM: number;
+  readonly northM: number;
+  readonly upM: number | null;
+  readonly material: boolean;
+}
+
 export interface Stability {
   readonly verdict: StabilityVerdict;
   readonly drift: PerAxis<Drift | null>;
   readonly steps: readonly Step[];
+  /** null when no settling was found. */
+  readonly settling: SettlingFound | null;
   readonly movementLimitM: {readonly horizontal: number | null; readonly up: number | null};
 }
 

@@ -43,6 +43,11 @@ export interface Session {
   readonly movement: Movement;
   readonly drift: PerAxis<FoundDrift | null>;
   readonly steps: readonly FoundStep[];
+  /** What was still to come at the start of a record that settles. */
+  readonly settling: {
+    readonly timeConstantS: number;
+    readonly sizeM: PerAxis<number | null>;
+  } | null;
   /** Codes of what limits the statements above, for notices. */
   readonly limits: readonly {readonly code: string; readonly axes: readonly string[]}[];
   /** Time for a 95 % horizontal radius of the session's own; null when it cannot be told. */
@@ -93,6 +98,7 @@ export function sessionOf(
       interval95GpsSeconds: [firstS + from, firstS + to],
       sizeM: {east: sizes[0] ?? null, north: sizes[1] ?? null, up: sizes[2] ?? null},
     })),
+    settling: settlingOf(analysis),
     limits: analysis.limits.map(({code, components: concerned}) => ({
       code,
       axes: concerned.map((component) => AXES[component]!),
@@ -119,6 +125,15 @@ function quantisation(components: readonly ComponentAnalysis[]): PerAxis<number 
     ({quantisation95, halfWidth95}) => quantisation95 > NOTICEABLE_SHARE * (halfWidth95 ?? 0),
   );
   return noticeable ? perAxis(components, (one) => one.quantisation95 / NORMAL_95) : null;
+}
+
+function settlingOf({settling}: SessionAnalysis): Session['settling'] {
+  if (settling === undefined) return null;
+  const [east, north, up] = settling.sizes;
+  return {
+    timeConstantS: settling.timeConstantS,
+    sizeM: {east: east ?? null, north: north ?? null, up: up ?? null},
+  };
 }
 
 function foundDrift({drift}: ComponentAnalysis): FoundDrift | undefined {

@@ -1,6 +1,6 @@
 import {isoUtc} from '../time/gps-time.ts';
 import type {Asked} from './compare.ts';
-import type {Drift, PerAxis, Stability, StabilityVerdict, Step} from './result.ts';
+import type {Drift, PerAxis, SettlingFound, Stability, StabilityVerdict, Step} from './result.ts';
 import type {FoundDrift, FoundStep, Session} from './session.ts';
 
 const SECONDS_PER_HOUR = 3600;
@@ -63,10 +63,10 @@ function materialSteps(session: Session, rule: MovementRule): Materiality {
     .map(({sizeM}, number) => ({number, sizeM}))
     .sort((a, b) => horizontalM(b) - horizontalM(a) || a.number - b.number);
   const material: number[] = [];
-  const drift = session.movement === 'drift';
-  let limit = limitOf(halfWidths95Without({steps: [], drift}), rule);
+  const other = {drift: session.movement === 'drift', settling: session.movement === 'settling'};
+  let limit = limitOf(halfWidths95Without({steps: [], ...other}), rule);
   for (const step of order) {
-    limit = limitOf(halfWidths95Without({steps: [...material, step.number], drift}), rule);
+    limit = limitOf(halfWidths95Without({steps: [...material, step.number], ...other}), rule);
     const matters =
       exceeds(horizontalM(step), limit.horizontal) || exceeds(step.sizeM.up ?? 0, limit.up);
     if (!matters) break;
@@ -99,15 +99,17 @@ export function stabilityOf(
     ...stepOf(step, besideStep(step)),
     material: material.has(number),
   }));
+  const settling = settlingOf(session, limit);
   const drift: PerAxis<Drift | null> = {
     east: driftOf(session.drift.east, spanS, limit.horizontal),
     north: driftOf(session.drift.north, spanS, limit.horizontal),
     up: driftOf(session.drift.up, spanS, limit.up),
   };
   return {
-    verdict: verdictOf(session, steps, drift, limit),
+    verdict: verdictOf(session, {steps, drift, settling, limit}),
     drift,
     steps,
+    settling,
     movementLimitM: limit,
   };
 }
@@ -142,13 +144,29 @@ function driftOf(found: FoundDrift | null, spanS: number, limitM: number | null)
 
 function verdictOf(
   session: Session,
-  steps: readonly Step[],
-  drift: PerAxis<Drift | null>,
-  limit: MovementLimit,
+  found: {
+    readonly steps: readonly Step[];
+    readonly drift: PerAxis<Drift | null>;
+    readonly settling: SettlingFound | null;
+    readonly limit: MovementLimit;
+  },
 ): StabilityVerdict {
+  const {steps, drift, settling, limit} = found;
   if (session.movement === 'cannot tell' || limit.horizontal === null) return 'cannot tell';
   if (steps.some(({material}) => material)) return 'stepped';
   const drifts = [drift.east, drift.north, drift.up].some((axis) => axis?.material === true);
   if (session.movement === 'drift' && drifts) return 'drifting';
-  return session.movement === 'settling' ? 'settling' : 'still';
+  return settling?.material === true ? 'settling' : 'still';
+}
+
+function settlingOf({settling}: Session, limit: MovementLimit): SettlingFound | null {
+  if (settling === null) return null;
+  const {east, north, up} = settling.sizeM;
+  return {
+    timeConstantS: settling.timeConstantS,
+    eastM: east ?? 0,
+    northM: north ?? 0,
+    upM: up,
+    material: exceeds(horizontalM(settling), limit.horizontal) || exceeds(up ?? 0, limit.up),
+  };
 }

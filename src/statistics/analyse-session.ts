@@ -2,12 +2,12 @@ import {type RatioScores, ratioScores} from './likelihood-ratios.ts';
 import {errorCorrelation, type MeanUncertainty, meanUncertainties} from './mean-uncertainty.ts';
 import {fitModels, type ModelFit} from './model-fits.ts';
 import {moments} from './moments.ts';
+import {movementSizes, settlingRegressor, stepRegressor} from './movement-sizes.ts';
 import {type MovingSumStep, movingSumStep, refineStepTime} from './moving-sums.ts';
 import {medianInPlace} from './quantile.ts';
 import {type RequiredTime, requiredTime} from './required-time.ts';
 import {medianSpacing} from './robust.ts';
 import {jointSlopeScore, type Slope, slopes} from './slope.ts';
-import {stepSizes} from './step-sizes.ts';
 import {type TimeCells, timeCells} from './time-cells.ts';
 
 /** One static record, screened: east, north and, where the record has a height, up. */
@@ -57,6 +57,12 @@ export interface StepAnalysis {
   readonly standardErrors: readonly (number | undefined)[];
 }
 
+/** Settling toward a final value: what was still to come at the start, per component. */
+export interface SettlingAnalysis {
+  readonly timeConstantS: number;
+  readonly sizes: readonly (number | undefined)[];
+}
+
 export type Movement = 'none' | 'step' | 'drift' | 'settling' | 'cannot tell';
 
 export interface SessionAnalysis {
@@ -65,6 +71,8 @@ export interface SessionAnalysis {
   readonly planCorrelation: number;
   readonly movement: Movement;
   readonly steps: readonly StepAnalysis[];
+  /** Present when the record settles. */
+  readonly settling: SettlingAnalysis | undefined;
   /** Codes with the components that they concern. */
   readonly limits: readonly {readonly code: SessionLimit; readonly components: readonly number[]}[];
   /**
@@ -91,10 +99,11 @@ const SLOW = 0.5;
 /** Spread within a quantum below which averaging cannot look between the digits. */
 const DITHER = 0.3;
 
-/** Movement to be thought away: steps by their number, or the drift. */
+/** Movement to be thought away: steps by their number, the drift, or the settling. */
 export interface TakenOut {
   readonly steps: readonly number[];
-  readonly drift: boolean;
+  readonly drift?: boolean;
+  readonly settling?: boolean;
 }
 
 /** Everything the record itself can say about its mean and about movement. O(n). */
@@ -170,6 +179,7 @@ function untold(known: readonly Known[], code: SessionLimit): SessionAnalysis {
     planCorrelation: 0,
     movement: 'cannot tell',
     steps: [],
+    settling: undefined,
     limits: [{code, components: known.map((_, c) => c)}],
     slowProbability: 0,
     halfWidthsWithout: () => known.map(() => undefined),
@@ -203,6 +213,7 @@ function analysed(record: Analysable): SessionAnalysis {
     planCorrelation: pooled ? errorCorrelation(fits, 0, 1) : 0,
     movement: movement.kind,
     steps: movement.steps,
+    settling: movement.settling,
     limits: limitsOf(record, components, uncertainties, movement.testable),
     slowProbability,
     halfWidthsWithout: (takenOut) => halfWidthsWithout(record, movement, takenOut, pooled),
@@ -317,6 +328,7 @@ function tested(record: Analysable, fits: readonly ModelFit[]): Testable {
 interface FoundMovement {
   readonly kind: Movement;
   readonly steps: readonly StepAnalysis[];
+  readonly settling: (SettlingAnalysis & {readonly part: number}) | undefined;
   /** By number of the component; of the record without its steps where it has some. */
   readonly drifts: ReadonlyMap<number, Slope>;
   /** Whether enough of the record is there to be tested. */
@@ -337,17 +349,26 @@ function movementOf(part: Testable, slowProbability: number): FoundMovement {
   const {cells, fits, columns, numbers, pooled, record} = part;
   const enough = cells.index.length >= LEAST_CELLS_SHARE * cells.expected;
   if (numbers.length === 0 || !enough) {
-    return {kind: 'cannot tell', steps: [], drifts: new Map(), testable: enough};
+    return {
+      kind: 'cannot tell',
+      steps: [],
+      settling: undefined,
+      drifts: new Map(),
+      testable: enough,
+    };
   }
   const scores = ratioScores(cells, fits);
   const sums = movingSumStep(record.input.elapsedS, columns, record.spacingS);
   const drifts = slopes(cells, fits, pooled);
   const kind = kindOf(scores, sums, drifts, stepThreshold(cells, slowProbability));
-  if (kind !== 'step') return {kind, steps: [], drifts: numbered(numbers, drifts), testable: true};
+  if (kind !== 'step') {
+    const settling = kind === 'settling' ? settlingOf(part, scores.settling.part) : undefined;
+    return {kind, steps: [], settling, drifts: numbered(numbers, drifts), testable: true};
+  }
   const steps = sizedSteps(part, stepTimes(part, scores, sums));
   const quiet = withoutSteps(cells, numbers, record.input.elapsedS[0]!, steps);
   const left = slopes(quiet, fitModels(quiet), pooled);
-  return {kind, steps, drifts: numbered(numbers, left), testable: true};
+  return {kind, steps, settling: undefined, drifts: numbered(numbers, left), testable: true};
 }
 
 function numbered(numbers: readonly number[], drifts: readonly Slope[]): Map<number, Slope> {
@@ -356,12 +377,14 @@ function numbered(numbers: readonly number[], drifts: readonly Slope[]): Map<num
 
 /** One word for the record; later rules override earlier ones. */
 function kindOf(
-  {step, drift, settling}: RatioScores,
+  scores: RatioScores,
   sums: MovingSumStep | undefined,
   drifts: readonly Slope[],
   threshold: number,
 ): Movement {
   let kind: Movement = 'none';
+  const settling = scores.settling.score;
+  const {step, drift} = scores;
   if (settling > SETTLING_SCORE) kind = 'settling';
   if (step.score > threshold && step.score - threshold > settling - SETTLING_SCORE) kind = 'step';
   if (jointSlopeScore(drifts) > DRIFT_SCORE && drift >= settling - 4 && drift >= step.score - 10) {
@@ -484,7 +507,12 @@ function sizedSteps(part: Testable, times: readonly TimedStep[]): StepAnalysis[]
   const {cells, fits, numbers, record, pooled} = part;
   const firstS = record.input.elapsedS[0]!;
   const atCells = times.map(({atS}) => (atS - firstS) / cells.widthS);
-  const sized = stepSizes(cells, fits, atCells, pooled);
+  const sized = movementSizes(
+    cells,
+    fits,
+    atCells.map((atCell) => stepRegressor(cells, atCell)),
+    pooled,
+  );
   return times.map(({atS, interval95S}, i) => ({
     elapsedS: atS,
     interval95S,
@@ -493,17 +521,42 @@ function sizedSteps(part: Testable, times: readonly TimedStep[]): StepAnalysis[]
   }));
 }
 
+function settlingOf({cells, fits, numbers, record, pooled}: Testable, part: number) {
+  const sized = movementSizes(cells, fits, [settlingRegressor(cells, part)], pooled);
+  return {
+    part,
+    timeConstantS: part * cells.spanS,
+    sizes: record.known.map((_, c) => sized[numbers.indexOf(c)]?.sizes[0]),
+  };
+}
+
 function halfWidthsWithout(
   {cells, varying, known, input}: Analysable,
-  {steps, drifts}: FoundMovement,
+  {steps, drifts, settling}: FoundMovement,
   takenOut: TakenOut,
   pooled: boolean,
 ): (number | undefined)[] {
   const gone = takenOut.steps.map((step) => steps[step]!);
   let quiet = withoutSteps(cells, varying, input.elapsedS[0]!, gone);
-  if (takenOut.drift) quiet = withoutLines(quiet, varying, drifts);
+  if (takenOut.drift === true) quiet = withoutLines(quiet, varying, drifts);
+  if (takenOut.settling === true && settling !== undefined) {
+    quiet = withoutSettling(quiet, varying, settling);
+  }
   const found = meanUncertainties(quiet, fitModels(quiet), quiet.means.map(meanOfCells), pooled);
   return known.map((_, c) => (varying.includes(c) ? found[varying.indexOf(c)]!.halfWidth95 : 0));
+}
+
+function withoutSettling(
+  cells: TimeCells,
+  numbers: readonly number[],
+  {part, sizes}: SettlingAnalysis & {readonly part: number},
+): TimeCells {
+  const left = settlingRegressor(cells, part);
+  const means = cells.means.map((column, at) => {
+    const size = sizes[numbers[at]!] ?? 0;
+    return column.map((value, k) => value - size * left[k]!);
+  });
+  return {...cells, means};
 }
 
 function withoutLines(

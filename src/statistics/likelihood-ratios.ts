@@ -1,4 +1,5 @@
 import {dot, type ModelFit} from './model-fits.ts';
+import {settlingRegressor} from './movement-sizes.ts';
 import {type Factor, whiten} from './semiseparable.ts';
 import type {TimeCells} from './time-cells.ts';
 
@@ -65,11 +66,17 @@ class RatioSum {
   }
 }
 
+export interface SettlingScore {
+  readonly score: number;
+  /** Time constant as a part of the record. */
+  readonly part: number;
+}
+
 /** The scores of a step at the best place, of a line, and of settling. */
 export interface RatioScores {
   readonly step: StepScore;
   readonly drift: number;
-  readonly settling: number;
+  readonly settling: SettlingScore;
 }
 
 export function ratioScores(cells: TimeCells, fits: readonly ModelFit[]): RatioScores {
@@ -79,19 +86,16 @@ export function ratioScores(cells: TimeCells, fits: readonly ModelFit[]): RatioS
   return {
     step: bestStep(sum, fits, m),
     drift: sum.score(fits.map((fit) => explainedBy(fit, index))),
-    settling: Math.max(
-      ...SETTLING_PARTS.map((part) =>
-        sum.score(
-          fits.map((fit) =>
-            explainedBy(
-              fit,
-              index.map((i) => Math.exp(-i / (cells.expected * part))),
-            ),
-          ),
-        ),
-      ),
-    ),
+    settling: bestSettling(sum, fits, cells),
   };
+}
+
+function bestSettling(sum: RatioSum, fits: readonly ModelFit[], cells: TimeCells): SettlingScore {
+  const scores = SETTLING_PARTS.map((part) => {
+    const regressor = settlingRegressor(cells, part);
+    return {part, score: sum.score(fits.map((fit) => explainedBy(fit, regressor)))};
+  });
+  return scores.reduce((best, one) => (one.score > best.score ? one : best));
 }
 
 /** Squares of each component that a regressor explains beyond a constant. */

@@ -57,8 +57,10 @@ export const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
     `${numberIn(v, 'count')} small jumps of the positions were found, the largest ${formatLength(numberIn(v, 'sizeM'))} at ${formatUtc(textIn(v, 'utc'))} UTC${beside(v)}; all are below what matters for this record.`,
   'drift-material': (v) =>
     `The positions drift (${axisRates(v)}), by more over the record than may be overlooked. Check that tripod and tribrach were firm, and measure again.`,
-  settling: () =>
-    'The positions settle toward a final value during the record. Leave the start out with --settle, or let the setup rest longer before logging.',
+  'settling-material': (v) =>
+    `The positions settle by ${formatLength(numberIn(v, 'sizeM'))} toward a final value, two thirds of it in the first ${formatDuration(numberIn(v, 'timeConstantS'))}. Leave the start out with --settle, or let the setup rest longer before logging.`,
+  'settling-small': (v) =>
+    `The positions settle by ${formatLength(numberIn(v, 'sizeM'))} in the first ${formatDuration(numberIn(v, 'timeConstantS'))} or so, less than what matters for this record.`,
   gaps: (v) =>
     `${numberIn(v, 'count')} gaps, the longest ${formatDuration(numberIn(v, 'longestS'))} from ${formatUtc(textIn(v, 'fromUtc'))} UTC.`,
   'segments-not-compared': (v) =>
@@ -77,6 +79,7 @@ export const MISSING_SENTENCES: Readonly<Record<string, Sentence>> = {
   'nothing-compared': () => 'Nothing was compared: `check` compares with a known mark.',
   'frame-not-stated': () =>
     'The frame or coordinate epoch of the positions was not stated; under corrections it is that of the base or network. Give --frame and --coordinate-epoch.',
+  'no-settling': () => 'No settling was found.',
   'grid-not-asked': () => 'No grid coordinates were asked for.',
   'budget-row-not-shared': () => 'A contribution to the budget that no other occupation shares.',
   'budget-row-not-included': () => 'A contribution to the budget that nobody gave is not included.',

@@ -1,4 +1,5 @@
 import {type Epochs, FixClass, SatelliteSystem, type Satellites} from '../../src/epochs/epochs.ts';
+import {emptySheet} from '../../src/fieldbook/sheet.ts';
 import type {
   Candidate,
   Notice,
@@ -10,6 +11,7 @@ import type {
   Step,
 } from '../../src/occupation/result.ts';
 import {buildSeries, type ChartSeries} from '../../src/occupation/series.ts';
+import {sheetItems} from '../../src/occupation/sheet-items.ts';
 
 /*
  * Invented occupations for the tests of the report: seeded, far from any real place or person.
@@ -131,6 +133,13 @@ export function randomOf(seed: number): () => number {
 function normalOf(random: () => number): () => number {
   return () => Math.sqrt(-2 * Math.log(1 - random())) * Math.cos(2 * Math.PI * random());
 }
+
+/** What the field sheet of the samples states; everything else in it is left blank. */
+const STATED: Readonly<Record<string, string>> = {
+  purpose: 'opening check before the survey of the slipway',
+  weather: 'overcast, wind from the west',
+  problems: 'none',
+};
 
 /** GPS seconds of 2026-05-04T06:00:00Z. */
 const START = 1_461_909_618;
@@ -376,15 +385,10 @@ function resultOf(spec: SampleSpec, columns: Columns, series: ChartSeries): Resu
       antennaHeightM: 1.513,
       heightUsed: 'opening',
     },
-    fieldSheet: [
-      {section: 'Occupation', item: 'Mark', value: spec.names.mark},
-      {section: 'Occupation', item: 'How the mark was identified', value: null},
-      {section: 'Occupation', item: 'Observer', value: null},
-      {section: 'Equipment', item: 'Receiver and antenna, serial numbers', value: null},
-      {section: 'Equipment', item: 'Antenna height, opening', value: '1.513 m, vertical to ARP'},
-      {section: 'Equipment', item: 'Antenna height, closing', value: null},
-      {section: 'Conditions', item: 'Weather', value: 'overcast, wind from the west'},
-    ],
+    fieldSheet: sheetItems(emptySheet()).map((item) => ({
+      ...item,
+      value: item.item === 'mark' ? spec.names.mark : (STATED[item.item] ?? null),
+    })),
     epochs: {
       read,
       used,
@@ -448,6 +452,7 @@ function resultOf(spec: SampleSpec, columns: Columns, series: ChartSeries): Resu
         used < 60 ? 'cannot tell' : jumped ? 'stepped' : spec.driftM > 0 ? 'drifting' : 'still',
       drift: driftOf(spec, used),
       steps,
+      settling: null,
       movementLimitM: {horizontal: 0.005, up: spec.heights ? 0.008 : null},
     },
     comparison: compared

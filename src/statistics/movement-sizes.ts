@@ -2,31 +2,27 @@ import {dot, type ModelFit, modelWeights} from './model-fits.ts';
 import {whiten} from './semiseparable.ts';
 import type {TimeCells} from './time-cells.ts';
 
-/** Sizes of the steps of one component, in their order in time. */
-export interface StepSizes {
+/** Sizes of movements of one component, in the order of their regressors. */
+export interface MovementSizes {
   readonly sizes: Float64Array;
   readonly standardErrors: Float64Array;
 }
 
 /**
- * The sizes of steps at known times, all at once, averaged over the noise models.
+ * The sizes of movements of known shape, all at once, averaged over the noise models.
  *
- * Method: generalised least squares with a constant and one regressor a step, zero before it and
- * one after it; the cell that the step falls into takes the part of it that comes after.
+ * Method: generalised least squares with a constant and the regressors.
  *
- * @param stepCells  m-cell positions of the steps on the scale of the cell numbers, fractions kept
+ * @param regressors  m values each, one per cell
  */
-export function stepSizes(
+export function movementSizes(
   cells: TimeCells,
   fits: readonly ModelFit[],
-  stepCells: readonly number[],
+  regressors: readonly Float64Array[],
   pooled: boolean,
-): StepSizes[] {
+): MovementSizes[] {
   const m = cells.index.length;
-  const k = stepCells.length;
-  const regressors = stepCells.map((at) =>
-    Float64Array.from(cells.index, (index) => Math.min(1, Math.max(0, index + 1 - at))),
-  );
+  const k = regressors.length;
   const rows = fits.map((fit) => regression(fit, regressors, m));
   const weights = modelWeights(
     fits.map(({model}) => model.logPrior),
@@ -47,6 +43,25 @@ export function stepSizes(
     }
     return {sizes, standardErrors: variances.map(Math.sqrt)};
   });
+}
+
+/**
+ * A step as a regressor: zero before it, one after it; the cell that it falls into takes the part
+ * of it that comes after.
+ *
+ * @param atCell  the step on the scale of the cell numbers, fractions kept
+ */
+export function stepRegressor({index}: TimeCells, atCell: number): Float64Array {
+  return Float64Array.from(index, (cell) => Math.min(1, Math.max(0, cell + 1 - atCell)));
+}
+
+/**
+ * Settling as a regressor: how much of it is still to come, e^(−t/κ), from one at the start.
+ *
+ * @param part  time constant as a part of the record
+ */
+export function settlingRegressor({index, expected}: TimeCells, part: number): Float64Array {
+  return Float64Array.from(index, (cell) => Math.exp(-cell / (expected * part)));
 }
 
 interface Regression {
