@@ -10,6 +10,7 @@ import {
   formatLength,
   formatUtc,
   joined,
+  type LengthScale,
   lengthScale,
 } from '../wording/numbers.ts';
 import {headline, type Tone} from '../wording/verdict.ts';
@@ -104,26 +105,30 @@ function numberTable(result: Result): string[] {
     rows.push(['sd of one epoch', standardDeviationM, r95M, '95 % radius of one epoch']);
   }
   if (rows.length === 0) return [];
-  const largestM = Math.max(
-    ...rows.flatMap(([, axes, horizontal]) =>
-      [axes.east, axes.north, axes.up, horizontal].map((value) => Math.abs(value ?? 0)),
-    ),
-  );
-  const scale = lengthScale(largestM);
-  const cell = (valueM: number | null, signed: boolean) => {
+  const head = ['east', 'north', 'up', 'horizontal'].map((name) => name.padStart(11)).join('');
+  return [`${' '.repeat(20)}${head}`, ...rows.map(numberRow)];
+}
+
+/** Each row in the unit that suits it: an offset of metres in height beside millimetres in plan. */
+function numberRow([name, axes, horizontal, note]: Row): string {
+  const values = [axes.east, axes.north, axes.up, horizontal];
+  const {unit, perM, decimals} = rowScale(values.filter((value) => value !== null));
+  const signed = name === 'offset';
+  const cells = values.map((valueM, i) => {
     if (valueM === null) return '-'.padStart(11);
-    const text = fixed(valueM * scale.perM, scale.decimals);
-    return (signed && valueM > 0 && Number(text) !== 0 ? `+${text}` : text).padStart(11);
-  };
-  const head = `${scale.unit.padEnd(16)}${['east', 'north', 'up', 'horizontal'].map((name) => name.padStart(11)).join('')}`;
-  return [
-    head,
-    ...rows.map(([name, axes, horizontal, note]) => {
-      const signed = name === 'offset';
-      const cells = [axes.east, axes.north, axes.up].map((value) => cell(value, signed)).join('');
-      return `${name.padEnd(16)}${cells}${cell(horizontal, false)}  ${note}`.trimEnd();
-    }),
-  ];
+    const text = fixed(valueM * perM, decimals);
+    const plus = signed && i < 3 && Number(text) > 0 ? '+' : '';
+    return `${plus}${text}`.padStart(11);
+  });
+  return `${name.padEnd(17)}${unit.padEnd(3)}${cells.join('')}  ${note}`.trimEnd();
+}
+
+/** Millimetres as long as the smallest value needs them and the largest still reads well. */
+function rowScale(valuesM: readonly number[]): LengthScale {
+  const sizes = valuesM.map(Math.abs).filter((size) => size > 0);
+  const largestM = Math.max(0, ...sizes);
+  const smallestM = Math.min(largestM, ...sizes);
+  return largestM < 10 && smallestM < 0.05 ? lengthScale(0.01) : lengthScale(largestM);
 }
 
 function shownPosition(result: Result): Position | null {

@@ -231,3 +231,15 @@ export function noticeComparison(
     }
   }
 }
+
+/** How long it would take to reach the radius that the user wishes, or the tolerance asks for. */
+export function noticeTime(
+  session: Session | null,
+  {wantM}: ReduceRequest,
+  notices: NoticeList,
+): void {
+  if (wantM === null) return;
+  const time = session?.timeForRadius(wantM) ?? null;
+  if (time === null) notices.add('caution', 'time-not-known', [], {wantM});
+  else notices.add('note', 'time-needed', [], {wantM, aboutS: time.aboutS, allowS: time.allowS});
+}

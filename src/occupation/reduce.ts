@@ -19,6 +19,7 @@ import {
   noticeScreening,
   noticeSession,
   noticeStability,
+  noticeTime,
 } from './record-notices.ts';
 import {eccentricityOf, reducedToMark} from './reduce-to-mark.ts';
 import {offsetFrom, referenceOf} from './reference.ts';
@@ -35,7 +36,7 @@ import type {
   Stability,
 } from './result.ts';
 import {scatterAbout} from './scatter.ts';
-import {type ScreenOutcome, screenByRules} from './screen.ts';
+import {reasonCode, type ScreenOutcome, screenByRules} from './screen.ts';
 import {screenNeighbours} from './screen-neighbours.ts';
 import {screeningOf} from './screening-of-record.ts';
 import {type Session, sessionOf} from './session.ts';
@@ -57,12 +58,12 @@ export interface Reduced {
 
 /** One occupation from the joined logs to the result: the whole line, in order. */
 export function reduceOccupation(request: ReduceRequest): Reduced {
-  const {epochs, resolution} = request.log;
+  const {epochs} = request.log;
   const notices = noticeList(request.say);
   noticeRecord(request, notices);
   const outcome = screenByRules(epochs, request.rules);
   const columns = localColumns(epochs, outcome.reason, request.ellipsoid);
-  const account = () => epochAccount(epochs, outcome.reason, resolution, request.ellipsoid);
+  const account = () => accountOf(request, outcome);
   if (columns === undefined)
     return withoutPosition({request, notices, account: account()}, outcome);
 
@@ -86,6 +87,10 @@ export function reduceOccupation(request: ReduceRequest): Reduced {
     notices.add(severity, code, ['occupation.antennaHeightM'], values);
   }
   return averaged({request, notices, account: account(), antenna}, outcome, atMark);
+}
+
+function accountOf({log, ellipsoid}: ReduceRequest, {reason}: ScreenOutcome): EpochAccount {
+  return epochAccount(log.epochs, reason, log.resolution, ellipsoid);
 }
 
 interface Record {
@@ -115,9 +120,9 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
     {statedM: request.movementLimitM, asked: request.asked},
     ({interval95GpsSeconds: [from, to]}) => besideStep(epochs, from, to, account.intervalS ?? 1),
   );
-  const sessions = parts(whole, stability, epochs.gpsSeconds).map((indices) =>
-    indices === whole.indices ? whole : session(request, columns, indices, account),
-  );
+  const cuts = materialCuts(whole, stability);
+  const sessions =
+    cuts.length === 0 ? [whole] : sessionsBetween(cuts, {record, outcome, columns, whole});
   const segments = sessions.map((part) => segmentOf(part, record, columns, outcome));
   const single = segments.length === 1 ? segments[0]! : null;
   const measured = (single ?? segmentOf(whole, record, columns, outcome)).position;
@@ -126,7 +131,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   const comparison =
     place === null || single === null ? null : comparisonOf(record, place, single.position);
   const result: Result = {
-    ...common(record),
+    ...common({...record, account: accountOf(request, outcome)}),
     reference,
     position: single?.position ?? null,
     segments,
@@ -149,6 +154,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   noticeReceiver(result, typicalStepM(columns, whole), notices);
   noticeStability(result, notices);
   noticeComparison(result, request, notices);
+  noticeTime(single === null ? null : whole, request, notices);
   return {
     result: explainNulls({...result, notices: notices.notices}, notices),
     ...aboutReference(columns, whole.meanM, offsetM),
@@ -235,21 +241,39 @@ function session(
   return sessionOf(log.epochs.gpsSeconds, columns, indices, account.resolutionM);
 }
 
-/** The stretches between material steps; the whole record when there is none. */
-function parts(whole: Session, {steps}: Stability, gpsSeconds: Float64Array): Uint32Array[] {
-  const {indices} = whole;
-  const cuts = whole.steps.filter((_, i) => steps[i]!.material).map((step) => step.gpsSeconds);
-  if (cuts.length === 0) return [indices];
-  const edges = [0, ...cuts.map((cut) => firstAtOrAfter(gpsSeconds, indices, cut)), indices.length];
-  return edges
-    .slice(1)
-    .map((end, i) => indices.subarray(edges[i]!, end))
-    .filter((part) => part.length > 0);
+/** Times of the material steps. */
+function materialCuts({steps: found}: Session, {steps}: Stability): number[] {
+  return found.filter((_, i) => steps[i]!.material).map(({gpsSeconds}) => gpsSeconds);
 }
 
-function firstAtOrAfter(gpsSeconds: Float64Array, indices: Uint32Array, time: number): number {
-  const position = indices.findIndex((index) => gpsSeconds[index]! >= time);
-  return position < 0 ? indices.length : position;
+interface Splitting {
+  readonly record: Record;
+  readonly outcome: ScreenOutcome;
+  readonly columns: LocalColumns;
+  readonly whole: Session;
+}
+
+/**
+ * The stretches between material steps, each screened again by itself: what was far from its
+ * neighbours across a jump need not be so within its own part.
+ */
+function sessionsBetween(
+  cuts: readonly number[],
+  {record, outcome, columns}: Splitting,
+): Session[] {
+  const {request, account} = record;
+  const {gpsSeconds} = request.log.epochs;
+  const {reason} = outcome;
+  const gross = reasonCode('far from its neighbours');
+  for (let i = 0; i < reason.length; i++) if (reason[i] === gross) reason[i] = 0;
+  const edges = [Number.NEGATIVE_INFINITY, ...cuts, Number.POSITIVE_INFINITY];
+  return edges.slice(1).flatMap((end, part) => {
+    const within = () =>
+      keptIndices(reason).filter((i) => gpsSeconds[i]! >= edges[part]! && gpsSeconds[i]! < end);
+    screenNeighbours(gpsSeconds, columns, within(), account.resolutionM, reason);
+    const indices = within();
+    return indices.length === 0 ? [] : [session(request, columns, indices, account)];
+  });
 }
 
 function segmentOf(

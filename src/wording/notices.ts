@@ -71,6 +71,10 @@ export const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
     'No tolerance was given, so there is nothing to decide: give --tolerance with its reason.',
   'tolerance-out-of-reach': (v) =>
     `No offset, not even zero, could be accepted against ${formatGivenLength(numberIn(v, 'toleranceM'))} (${textIn(v, 'of')}) with the uncertainty of this record.`,
+  'time-needed': (v) =>
+    `A 95 % horizontal radius of ${formatGivenLength(numberIn(v, 'wantM'))} would take a record of about ${formatDuration(numberIn(v, 'aboutS'))}; allow ${formatDuration(numberIn(v, 'allowS'))}. Base, antenna and mark add to it.`,
+  'time-not-known': (v) =>
+    `How long a 95 % horizontal radius of ${formatGivenLength(numberIn(v, 'wantM'))} would take cannot be told from this record: it is too far from what the record reaches, or the record too short.`,
 };
 
 /** Why a value is missing, for the notices that explain nulls. */

@@ -22,10 +22,7 @@ export function recomputed(input: DiagnosisInput, places: readonly Misplaced[]):
   const frame = localFrame({...markPlan, ellipsoidalHeightM}, ellipsoid);
   const planSigmaM = Math.sqrt(Math.max(covarianceM2[0]?.[0] ?? 0, covarianceM2[1]?.[1] ?? 0));
   return places.map(({latitudeDeg, longitudeDeg, upM, values}) => {
-    const {eastM, northM} = enuFromGeodetic(
-      {latitudeDeg, longitudeDeg, ellipsoidalHeightM},
-      frame,
-    );
+    const {eastM, northM} = enuFromGeodetic({latitudeDeg, longitudeDeg, ellipsoidalHeightM}, frame);
     return vector({eastM, northM, upM}, planSigmaM, 0, values);
   });
 }
