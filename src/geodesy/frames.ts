@@ -23,14 +23,13 @@ export interface FrameAndEpoch {
 }
 
 export interface TransformationRequest {
-  readonly ecef: Ecef;
   readonly from: FrameAndEpoch;
   readonly to: FrameAndEpoch;
   /** null: not said; an error when the epochs differ. */
   readonly motion: PointMotion | null;
 }
 
-/** One line of a hand calculation; `ecef` is the position after it. */
+/** One line of a hand calculation. */
 export type TransformationStep =
   | {
       readonly kind: 'helmert';
@@ -41,62 +40,81 @@ export type TransformationStep =
       readonly set: HelmertSet;
       readonly inverted: boolean;
       readonly parameters: HelmertAtEpoch;
+      readonly standardUncertaintyM: number;
       readonly source: string;
-      readonly ecef: Ecef;
     }
   | {
       readonly kind: 'coincident';
       readonly from: string;
       readonly to: string;
       readonly epoch: number;
+      readonly standardUncertaintyM: number;
       readonly source: string;
-      readonly ecef: Ecef;
     }
   | {
       readonly kind: 'motion';
       readonly frame: string;
       readonly fromEpoch: number;
       readonly toEpoch: number;
-      readonly velocityMPerYear: Ecef;
+      readonly motion: Exclude<PointMotion, {kind: 'at rest'}>;
       readonly source: string;
-      readonly ecef: Ecef;
     }
   | {
       readonly kind: 'at rest';
       readonly frame: string;
       readonly fromEpoch: number;
       readonly toEpoch: number;
-      readonly ecef: Ecef;
     };
 
 /** A systematic contribution: the same for every mark that is transformed so. */
 export interface TransformationUncertainty {
   readonly source: string;
-  readonly standardUncertaintyM: {
-    readonly east: number;
-    readonly north: number;
-    readonly up: number;
-  };
+  readonly standardUncertaintyM: PerAxis;
+}
+
+interface PerAxis {
+  readonly east: number;
+  readonly north: number;
+  readonly up: number;
+}
+
+/** A transformation that is ready for any number of points. */
+export interface TransformationPlan {
+  readonly frame: string;
+  readonly epoch: number | null;
+  readonly steps: readonly TransformationStep[];
+  /** The frames whose areas of use a point must lie in. */
+  readonly frames: readonly Frame[];
+  readonly uncertainties: readonly TransformationUncertainty[];
+  /** Root of the sum of squares of `uncertainties`. */
+  readonly standardUncertaintyM: PerAxis;
+}
+
+/** A point on its way: the step and where it led. */
+export interface TracedStep {
+  readonly step: TransformationStep;
+  readonly ecef: Ecef;
+  /** In metres per year; null unless the step is a motion. */
+  readonly velocity: Ecef | null;
 }
 
 export interface Transformation {
   readonly ecef: Ecef;
-  readonly frame: string;
-  readonly epoch: number | null;
-  readonly steps: readonly TransformationStep[];
-  readonly uncertainties: readonly TransformationUncertainty[];
-  /** Root of the sum of squares of `uncertainties`. */
-  readonly standardUncertaintyM: TransformationUncertainty['standardUncertaintyM'];
+  readonly plan: TransformationPlan;
+  readonly trace: readonly TracedStep[];
 }
 
 /** Vertical motion that a plate model cannot know, per year; from memory, no source. */
 const UNKNOWN_UP_M_PER_YEAR = 0.002;
 
+/** A mark at rest in a plate-fixed frame is as still as plate models fit: 0.25 mm per year. */
+const REST_M_PER_YEAR = 0.00025;
+
 /** Below this two epochs are the same: 1e-6 years are half a minute. */
 const SAME_EPOCH_YEARS = 1e-6;
 
 /**
- * The same point in another frame, at another epoch.
+ * The way from one frame and epoch to another.
  *
  * Method: the frame is changed at the epoch of the data, along the links of the frame table through
  * the nearest common ancestor; where the epochs differ, the way leads through the frame in which the
@@ -108,13 +126,57 @@ const SAME_EPOCH_YEARS = 1e-6;
  *
  * @throws UsageError for whatever is missing or cannot be answered, with what to write
  */
-export function transformPosition(request: TransformationRequest): Transformation {
-  const unchanged = transformationToItself(request);
+export function planTransformation(request: TransformationRequest): TransformationPlan {
+  const unchanged = planToItself(request);
   if (unchanged !== undefined) return unchanged;
-  const source = placed(request.from, request.ecef, 'the coordinates');
-  const target = placed(request.to, request.ecef, 'the result');
+  const source = placed(request.from, 'the coordinates');
+  const target = placed(request.to, 'the result');
   refuseGrid(source.frame, target.frame);
-  return transformBetween(request.ecef, source, target, request.motion);
+  return planBetween(source, target, request.motion);
+}
+
+/**
+ * A point taken along a plan.
+ *
+ * @throws UsageError when the point lies where one of the frames is not used
+ */
+export function transformByPlan(plan: TransformationPlan, ecef: Ecef): Ecef {
+  requireInside(ecef, plan.frames);
+  let at = ecef;
+  for (const step of plan.steps) at = afterStep(at, step);
+  return at;
+}
+
+/**
+ * The same point in another frame, at another epoch, with every step on the way.
+ *
+ * @throws UsageError as `planTransformation` and `transformByPlan`; a frame that is not used at the
+ *         point is named first, since asking for its epoch or a motion would lead astray
+ */
+export function transformPosition({
+  ecef: start,
+  ...request
+}: TransformationRequest & {readonly ecef: Ecef}): Transformation {
+  const plan = planToItself(request) ?? planAt(start, request);
+  const trace: TracedStep[] = [];
+  let at = start;
+  for (const step of plan.steps) {
+    const velocity = step.kind === 'motion' ? velocityOf(at, step.motion) : null;
+    at = afterStep(at, step);
+    trace.push({step, ecef: at, velocity});
+  }
+  return {ecef: at, plan, trace};
+}
+
+function planAt(start: Ecef, request: TransformationRequest): TransformationPlan {
+  const named = [findFrame(request.from.frame), findFrame(request.to.frame)];
+  requireInside(
+    start,
+    named.filter((frame) => frame !== undefined),
+  );
+  const plan = planTransformation(request);
+  requireInside(start, plan.frames);
+  return plan;
 }
 
 export interface Placed {
@@ -122,33 +184,34 @@ export interface Placed {
   readonly epoch: number;
 }
 
-/** The work itself, without the refusals; for expectations that promise no coordinates. */
-export function transformBetween(
-  ecef: Ecef,
+/** A plan without the refusal of grid-based frames; for expectations that promise no coordinates. */
+export function planBetween(
   source: Placed,
   target: Placed,
   motion: PointMotion | null,
-): Transformation {
+): TransformationPlan {
+  const sameEpoch = Math.abs(source.epoch - target.epoch) < SAME_EPOCH_YEARS;
+  const via = sameEpoch ? null : viaOf(requiredMotion(motion, source, target));
   const steps =
-    Math.abs(source.epoch - target.epoch) < SAME_EPOCH_YEARS
-      ? frameSteps(ecef, source.frame, target.frame, source.epoch)
-      : stepsThroughTime(ecef, source, target, requiredMotion(motion, source, target));
-  const uncertainties = steps.flatMap((step) => uncertaintyOf(step, motion));
+    via === null
+      ? frameSteps(source.frame, target.frame, source.epoch)
+      : [
+          ...frameSteps(source.frame, via.frame, source.epoch),
+          movement(via, source.epoch, target.epoch),
+          ...frameSteps(via.frame, target.frame, target.epoch),
+        ];
+  const uncertainties = steps.flatMap(uncertaintyOf);
   return {
-    ecef: steps.at(-1)?.ecef ?? ecef,
     frame: target.frame.name,
     epoch: target.epoch,
     steps,
+    frames: [source.frame, target.frame, ...(via === null ? [] : [via.frame])],
     uncertainties,
     standardUncertaintyM: combined(uncertainties),
   };
 }
 
-function transformationToItself({
-  ecef,
-  from,
-  to,
-}: TransformationRequest): Transformation | undefined {
+function planToItself({from, to}: TransformationRequest): TransformationPlan | undefined {
   refuseEnsemble(from.frame);
   refuseEnsemble(to.frame);
   const name = normalisedFrameName(from.frame);
@@ -159,19 +222,18 @@ function transformationToItself({
   // Without an epoch a global frame does not say where the point is.
   if (epoch === null && known?.kind === 'global') return undefined;
   return {
-    ecef,
     frame: known?.name ?? to.frame,
     epoch,
     steps: [],
+    frames: [],
     uncertainties: [],
     standardUncertaintyM: {east: 0, north: 0, up: 0},
   };
 }
 
 /** The frame and epoch of one side, checked. */
-export function placed({frame: name, epoch}: FrameAndEpoch, ecef: Ecef, what: string): Placed {
+export function placed({frame: name, epoch}: FrameAndEpoch, what: string): Placed {
   const frame = frameNamed(name);
-  requireInside(ecef, frame);
   if (frame.fixedEpoch !== null) {
     if (epoch !== null && Math.abs(epoch - frame.fixedEpoch) > SAME_EPOCH_YEARS) {
       throw new UsageError(
@@ -192,19 +254,22 @@ export function placed({frame: name, epoch}: FrameAndEpoch, ecef: Ecef, what: st
   return {frame, epoch: checkedCoordinateEpoch(epoch)};
 }
 
-function requireInside(ecef: Ecef, {name, area}: Frame): void {
-  if (area === null) return;
+function requireInside(ecef: Ecef, frames: readonly Frame[]): void {
+  if (frames.every(({area}) => area === null)) return;
   const {latitudeDeg, longitudeDeg} = geodeticFromEcef(ecef, GRS80);
-  if (isInside(latitudeDeg, longitudeDeg, area)) return;
-  throw new UsageError(
-    `${name} is used between latitudes ${area.southDeg} and ${area.northDeg} and longitudes ` +
-      `${area.westDeg} and ${area.eastDeg}; the point lies at ${latitudeDeg.toFixed(2)}, ` +
-      `${longitudeDeg.toFixed(2)}; write the frame that is used there, or a global one such as ITRF2020`,
-  );
+  for (const {name, area} of frames) {
+    if (area === null || isInside(latitudeDeg, longitudeDeg, area)) continue;
+    throw new UsageError(
+      `${name} is used between latitudes ${area.southDeg} and ${area.northDeg} and longitudes ` +
+        `${area.westDeg} and ${area.eastDeg}; the point lies at ${latitudeDeg.toFixed(2)}, ` +
+        `${longitudeDeg.toFixed(2)}; write the frame that is used there, or a global one such as ` +
+        'ITRF2020',
+    );
+  }
 }
 
 export function isInside(latitudeDeg: number, longitudeDeg: number, area: Area): boolean {
-  if (latitudeDeg < area.southDeg || latitudeDeg > area.northDeg) return false;
+  if (!(latitudeDeg >= area.southDeg && latitudeDeg <= area.northDeg)) return false;
   return area.westDeg <= area.eastDeg
     ? longitudeDeg >= area.westDeg && longitudeDeg <= area.eastDeg
     : longitudeDeg >= area.westDeg || longitudeDeg <= area.eastDeg;
@@ -214,9 +279,9 @@ function refuseGrid(...frames: readonly Frame[]): void {
   const grid = frames.find((frame) => frame.kind === 'grid-based');
   if (grid === undefined) return;
   throw new UsageError(
-    `${grid.name} is tied to the global frames by a national grid of deformation that stillmark does ` +
-      'not hold; transform the mark with the national service and write its ITRF2014 or ITRF2020 ' +
-      'coordinates with their epoch',
+    `${grid.name} is tied to the global frames by a national grid of deformation that stillmark ` +
+      'does not hold; transform the mark with the national service and write its ITRF2014 or ' +
+      'ITRF2020 coordinates with their epoch',
   );
 }
 
@@ -231,75 +296,67 @@ function requiredMotion(motion: PointMotion | null, source: Placed, target: Plac
   );
 }
 
-function stepsThroughTime(
-  ecef: Ecef,
-  source: Placed,
-  target: Placed,
-  motion: PointMotion,
-): TransformationStep[] {
-  const via = frameNamed(motion.kind === 'plate' ? motion.model.frame : motion.frame);
-  requireInside(ecef, via);
-  const before = frameSteps(ecef, source.frame, via, source.epoch);
-  const start = before.at(-1)?.ecef ?? ecef;
-  const move = movement(start, via.name, motion, source.epoch, target.epoch);
-  return [...before, move, ...frameSteps(move.ecef, via, target.frame, target.epoch)];
+interface Via {
+  readonly frame: Frame;
+  readonly motion: PointMotion;
 }
 
-function movement(
-  start: Ecef,
-  frame: string,
-  motion: PointMotion,
-  fromEpoch: number,
-  toEpoch: number,
-): TransformationStep {
-  if (motion.kind === 'at rest') return {kind: 'at rest', frame, fromEpoch, toEpoch, ecef: start};
-  const velocity = velocityOf(start, motion);
-  const years = toEpoch - fromEpoch;
-  return {
-    kind: 'motion',
-    frame,
-    fromEpoch,
-    toEpoch,
-    velocityMPerYear: velocity,
-    source:
-      motion.kind === 'plate'
-        ? `${motion.model.name}, plate ${motion.plate.code}: ${motion.model.source}`
-        : 'given by the user',
-    ecef: {
-      xM: start.xM + velocity.xM * years,
-      yM: start.yM + velocity.yM * years,
-      zM: start.zM + velocity.zM * years,
-    },
-  };
+/** The frame in which the motion holds. */
+function viaOf(motion: PointMotion): Via {
+  return {frame: frameNamed(motion.kind === 'plate' ? motion.model.frame : motion.frame), motion};
 }
 
-function velocityOf(start: Ecef, motion: Exclude<PointMotion, {kind: 'at rest'}>): Ecef {
+function movement({frame, motion}: Via, fromEpoch: number, toEpoch: number): TransformationStep {
+  const times = {frame: frame.name, fromEpoch, toEpoch};
+  if (motion.kind === 'at rest') return {kind: 'at rest', ...times};
+  const source =
+    motion.kind === 'plate'
+      ? `${motion.model.name}, plate ${motion.plate.code}: ${motion.model.source}`
+      : 'given by the user';
+  return {kind: 'motion', ...times, motion, source};
+}
+
+function afterStep(at: Ecef, step: TransformationStep): Ecef {
+  switch (step.kind) {
+    case 'coincident':
+    case 'at rest':
+      return at;
+    case 'helmert':
+      return step.inverted ? invertHelmert(at, step.parameters) : applyHelmert(at, step.parameters);
+    case 'motion': {
+      const velocity = velocityOf(at, step.motion);
+      const years = step.toEpoch - step.fromEpoch;
+      return {
+        xM: at.xM + velocity.xM * years,
+        yM: at.yM + velocity.yM * years,
+        zM: at.zM + velocity.zM * years,
+      };
+    }
+  }
+}
+
+function velocityOf(at: Ecef, motion: Exclude<PointMotion, {kind: 'at rest'}>): Ecef {
   switch (motion.kind) {
     case 'plate':
-      return plateVelocity(start, motion.plate, motion.model);
+      return plateVelocity(at, motion.plate, motion.model);
     case 'geocentric velocity': {
       const {x, y, z} = motion.mPerYear;
       return {xM: x, yM: y, zM: z};
     }
     case 'local velocity': {
       const {east, north, up} = motion.mPerYear;
-      const frame = localFrameAtEcef(start, GRS80);
-      return ecefVectorFromEnu({eastM: east, northM: north, upM: up}, frame);
+      return ecefVectorFromEnu({eastM: east, northM: north, upM: up}, localFrameAtEcef(at, GRS80));
     }
   }
 }
 
 /** The frame, its parent, and so on up to where nothing follows. */
 function ancestry(frame: Frame): Frame[] {
-  const line = [frame];
-  for (let link = frame.parent; link !== null; link = line.at(-1)!.parent) {
-    line.push(frameNamed(link.parent));
-  }
-  return line;
+  return frame.parent === null ? [frame] : [frame, ...ancestry(frameNamed(frame.parent.parent))];
 }
 
 /** The steps from one frame to another at one epoch, up to the common ancestor and down again. */
-function frameSteps(ecef: Ecef, from: Frame, to: Frame, epoch: number): TransformationStep[] {
+function frameSteps(from: Frame, to: Frame, epoch: number): TransformationStep[] {
   const up = ancestry(from);
   const down = ancestry(to);
   const meeting = up.find((frame) => down.includes(frame));
@@ -308,87 +365,75 @@ function frameSteps(ecef: Ecef, from: Frame, to: Frame, epoch: number): Transfor
   }
   const climb = up.slice(0, up.indexOf(meeting));
   const descent = down.slice(0, down.indexOf(meeting)).reverse();
-  const steps: TransformationStep[] = [];
-  let at = ecef;
-  for (const [frames, toParent] of [
-    [climb, true],
-    [descent, false],
-  ] as const) {
-    for (const frame of frames) {
-      const step = linkStep(at, frame, toParent, epoch);
-      steps.push(step);
-      at = step.ecef;
-    }
-  }
-  return steps;
+  return [
+    ...climb.flatMap((frame) => linkStep(frame, 'to parent', epoch)),
+    ...descent.flatMap((frame) => linkStep(frame, 'from parent', epoch)),
+  ];
 }
 
-function linkStep(ecef: Ecef, frame: Frame, toParent: boolean, epoch: number): TransformationStep {
-  const link = frame.parent;
-  if (link === null) throw new RangeError(`linkStep: ${frame.name} has no parent`);
-  const from = toParent ? frame.name : link.parent;
-  const to = toParent ? link.parent : frame.name;
-  if (link.set === null) {
-    return {kind: 'coincident', from, to, epoch, source: link.source, ecef};
-  }
-  const inverted = toParent !== (link.direction === 'to parent');
-  const parameters = helmertAt(link.set, epoch);
-  return {
-    kind: 'helmert',
-    from,
-    to,
-    epoch,
-    set: link.set,
-    inverted,
-    parameters,
-    source: link.source,
-    ecef: inverted ? invertHelmert(ecef, parameters) : applyHelmert(ecef, parameters),
-  };
-}
-
-function uncertaintyOf(
-  step: TransformationStep,
-  motion: PointMotion | null,
-): TransformationUncertainty[] {
-  if (step.kind === 'helmert' || step.kind === 'coincident') {
-    // The child of the link is the side whose parent is the other.
-    const from = frameNamed(step.from);
-    const link = from.parent?.parent === step.to ? from.parent : frameNamed(step.to).parent;
-    const u = link?.standardUncertaintyM ?? 0;
-    if (u === 0) return [];
-    return [
-      {source: `${step.from} to ${step.to}`, standardUncertaintyM: {east: u, north: u, up: u}},
-    ];
-  }
-  if (
-    motion === null ||
-    motion.kind === 'geocentric velocity' ||
-    motion.kind === 'local velocity'
-  ) {
-    return [];
-  }
-  const years = Math.abs(step.toEpoch - step.fromEpoch);
-  const rate = motion.kind === 'plate' ? motion.model.standardUncertaintyMPerYear : REST_M_PER_YEAR;
-  const horizontal = rate * years;
+function linkStep(
+  {name, parent: link}: Frame,
+  way: 'to parent' | 'from parent',
+  epoch: number,
+): TransformationStep[] {
+  if (link === null) return [];
+  const [from, to] = way === 'to parent' ? [name, link.parent] : [link.parent, name];
+  const {set, source, standardUncertaintyM} = link;
+  if (set === null) return [{kind: 'coincident', from, to, epoch, standardUncertaintyM, source}];
   return [
     {
-      source: motion.kind === 'plate' ? `motion by ${motion.model.name}` : `rest in ${step.frame}`,
-      standardUncertaintyM: {
-        east: horizontal,
-        north: horizontal,
-        up: UNKNOWN_UP_M_PER_YEAR * years,
-      },
+      kind: 'helmert',
+      from,
+      to,
+      epoch,
+      set,
+      inverted: way !== link.direction,
+      parameters: helmertAt(set, epoch),
+      standardUncertaintyM,
+      source,
     },
   ];
 }
 
-/** A mark at rest in a plate-fixed frame is as still as plate models fit: 0.25 mm per year. */
-const REST_M_PER_YEAR = 0.00025;
+function uncertaintyOf(step: TransformationStep): TransformationUncertainty[] {
+  switch (step.kind) {
+    case 'helmert':
+    case 'coincident': {
+      const u = step.standardUncertaintyM;
+      if (u === 0) return [];
+      return [
+        {source: `${step.from} to ${step.to}`, standardUncertaintyM: {east: u, north: u, up: u}},
+      ];
+    }
+    case 'at rest':
+      return [motionUncertainty(step, `rest in ${step.frame}`, REST_M_PER_YEAR)];
+    case 'motion': {
+      if (step.motion.kind !== 'plate') return [];
+      const {name, standardUncertaintyMPerYear} = step.motion.model;
+      return [motionUncertainty(step, `motion by ${name}`, standardUncertaintyMPerYear)];
+    }
+  }
+}
 
-function combined(
-  uncertainties: readonly TransformationUncertainty[],
-): TransformationUncertainty['standardUncertaintyM'] {
-  const axis = (key: 'east' | 'north' | 'up'): number =>
+function motionUncertainty(
+  {fromEpoch, toEpoch}: {readonly fromEpoch: number; readonly toEpoch: number},
+  source: string,
+  horizontalMPerYear: number,
+): TransformationUncertainty {
+  const years = Math.abs(toEpoch - fromEpoch);
+  const horizontalM = horizontalMPerYear * years;
+  return {
+    source,
+    standardUncertaintyM: {
+      east: horizontalM,
+      north: horizontalM,
+      up: UNKNOWN_UP_M_PER_YEAR * years,
+    },
+  };
+}
+
+function combined(uncertainties: readonly TransformationUncertainty[]): PerAxis {
+  const axis = (key: keyof PerAxis): number =>
     Math.hypot(0, ...uncertainties.map((row) => row.standardUncertaintyM[key]));
   return {east: axis('east'), north: axis('north'), up: axis('up')};
 }

@@ -1,6 +1,6 @@
 import {GRS80} from './ellipsoid.ts';
 import {FRAMES} from './frame-table.ts';
-import {type FrameAndEpoch, isInside, placed, transformBetween} from './frames.ts';
+import {type FrameAndEpoch, isInside, placed, planBetween, transformByPlan} from './frames.ts';
 import {ecefFromGeodetic} from './geocentric.ts';
 import {enuFromEcefVector, localFrame} from './local.ts';
 import {type Plate, type PlateMotionModel, plateVelocity} from './plates.ts';
@@ -28,12 +28,12 @@ export function expectedMismatch({
   readonly motion: PointMotion | null;
 }): Enu {
   const ecef = ecefFromGeodetic(place, GRS80);
-  const {ecef: inReference} = transformBetween(
-    ecef,
-    placed(measured, ecef, 'the measured position'),
-    placed(reference, ecef, 'the reference'),
+  const plan = planBetween(
+    placed(measured, 'the measured position'),
+    placed(reference, 'the reference'),
     motion,
   );
+  const inReference = transformByPlan(plan, ecef);
   return enuFromEcefVector(
     {
       xM: ecef.xM - inReference.xM,

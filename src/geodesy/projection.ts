@@ -186,13 +186,13 @@ function derivatives(
   };
 }
 
-/** Residuals below this are the noise of doubles. */
-const GOOD_ENOUGH_M = 1e-7;
+/** Residuals below this are a tenth of what is promised: no need to go on. */
+const GOOD_ENOUGH_M = 1e-5;
 
 /**
  * Sharpens an inverse by the forward projection: some inverses of proj4js stop 0.1 to 0.7 mm early.
  *
- * Method: Newton's method in two variables; nothing is done where the first residual is noise, or
+ * Method: Newton's method in two variables; nothing is done where the first residual is small, or
  * within 0.01° of a pole, where longitude has no derivative.
  */
 function refined(

@@ -29,16 +29,11 @@ export interface GridPoint extends PlanCoordinates {
   readonly pointScale: number;
 }
 
-export interface GeodeticWithFactors extends PlanPosition {
-  readonly convergenceDeg: number;
-  readonly pointScale: number;
-}
-
 /** A grid with its series evaluated for the ellipsoid: made once, used for many points. */
 export interface TransverseMercator {
   readonly grid: TransverseMercatorGrid;
   readonly forward: (position: PlanPosition) => GridPoint;
-  readonly inverse: (point: PlanCoordinates) => GeodeticWithFactors;
+  readonly inverse: (point: PlanCoordinates) => PlanPosition;
 }
 
 /** Farthest longitude from the central meridian; the series is good to 5 nm out to about 35°. */
@@ -146,7 +141,7 @@ function conformal(latitudeDeg: number, lonRad: number, series: KruegerSeries): 
   const cosLon = Math.cos(lonRad);
   const sinLon = Math.sin(lonRad);
   const xiPrime = Math.atan2(tauPrime, cosLon);
-  const hypotenuse = Math.hypot(tauPrime, cosLon);
+  const hypotenuse = Math.sqrt(tauPrime * tauPrime + cosLon * cosLon);
   const etaPrime = Math.asinh(sinLon / hypotenuse);
   const sum = seriesSum(xiPrime, etaPrime, series.alpha);
   const sinLat = Math.sin(latRad);
@@ -168,24 +163,53 @@ interface SeriesSum {
   readonly derivativeIm: number;
 }
 
-/** Σ c_j sin 2jζ and its derivative Σ 2j c_j cos 2jζ, for ζ = xi + i eta. */
+/**
+ * Σ c_j sin 2jζ and its derivative Σ 2j c_j cos 2jζ, for ζ = xi + i eta.
+ *
+ * Method: Clenshaw's recurrence in complex arithmetic, so that four functions serve all terms.
+ * Source: C. W. Clenshaw (1955), A note on the summation of Chebyshev series, MTAC 9, 118–120; as
+ * Karney (2011), section 4.
+ */
 function seriesSum(xi: number, eta: number, coefficients: readonly number[]): SeriesSum {
-  let re = 0;
-  let im = 0;
-  let derivativeRe = 0;
-  let derivativeIm = 0;
+  const sin = Math.sin(2 * xi);
+  const cos = Math.cos(2 * xi);
+  const sinh = Math.sinh(2 * eta);
+  const cosh = Math.cosh(2 * eta);
+  // 2 cos 2ζ, the factor of the recurrence.
+  const factorRe = 2 * cos * cosh;
+  const factorIm = -2 * sin * sinh;
+  let sumRe = 0;
+  let sumIm = 0;
+  let sumBeforeRe = 0;
+  let sumBeforeIm = 0;
+  let slopeRe = 0;
+  let slopeIm = 0;
+  let slopeBeforeRe = 0;
+  let slopeBeforeIm = 0;
   for (let j = coefficients.length; j > 0; j--) {
     const c = coefficients[j - 1]!;
-    const sin = Math.sin(2 * j * xi);
-    const cos = Math.cos(2 * j * xi);
-    const sinh = Math.sinh(2 * j * eta);
-    const cosh = Math.cosh(2 * j * eta);
-    re += c * sin * cosh;
-    im += c * cos * sinh;
-    derivativeRe += 2 * j * c * cos * cosh;
-    derivativeIm -= 2 * j * c * sin * sinh;
+    const nextRe = factorRe * sumRe - factorIm * sumIm - sumBeforeRe + c;
+    const nextIm = factorRe * sumIm + factorIm * sumRe - sumBeforeIm;
+    sumBeforeRe = sumRe;
+    sumBeforeIm = sumIm;
+    sumRe = nextRe;
+    sumIm = nextIm;
+    const nextSlopeRe = factorRe * slopeRe - factorIm * slopeIm - slopeBeforeRe + 2 * j * c;
+    const nextSlopeIm = factorRe * slopeIm + factorIm * slopeRe - slopeBeforeIm;
+    slopeBeforeRe = slopeRe;
+    slopeBeforeIm = slopeIm;
+    slopeRe = nextSlopeRe;
+    slopeIm = nextSlopeIm;
   }
-  return {re, im, derivativeRe, derivativeIm};
+  // Times sin 2ζ; and the sum of cosines is half the factor times the last, less the one before.
+  const sineRe = sin * cosh;
+  const sineIm = cos * sinh;
+  return {
+    re: sineRe * sumRe - sineIm * sumIm,
+    im: sineRe * sumIm + sineIm * sumRe,
+    derivativeRe: (factorRe * slopeRe - factorIm * slopeIm) / 2 - slopeBeforeRe,
+    derivativeIm: (factorRe * slopeIm + factorIm * slopeRe) / 2 - slopeBeforeIm,
+  };
 }
 
 /** Convergence and scale of a projected point, Karney equations 23–28. */
@@ -194,7 +218,10 @@ function factorsOf(point: SphereAndSeries, series: KruegerSeries) {
   const convergenceRad = sphereConvergenceRad - Math.atan2(derivativeIm, derivativeRe);
   return {
     convergenceDeg: convergenceRad * DEGREES_PER_RADIAN,
-    pointScale: series.scaleFactor * sphereScale * Math.hypot(derivativeRe, derivativeIm),
+    pointScale:
+      series.scaleFactor *
+      sphereScale *
+      Math.sqrt(derivativeRe * derivativeRe + derivativeIm * derivativeIm),
   };
 }
 
@@ -224,7 +251,7 @@ function inverse(
   grid: TransverseMercatorGrid,
   series: KruegerSeries,
   originXi: number,
-): GeodeticWithFactors {
+): PlanPosition {
   const xi = (northingM - grid.falseNorthingM) / series.lengthM + originXi;
   const eta = (eastingM - grid.falseEastingM) / series.lengthM;
   if (!(Math.abs(xi) <= Math.PI / 2 + 1e-9) || !(Math.abs(eta) <= 1.4)) {
@@ -236,12 +263,13 @@ function inverse(
   const sinhEta = Math.sinh(etaPrime);
   const cosXi = Math.cos(xiPrime);
   const lonRad = Math.atan2(sinhEta, cosXi);
-  const tau = tangentFromConformal(Math.sin(xiPrime) / Math.hypot(sinhEta, cosXi), series);
-  const latitudeDeg = Math.atan(tau) * DEGREES_PER_RADIAN;
+  const tau = tangentFromConformal(
+    Math.sin(xiPrime) / Math.sqrt(sinhEta * sinhEta + cosXi * cosXi),
+    series,
+  );
   return {
-    latitudeDeg,
+    latitudeDeg: Math.atan(tau) * DEGREES_PER_RADIAN,
     longitudeDeg: wrappedLongitudeDeg(grid.centralMeridianDeg + lonRad * DEGREES_PER_RADIAN),
-    ...factorsOf(conformal(latitudeDeg, lonRad, series), series),
   };
 }
 

@@ -52,7 +52,7 @@ export function civilFromDays(daysSince1970: number): CivilDate {
   return {year, month, day};
 }
 
-export function isLeapYear(year: number): boolean {
+function isLeapYear(year: number): boolean {
   return year % 4 === 0 && (year % 100 !== 0 || year % 400 === 0);
 }
 

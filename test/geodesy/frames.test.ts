@@ -2,7 +2,13 @@ import {describe, expect, test} from 'vitest';
 import {UsageError} from '../../src/errors.ts';
 import {GRS80} from '../../src/geodesy/ellipsoid.ts';
 import {frameNamed} from '../../src/geodesy/frame-names.ts';
-import {type FrameAndEpoch, transformBetween, transformPosition} from '../../src/geodesy/frames.ts';
+import {
+  type FrameAndEpoch,
+  planBetween,
+  planTransformation,
+  transformByPlan,
+  transformPosition,
+} from '../../src/geodesy/frames.ts';
 import {ecefFromGeodetic} from '../../src/geodesy/geocentric.ts';
 import {applyHelmert, helmertAt, type Vector3} from '../../src/geodesy/helmert.ts';
 import {ITRF2020_PMM, plateNamed} from '../../src/geodesy/plates.ts';
@@ -127,7 +133,9 @@ describe('the chain through the hub', () => {
         const ecef = ecefFromGeodetic({latitudeDeg, longitudeDeg, ellipsoidalHeightM: 0}, GRS80);
         const direct = applyHelmert(ecef, helmertAt(set, epoch));
         const from = {frame: frameNamed(row.from), epoch};
-        const chain = transformBetween(ecef, from, {frame: frameNamed(row.to), epoch}, null).ecef;
+        // Parameters hold everywhere; without the areas of use they can be compared everywhere.
+        const plan = {...planBetween(from, {frame: frameNamed(row.to), epoch}, null), frames: []};
+        const chain = transformByPlan(plan, ecef);
         largest = Math.max(largest, distanceM(direct, chain) * 1000);
       }
     }
@@ -289,7 +297,7 @@ describe('what a reader can redo', () => {
       to: {frame: 'ETRF2000', epoch: 2010},
       motion: atRestIn('ETRF2014'),
     });
-    expect(result.steps.map((step) => step.kind)).toEqual([
+    expect(result.plan.steps.map((step) => step.kind)).toEqual([
       'coincident',
       'helmert',
       'at rest',
@@ -298,7 +306,7 @@ describe('what a reader can redo', () => {
       'helmert',
     ]);
     let at = BERLIN;
-    for (const step of result.steps) {
+    for (const {step, ecef} of result.trace) {
       if (step.kind === 'helmert') {
         const {translationMm: t, scalePpb, rotationMas: r} = step.parameters;
         const mas = 4.848_136_811_095_36e-9;
@@ -317,11 +325,11 @@ describe('what a reader can redo', () => {
         expect(step.source).toMatch(/EUREF|EPSG/);
       }
       // By hand an inverse is the same displacement subtracted: good to 1e-7 m here.
-      expect(distanceM(at, step.ecef)).toBeLessThan(1e-6);
+      expect(distanceM(at, ecef)).toBeLessThan(1e-6);
     }
     expect(distanceM(at, result.ecef)).toBeLessThan(1e-6);
-    expect(result.frame).toBe('ETRF2000');
-    expect(result.epoch).toBe(2010);
+    expect(result.plan.frame).toBe('ETRF2000');
+    expect(result.plan.epoch).toBe(2010);
   });
 
   test('property: there and back is the same point, for every pair of frames', () => {
@@ -343,8 +351,7 @@ describe('what a reader can redo', () => {
   });
 
   test('the uncertainty has a row per link that is not a definition, and one for the motion', () => {
-    const {uncertainties, standardUncertaintyM} = transformPosition({
-      ecef: BERLIN,
+    const {uncertainties, standardUncertaintyM} = planTransformation({
       from: {frame: 'WGS84(G2139)', epoch: 2026},
       to: {frame: 'ETRF2020', epoch: 2016},
       motion: {kind: 'plate', plate: plateNamed('Eurasia', ITRF2020_PMM), model: ITRF2020_PMM},
@@ -367,6 +374,22 @@ describe('what a reader can redo', () => {
     expect(standardUncertaintyM.up).toBeCloseTo(Math.hypot(0.02, 0.002, 0.02), 12);
   });
 
+  test('a plate motion is traced with its velocity', () => {
+    const {trace} = transformPosition({
+      ecef: BERLIN,
+      from: {frame: 'ITRF2020', epoch: 2020},
+      to: {frame: 'ITRF2020', epoch: 2010},
+      motion: {kind: 'plate', plate: plateNamed('EURA', ITRF2020_PMM), model: ITRF2020_PMM},
+    });
+    expect(trace).toHaveLength(1);
+    const velocity = trace[0]?.velocity;
+    expect(velocity).toBeTruthy();
+    if (velocity === null || velocity === undefined) return;
+    // 24.6 mm per year in Berlin: 19.4 east and 15.1 north (frames-mismatch).
+    expect(Math.hypot(velocity.xM, velocity.yM, velocity.zM)).toBeCloseTo(0.0246, 4);
+    expect(trace[0]?.ecef.xM).toBeCloseTo(BERLIN.xM - 10 * velocity.xM, 9);
+  });
+
   test('a local velocity is the geocentric one turned', () => {
     const motion: PointMotion = {
       kind: 'local velocity',
@@ -387,15 +410,12 @@ describe('comparison with itself', () => {
       const side = {frame, epoch: 2020.5};
       const same = transformPosition({ecef: BERLIN, from: side, to: side, motion: null});
       expect(same.ecef).toBe(BERLIN);
-      expect(same.steps).toEqual([]);
+      expect(same.trace).toEqual([]);
     }
     const noEpoch = {frame: 'site frame 7', epoch: null};
-    expect(transformPosition({ecef: BERLIN, from: noEpoch, to: noEpoch, motion: null}).epoch).toBe(
-      null,
-    );
+    expect(planTransformation({from: noEpoch, to: noEpoch, motion: null}).epoch).toBe(null);
     expect(
-      transformPosition({
-        ecef: BERLIN,
+      planTransformation({
         from: {frame: 'NZGD2000', epoch: null},
         to: {frame: 'nzgd 2000', epoch: 2000},
         motion: null,
@@ -405,14 +425,14 @@ describe('comparison with itself', () => {
 
   test('frames of a fixed epoch know it', () => {
     const place = {latitudeDeg: -23.55, longitudeDeg: -46.63, ellipsoidalHeightM: 0};
-    const {epoch, steps} = transformPosition({
+    const {plan} = transformPosition({
       ecef: ecefFromGeodetic(place, GRS80),
       from: {frame: 'ITRF2000', epoch: 2000.4},
       to: {frame: 'SIRGAS 2000', epoch: null},
       motion: null,
     });
-    expect(epoch).toBe(2000.4);
-    expect(steps.map((step) => step.kind)).toEqual(['coincident']);
+    expect(plan.epoch).toBe(2000.4);
+    expect(plan.steps.map((step) => step.kind)).toEqual(['coincident']);
   });
 });
 
