@@ -142,6 +142,11 @@ export function checkOptions<T>(args: Argv<T>) {
     .options({
       marks: {type: 'string', group: REFERENCE, describe: 'marks file (YAML, CSV or SINEX)'},
       mark: {type: 'string', group: REFERENCE, describe: 'name of the mark that was occupied'},
+      motion: {
+        type: 'string',
+        group: REFERENCE,
+        describe: 'how the mark moves between epochs: "at rest in ETRF2014", "plate EURA", …',
+      },
       tolerance: {
         type: 'string',
         group: DECISION,
@@ -209,6 +214,8 @@ export interface CommandArguments {
   readonly at?: string | undefined;
   readonly frame?: string | undefined;
   readonly coordinateEpoch?: number | undefined;
+  readonly grid?: string | undefined;
+  readonly motion?: string | undefined;
   readonly fix?: string | undefined;
   readonly minSatellites?: number | undefined;
   readonly maxHdop?: number | undefined;

@@ -3,6 +3,7 @@ import type {Mark} from '../fieldbook/mark.ts';
 import {findMark, readMarks} from '../fieldbook/marks.ts';
 import {emptySheet, readSheet, type Sheet} from '../fieldbook/sheet.ts';
 import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
+import {parsePointMotion} from '../geodesy/point-motion.ts';
 import type {LogContents} from '../log/contents.ts';
 import {standingOf} from '../occupation/describe.ts';
 import {type Reduced, reduceOccupation} from '../occupation/reduce.ts';
@@ -127,6 +128,8 @@ async function requestOf(
     asked,
     frame: frameOf(inForce),
     coordinateEpoch: options.coordinateEpoch ?? null,
+    motion: options.motion === undefined ? null : parsePointMotion(options.motion),
+    grid: options.grid ?? null,
     movementLimitM: lengthOption('movement-limit', options.movementLimit),
     wantM: lengthOption('want', options.want),
     settings,

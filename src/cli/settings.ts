@@ -27,6 +27,7 @@ export function withSheet(options: CommandArguments, sheet: Sheet): InForce {
     ...sheetSettings(sheet),
     ...(sheet.mark === undefined ? {} : {mark: sheet.mark}),
     ...(sheet.frame === undefined ? {} : {frame: sheet.frame}),
+    ...(sheet.projection === undefined ? {} : {grid: sheet.projection}),
     ...(sheet.coordinateEpoch === undefined ? {} : {coordinateEpoch: sheet.coordinateEpoch}),
   };
   const given = Object.fromEntries(
@@ -138,6 +139,8 @@ export function rememberOthers(inForce: InForce, settings: Settings): void {
     'at',
     'frame',
     'coordinateEpoch',
+    'motion',
+    'grid',
     'date',
     'start',
     'columns',

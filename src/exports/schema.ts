@@ -77,7 +77,7 @@ const GRID = object({
   eastingM: LENGTH_M,
   northingM: LENGTH_M,
   convergenceDeg: DEGREES,
-  pointScale: NUMBER,
+  pointScale: orNull(NUMBER),
   elevationFactor: orNull(NUMBER),
   combinedFactor: orNull(NUMBER),
 });
@@ -163,6 +163,26 @@ const STABILITY = object({
   movementLimitM: object({horizontal: orNull(LENGTH_M), up: orNull(LENGTH_M)}),
 });
 
+const FRAME_CHANGE = object({
+  fromFrame: TEXT,
+  fromEpoch: orNull(NUMBER),
+  toFrame: TEXT,
+  toEpoch: orNull(NUMBER),
+  steps: listOf(
+    object({
+      what: TEXT,
+      from: TEXT,
+      to: TEXT,
+      epoch: NUMBER,
+      parameters: mapOf(NUMBER),
+      ecefM: XYZ,
+      source: TEXT,
+    }),
+  ),
+  ecefM: XYZ,
+  standardUncertaintyM: perAxis(LENGTH_M),
+});
+
 const COMPARISON = object({
   mark: TEXT,
   offsetM: object({...PER_AXIS_OR_NULL.properties, horizontal: orNull(LENGTH_M)}),
@@ -182,6 +202,7 @@ const COMPARISON = object({
   }),
   agreement: oneOf('agrees', 'disagrees', 'not tested'),
   assumptions: listOf(TEXT),
+  frameChange: orNull(FRAME_CHANGE),
   candidates: listOf(
     object({
       code: TEXT,

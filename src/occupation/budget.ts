@@ -29,7 +29,6 @@ export interface BudgetInput {
   readonly base: StatedContribution | null;
   readonly antennaHeight: StatedContribution | null;
   readonly centring: StatedContribution | null;
-  readonly frame: StatedContribution | null;
   readonly geoid: StatedContribution | null;
 }
 
@@ -85,9 +84,35 @@ export function budgetRows(input: BudgetInput): BudgetRow[] {
   rows.push(correctionRow(input));
   rows.push(statedRow('antenna height', 'antenna', input.antennaHeight));
   rows.push(statedRow('centring over the mark', null, input.centring));
-  if (input.frame !== null) rows.push(statedRow('transformation', 'frame', input.frame));
   if (input.geoid !== null) rows.push(statedRow('geoid model', 'geoid', input.geoid));
   return input.hasHeight ? rows : rows.map(withoutUp);
+}
+
+/**
+ * What enters a comparison beside the position's own budget: the transformation into the frame of
+ * the mark, and the mark itself.
+ */
+export function comparisonRows(
+  mark: {
+    readonly name: string;
+    readonly covarianceM2: readonly (readonly number[])[] | null;
+  } | null,
+  transformation: StatedContribution | null,
+): BudgetRow[] {
+  const rows: BudgetRow[] = [];
+  if (transformation !== null) {
+    rows.push(statedRow('transformation to the frame of the mark', 'frame', transformation));
+  }
+  if (mark !== null) {
+    const root = (axis: number) => Math.sqrt(mark.covarianceM2?.[axis]?.[axis] ?? 0);
+    const stated: StatedContribution = {
+      standardUncertaintyM: {east: root(0), north: root(1), up: root(2)},
+      id: mark.name,
+      from: 'marks file',
+    };
+    rows.push(statedRow('the mark', 'mark', mark.covarianceM2 === null ? null : stated));
+  }
+  return rows;
 }
 
 /** Autonomous and satellite-augmented fixes rest on the service, corrected ones on the base. */

@@ -1,6 +1,6 @@
 import {probabilityInCircle} from '../statistics/accuracy-measures.ts';
 import {normalWithin} from '../statistics/distribution.ts';
-import type {Comparison, Decision, PerAxis, Requirement} from './result.ts';
+import type {Comparison, Decision, FrameChange, PerAxis, Requirement} from './result.ts';
 
 /** Covariance of east, north and up in m², row by row; NaN in the row of a height not known. */
 export type CovarianceM2 = readonly (readonly number[])[];
@@ -28,6 +28,7 @@ export interface ComparisonInput {
   readonly markCovarianceM2: CovarianceM2 | null;
   readonly asked: readonly Asked[];
   readonly assumptions: readonly string[];
+  readonly frameChange: FrameChange | null;
 }
 
 /** The offset from a known mark, what it means against the tolerances, and whether both agree. */
@@ -44,6 +45,7 @@ export function compareWithMark(input: ComparisonInput): Comparison {
     normalisedError,
     agreement: agreement(normalisedError, input.markCovarianceM2),
     assumptions,
+    frameChange: input.frameChange,
     candidates: [],
   };
 }

@@ -19,6 +19,12 @@ const RULES: readonly Rule[] = [
   },
   {path: /^stability\.settling$/, code: 'no-settling', severity: 'absent'},
   {path: /\.(frame|frameFrom|coordinateEpoch)$/, code: 'frame-not-stated', severity: 'caution'},
+  {path: /^comparison\.frameChange$/, code: 'frame-not-transformed', severity: 'absent'},
+  {
+    path: /\.(pointScale|combinedFactor|elevationFactor)$/,
+    code: 'grid-factor-unknown',
+    severity: 'absent',
+  },
   {path: /\.grid$/, code: 'grid-not-asked', severity: 'absent'},
   {path: /\.(sharedBy|id)$/, code: 'budget-row-not-shared', severity: 'absent'},
   {path: /^budget\[\]\.standardUncertaintyM/, code: 'budget-row-not-included', severity: 'absent'},

@@ -1,10 +1,10 @@
-import {UsageError} from '../errors.ts';
 import type {Mark} from '../fieldbook/mark.ts';
 import {covarianceEnuFromEcef} from '../geodesy/covariance.ts';
 import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
 import {geodeticFromEcef} from '../geodesy/geocentric.ts';
 import {type LocalFrame, localFrame} from '../geodesy/local.ts';
 import type {CovarianceM2} from './compare.ts';
+import {planOfGrid} from './grid-position.ts';
 
 /** A known mark as the comparison needs it: plan, heights and covariance, each only if known. */
 export interface MarkPlace {
@@ -27,7 +27,7 @@ export function markPlace(mark: Mark, ellipsoid: Ellipsoid): MarkPlace {
 }
 
 function planAndHeight(
-  {name, coordinates}: Mark,
+  {coordinates}: Mark,
   ellipsoid: Ellipsoid,
 ): Pick<MarkPlace, 'plan' | 'ellipsoidalHeightM'> {
   switch (coordinates.kind) {
@@ -42,10 +42,11 @@ function planAndHeight(
       const {latitudeDeg, longitudeDeg, ellipsoidalHeightM} = coordinates;
       return {plan: {latitudeDeg, longitudeDeg}, ellipsoidalHeightM: ellipsoidalHeightM ?? null};
     }
-    case 'grid':
-      throw new UsageError(
-        `${name} has grid coordinates (${coordinates.projection}), which cannot be compared yet; give latitude and longitude`,
-      );
+    case 'grid': {
+      const {projection, eastingM, northingM, ellipsoidalHeightM} = coordinates;
+      const plan = planOfGrid(projection, eastingM, northingM);
+      return {plan, ellipsoidalHeightM: ellipsoidalHeightM ?? null};
+    }
     case 'height only':
       return {plan: null, ellipsoidalHeightM: coordinates.ellipsoidalHeightM ?? null};
   }

@@ -5,6 +5,7 @@ import {moments} from '../statistics/moments.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {budgetVariancesM2} from './budget.ts';
 import {type CovarianceM2, planeOf} from './compare.ts';
+import {gridPosition} from './grid-position.ts';
 import {type LocalColumns, taken} from './local-columns.ts';
 import type {BudgetRow, PerAxis, Position} from './result.ts';
 import {ellipseOf} from './scatter.ts';
@@ -23,6 +24,8 @@ export interface PositionInput {
   readonly frameFrom: Position['frameFrom'];
   readonly coordinateEpoch: number | null;
   readonly of: Position['of'];
+  /** Map grid as written; null: none asked for. */
+  readonly grid: string | null;
 }
 
 /** The mean of one session as a position, with its uncertainty, budget included. */
@@ -56,7 +59,14 @@ export function positionOf(input: PositionInput): Position {
       epochs,
       session.indices,
     ),
-    grid: null,
+    grid:
+      input.grid === null
+        ? null
+        : gridPosition(
+            input.grid,
+            {...geodetic, ellipsoidalHeightM: ellipsoidal ? geodetic.ellipsoidalHeightM : null},
+            columns.frame.ellipsoid,
+          ),
     originEcefM: {x: originEcef.xM, y: originEcef.yM, z: originEcef.zM},
     ...uncertaintyOf(covarianceEnuM2),
     independentLooks: session.independentLooks,

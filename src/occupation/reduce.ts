@@ -3,9 +3,10 @@ import {isoUtc} from '../time/gps-time.ts';
 import {epochAccount} from './account.ts';
 import {type AntennaReduction, reduceAntenna} from './antenna.ts';
 import {besideStep} from './beside-step.ts';
-import {budgetRows} from './budget.ts';
+import {budgetRows, comparisonRows} from './budget.ts';
 import {compareWithMark} from './compare.ts';
 import {explainNulls} from './explain-nulls.ts';
+import {type Changed, inFrameOfMark} from './frame-change.ts';
 import {keptIndices, type LocalColumns, localColumns, taken} from './local-columns.ts';
 import {type MarkPlace, markPlace} from './mark-place.ts';
 import {isTravelling} from './motion.ts';
@@ -125,17 +126,25 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
     cuts.length === 0 ? [whole] : sessionsBetween(cuts, {record, outcome, columns, whole});
   const segments = sessions.map((part) => segmentOf(part, record, columns, outcome));
   const single = segments.length === 1 ? segments[0]! : null;
-  const measured = (single ?? segmentOf(whole, record, columns, outcome)).position;
+  const mean = (single ?? segmentOf(whole, record, columns, outcome)).position;
+  const changed =
+    request.mark === null
+      ? undefined
+      : inFrameOfMark(mean, request.mark, request.motion, request.ellipsoid);
+  const measured = changed === undefined ? mean : {...mean, geodetic: changed.geodetic};
   const reference = referenceOf(measured, place, request.at, request.ellipsoid);
   const offsetM = offsetFrom(targetOf(reference, place), measured, request.ellipsoid);
   const comparison =
-    place === null || single === null ? null : comparisonOf(record, place, single.position);
+    place === null || single === null ? null : comparisonOf(record, place, measured, changed);
   const result: Result = {
     ...common({...record, account: accountOf(request, outcome)}),
     reference,
     position: single?.position ?? null,
     segments,
-    budget: budgetOf(whole, record, outcome, columns),
+    budget: [
+      ...budgetOf(whole, record, outcome, columns),
+      ...comparisonRows(place, changed?.contribution ?? null),
+    ],
     scatter: {
       aboutMean: scatterAbout(usedPositions(columns, whole), whole.meanM),
       aboutReference: scatterAbout(usedPositions(columns, whole), centreOf(whole.meanM, offsetM)),
@@ -296,6 +305,7 @@ function segmentOf(
       frameFrom: request.frame?.from ?? null,
       coordinateEpoch: request.coordinateEpoch,
       of: record.antenna?.pointReached ?? 'antenna, point not stated',
+      grid: request.grid,
     }),
   };
 }
@@ -319,21 +329,28 @@ function budgetOf(
   });
 }
 
-function comparisonOf({request}: Record, place: MarkPlace, position: Position): Comparison {
+function comparisonOf(
+  {request}: Record,
+  place: MarkPlace,
+  measured: Position,
+  changed: Changed | undefined,
+): Comparison {
+  const own = measured.covarianceEnuM2;
+  const {east = 0, north = 0, up = 0} = changed?.contribution?.standardUncertaintyM ?? {};
+  const added = [east, north, up];
+  const covarianceM2 = own?.map((row, i) =>
+    row.map((value, j) => (value ?? Number.NaN) + (i === j ? added[i]! ** 2 : 0)),
+  );
   return compareWithMark({
     mark: place.name,
-    offsetM: offsetFrom(place, position, request.ellipsoid),
-    covarianceM2:
-      position.covarianceEnuM2?.map((row) => row.map((value) => value ?? Number.NaN)) ?? null,
+    offsetM: offsetFrom(place, measured, request.ellipsoid),
+    covarianceM2: covarianceM2 ?? null,
     markCovarianceM2: place.covarianceM2,
     asked: request.asked,
-    assumptions: assumptionsOf(request),
+    // What is taken for granted because nobody stated it is said aloud in every output.
+    assumptions: changed === undefined ? ['same frame and epoch as the mark'] : [],
+    frameChange: changed?.change ?? null,
   });
-}
-
-/** What a comparison takes for granted because nobody stated it; said aloud in every output. */
-function assumptionsOf({frame, mark}: ReduceRequest): string[] {
-  return frame === null || mark?.frame === undefined ? ['same frame and epoch as the mark'] : [];
 }
 
 function targetOf({geodetic}: Reference, place: MarkPlace | null) {

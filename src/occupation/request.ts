@@ -2,6 +2,7 @@ import type {Epochs, Satellites} from '../epochs/epochs.ts';
 import type {Mark} from '../fieldbook/mark.ts';
 import type {Sheet} from '../fieldbook/sheet.ts';
 import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
+import type {PointMotion} from '../geodesy/point-motion.ts';
 import type {Geodetic} from '../geodesy/types.ts';
 import type {Asked} from './compare.ts';
 import type {Say} from './notices.ts';
@@ -46,6 +47,10 @@ export interface ReduceRequest {
   readonly asked: readonly Asked[];
   readonly frame: {readonly name: string; readonly from: NonNullable<Position['frameFrom']>} | null;
   readonly coordinateEpoch: number | null;
+  /** How the mark moves between epochs, as the user states it. */
+  readonly motion: PointMotion | null;
+  /** Map grid for the position, as written. */
+  readonly grid: string | null;
   readonly movementLimitM: number | null;
   /** Wished 95 % horizontal radius. */
   readonly wantM: number | null;

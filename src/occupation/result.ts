@@ -106,7 +106,8 @@ export interface GridPosition {
   readonly eastingM: number;
   readonly northingM: number;
   readonly convergenceDeg: number;
-  readonly pointScale: number;
+  /** null for a grid whose scale depends on the direction. */
+  readonly pointScale: number | null;
   readonly elevationFactor: number | null;
   readonly combinedFactor: number | null;
 }
@@ -251,6 +252,31 @@ export interface Candidate {
   readonly advice: string;
 }
 
+/** One line of a transformation, so that a reader can redo it by hand. */
+export interface FrameChangeStep {
+  readonly what: string;
+  readonly from: string;
+  readonly to: string;
+  readonly epoch: number;
+  /** By name with unit: translations in mm, scale in parts per 1e9, rotations in milliarcseconds. */
+  readonly parameters: Readonly<Record<string, number>>;
+  /** The point after this step. */
+  readonly ecefM: PerAxisXyz;
+  readonly source: string;
+}
+
+/** How the measured position came into the frame and to the epoch of the mark. */
+export interface FrameChange {
+  readonly fromFrame: string;
+  readonly fromEpoch: number | null;
+  readonly toFrame: string;
+  readonly toEpoch: number | null;
+  /** Empty when both are the same. */
+  readonly steps: readonly FrameChangeStep[];
+  readonly ecefM: PerAxisXyz;
+  readonly standardUncertaintyM: PerAxis;
+}
+
 export interface Comparison {
   readonly mark: string;
   readonly offsetM: PerAxis<number | null> & {readonly horizontal: number | null};
@@ -259,6 +285,8 @@ export interface Comparison {
   readonly normalisedError: PerAxis<number | null> & {readonly horizontal: number | null};
   readonly agreement: 'agrees' | 'disagrees' | 'not tested';
   readonly assumptions: readonly string[];
+  /** null when a frame or epoch was not stated, so that nothing could be transformed. */
+  readonly frameChange: FrameChange | null;
   readonly candidates: readonly Candidate[];
 }
 

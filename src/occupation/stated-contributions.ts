@@ -6,7 +6,7 @@ import type {BudgetInput, StatedContribution} from './budget.ts';
 export function statedContributions(
   {standardUncertainties}: Sheet,
   antenna: AntennaReduction | null,
-): Pick<BudgetInput, 'service' | 'base' | 'antennaHeight' | 'centring' | 'frame' | 'geoid'> {
+): Pick<BudgetInput, 'service' | 'base' | 'antennaHeight' | 'centring' | 'geoid'> {
   const stated = (...names: readonly StatedUncertainty['of'][]) => {
     const entry = standardUncertainties?.find(({of}) => names.includes(of));
     return entry === undefined ? null : contribution(entry);
@@ -16,7 +16,6 @@ export function statedContributions(
     base: stated('base', 'network'),
     antennaHeight: antennaHeight(antenna),
     centring: stated('centring'),
-    frame: stated('frame'),
     geoid: stated('geoid', 'separation'),
   };
 }

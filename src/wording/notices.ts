@@ -85,6 +85,10 @@ export const MISSING_SENTENCES: Readonly<Record<string, Sentence>> = {
     'The frame or coordinate epoch of the positions was not stated; under corrections it is that of the base or network. Give --frame and --coordinate-epoch.',
   'no-settling': () => 'No settling was found.',
   'grid-not-asked': () => 'No grid coordinates were asked for.',
+  'frame-not-transformed': () =>
+    'Nothing was transformed: the frame of the log or of the mark was not stated, or the record has no ellipsoidal height.',
+  'grid-factor-unknown': () =>
+    'A factor of the grid that has no single value there, or needs an ellipsoidal height.',
   'budget-row-not-shared': () => 'A contribution to the budget that no other occupation shares.',
   'budget-row-not-included': () => 'A contribution to the budget that nobody gave is not included.',
   'no-orthometric-height': () =>

@@ -95,6 +95,8 @@ export function reducedSample({name, mark, frame, maxLines}: SampleAsked): {
             {of: 'up', toleranceM: 0.03, reason: null},
           ],
     frame: frame === undefined ? null : {name: frame, from: 'option'},
+    motion: null,
+    grid: null,
     coordinateEpoch: frame === undefined ? null : 2025,
     movementLimitM: null,
     wantM: null,

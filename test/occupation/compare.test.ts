@@ -23,6 +23,7 @@ function compared(
     markCovarianceM2: mark,
     asked: [HORIZONTAL, UP],
     assumptions: [],
+    frameChange: null,
   });
 }
 

@@ -471,6 +471,7 @@ function resultOf(spec: SampleSpec, columns: Columns, series: ChartSeries): Resu
           normalisedError: {east: 0.8, north: 0.7, up: spec.heights ? 0.9 : null, horizontal: 1.2},
           agreement: 'disagrees',
           assumptions: ['the mark has the frame and the epoch of the log'],
+          frameChange: null,
           candidates: spec.candidates,
         }
       : null,

@@ -1,5 +1,5 @@
 import type {Enu, Matrix3} from '../../geodesy/types.ts';
-import type {DiagnosisInput} from './input.ts';
+import type {DiagnosisInput, OtherMarkCheck} from './input.ts';
 
 /** Numbers and words that title and advice speak of. */
 export type CauseValues = Readonly<Record<string, string | number | boolean | null>>;
@@ -44,7 +44,7 @@ export type Missing =
   | 'no-epochs'
   | 'no-other-mark'
   | 'other-mark-fits'
-  | 'no-second-setup'
+  | 'set-ups-agree'
   | 'no-second-session'
   | 'no-nearby-mark'
   | 'no-offset-point'
@@ -115,4 +115,21 @@ export function comparedOffset({offsetM}: DiagnosisInput): Enu {
 /** A prediction that took so many numbers from the offset. */
 export function fitted(prediction: Prediction, freeParameters: number): Prediction {
   return {...prediction, freeParameters};
+}
+
+/** Variance of a component about which another check says nothing. */
+const UNKNOWN_M2 = 1e6;
+
+/** Covariance of another check; a component that it did not compare is as good as unknown. */
+export function covarianceOfCheck({
+  offsetM,
+  covarianceM2,
+}: Pick<OtherMarkCheck, 'offsetM' | 'covarianceM2'>): Matrix3 {
+  const values = [offsetM.east, offsetM.north, offsetM.up];
+  const entry = (i: number, j: number): number => {
+    if (values[i] === null || values[j] === null) return i === j ? UNKNOWN_M2 : 0;
+    return covarianceM2[i]?.[j] ?? 0;
+  };
+  const row = (i: number) => [entry(i, 0), entry(i, 1), entry(i, 2)] as const;
+  return [row(0), row(1), row(2)];
 }

@@ -222,7 +222,7 @@ export function positionNotes(context: ReportContext): string[] {
     const combined =
       combinedFactor === null ? '' : `, combined factor ${combinedFactor.toFixed(8)}`;
     notes.push(
-      `Grid north bears ${fixed(convergenceDeg, 5)}° from true north; point scale ${pointScale.toFixed(8)}${combined}.`,
+      `Grid north bears ${fixed(convergenceDeg, 5)}° from true north; ${pointScale === null ? 'its scale depends on the direction' : `point scale ${pointScale.toFixed(8)}`}${combined}.`,
     );
   }
   const missing = result.budget.filter((line) => line.standardUncertaintyM === null);
