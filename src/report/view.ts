@@ -10,7 +10,7 @@ import {correlationFigure, settlingFigure} from './figures/settling-figures.ts';
 import {signalFigure, skyFigure} from './figures/sky-figures.ts';
 import {timeFigure} from './figures/time-figure.ts';
 import type {Renderer} from './render.ts';
-import {base64, cssString, fileStem, jsonForHtml} from './text/embed.ts';
+import {cssString, fileStem, jsonForHtml, jsonUrl} from './text/embed.ts';
 import {largeUnit} from './units.ts';
 import {causesTable} from './view/causes.ts';
 import {checks} from './view/checks.ts';
@@ -20,12 +20,10 @@ import {
   budgetTable,
   inputViews,
   lineTable,
-  looksTable,
   scatterTable,
   screeningTable,
   settingsTable,
   stepsTable,
-  systemsTable,
 } from './view/tables.ts';
 import {headlineNumber, verdictView} from './view/verdict.ts';
 
@@ -42,8 +40,7 @@ export async function pageView(context: ReportContext, renderer: Renderer, css: 
   return {
     title: `${heading}: ${headlineNumber(context)}`,
     css: `${squeezed(css)}@page{@bottom-left{content:${cssString(footer)}}}`,
-    kicker:
-      result.command === 'check' ? 'Check on a known mark' : 'Position from a static occupation',
+    kicker: kickerOf(context),
     heading,
     logo: options.logoDataUrl,
     preparedFor: options.preparedFor,
@@ -61,9 +58,7 @@ export async function pageView(context: ReportContext, renderer: Renderer, css: 
     notices: noticeViews(context),
     causes,
     scatter: scatterTable(context),
-    looks: looksTable(context),
     steps: stepsTable(context),
-    systems: systemsTable(context),
     budget: budgetTable(context),
     screening: screeningTable(context),
     lines: lineTable(context),
@@ -73,12 +68,20 @@ export async function pageView(context: ReportContext, renderer: Renderer, css: 
     feet: options.units === 'm' ? null : feetNote(context),
     program: `${result.program.name} ${result.program.version}`,
     json,
-    jsonUrl: `data:application/json;base64,${base64(JSON.stringify(result))}`,
+    jsonUrl: jsonUrl(result),
     jsonName: `${fileStem(heading)}-result.json`,
   };
 }
 
 export type PageView = Awaited<ReturnType<typeof pageView>>;
+
+/** What kind of report it is, and of which mark where the heading does not say so. */
+function kickerOf({result, options}: ReportContext): string {
+  const kind =
+    result.command === 'check' ? 'Check on a known mark' : 'Position from a static occupation';
+  const {mark} = result.occupation;
+  return options.title === null || mark === null ? kind : `${kind}: ${mark}`;
+}
 
 function headingOf({result}: ReportContext): string {
   const {mark} = result.occupation;
@@ -156,7 +159,7 @@ function sectionHeads(hasCauses: boolean) {
     time: next('over-time', 'Over time'),
     scatter: next('scatter', 'Scatter'),
     settling: next('settling', 'How the mean settled'),
-    signal: next('signal', 'Sky and signal'),
+    signal: next('signal', 'Correlation, sky and signal'),
     budget: next('budget', 'Uncertainty budget'),
     screening: next('screening', 'Screening'),
     provenance: next('provenance', 'Inputs and provenance'),
@@ -201,16 +204,24 @@ function noticeViews({result}: ReportContext) {
     .map(({severity, text}) => ({...SEVERITY[severity], text}));
 }
 
-/** The field sheet section by section; blank items keep a line to be filled in by hand. */
-function sheetSections({result}: ReportContext) {
-  const sections: {title: string; items: {label: string; value: string | null}[]}[] = [];
+interface SheetSection {
+  readonly title: string;
+  readonly given: {readonly label: string; readonly value: string}[];
+  /** Items that nobody gave: each keeps a line to be filled in by hand. */
+  readonly open: string[];
+}
+
+/** The field sheet section by section, in its order. */
+function sheetSections({result}: ReportContext): SheetSection[] {
+  const sections: SheetSection[] = [];
   for (const {section, item, value} of result.fieldSheet) {
     let last = sections[sections.length - 1];
     if (last?.title !== section) {
-      last = {title: section, items: []};
+      last = {title: section, given: [], open: []};
       sections.push(last);
     }
-    last.items.push({label: item, value});
+    if (value === null) last.open.push(item);
+    else last.given.push({label: item, value});
   }
   return sections;
 }

@@ -163,6 +163,8 @@ describe('the page in a browser', () => {
         page.locator('.save').click(),
       ]);
       expect(download.suggestedFilename()).toBe('skerry-4-result.json');
+      const saved = JSON.parse(readFileSync(await download.path(), 'utf8'));
+      expect(saved).toEqual(JSON.parse(JSON.stringify(sample(STILL_HOUR).result)));
     });
   });
 

@@ -332,6 +332,11 @@ function stepNames(steps: OverTimeInput['steps'], time: TimeAxis): Spec[] {
   });
 }
 
+function stripName(leftOut: boolean, gaps: boolean): string {
+  if (leftOut) return gaps ? 'Epochs left out, and gaps' : 'Epochs left out; no gap';
+  return gaps ? 'Gaps; no epoch left out' : 'No epoch left out, no gap';
+}
+
 /** Which epochs were left out, and where there were none. */
 function stripSpec(input: OverTimeInput, time: TimeAxis): Spec {
   const {bins, gaps} = input;
@@ -342,7 +347,6 @@ function stripSpec(input: OverTimeInput, time: TimeAxis): Spec {
     to: startS + Math.max(bins.binS, leastS),
     top: Math.round(STRIP_PX * (1 - Math.max(0.16, share)) * 10) / 10,
   }));
-  const heading = input.narrow ? 'Left out, and gaps' : 'Epochs left out, and gaps';
   return {
     width: time.plotPx,
     height: STRIP_PX,
@@ -367,7 +371,7 @@ function stripSpec(input: OverTimeInput, time: TimeAxis): Spec {
           y2: {value: STRIP_PX},
         },
       },
-      panelName(heading),
+      panelName(stripName(leftOut.length > 0, gaps.length > 0)),
     ],
   };
 }

@@ -26,8 +26,8 @@ interface SignalPanel {
 }
 
 const SIZES = {
-  wide: {plotPx: 640, gapPx: 32, ticks: 9, left: 40},
-  narrow: {plotPx: 296, gapPx: 32, ticks: 4, left: 36},
+  wide: {plotPx: 640, gapPx: 30, ticks: 9, left: 40},
+  narrow: {plotPx: 296, gapPx: 30, ticks: 4, left: 36},
 };
 
 /** What the record says of its signals, one panel for each thing it says. */
@@ -64,7 +64,7 @@ function panelsOf({bins, maxHdop, maxCorrectionAgeS}: SignalInput): SignalPanel[
   if (bins.has.carrierToNoise) {
     panels.push({
       name: 'Signal strength C/N0, dB-Hz',
-      heightPx: 88,
+      heightPx: 72,
       fromZero: false,
       limit: null,
       of: ({carrierToNoiseDbHz: c}) =>
@@ -74,7 +74,7 @@ function panelsOf({bins, maxHdop, maxCorrectionAgeS}: SignalInput): SignalPanel[
   if (bins.has.satellites) {
     panels.push({
       name: 'Satellites used',
-      heightPx: 58,
+      heightPx: 46,
       fromZero: true,
       limit: null,
       of: (bin) => numbers(bin.satellites),
@@ -83,7 +83,7 @@ function panelsOf({bins, maxHdop, maxCorrectionAgeS}: SignalInput): SignalPanel[
   if (bins.has.hdop) {
     panels.push({
       name: 'HDOP',
-      heightPx: 58,
+      heightPx: 46,
       fromZero: true,
       limit: maxHdop,
       of: (bin) => numbers(bin.hdop),
@@ -92,7 +92,7 @@ function panelsOf({bins, maxHdop, maxCorrectionAgeS}: SignalInput): SignalPanel[
   if (bins.has.correctionAge) {
     panels.push({
       name: 'Age of corrections, s',
-      heightPx: 58,
+      heightPx: 46,
       fromZero: true,
       limit: maxCorrectionAgeS,
       of: (bin) => numbers(bin.correctionAgeS),

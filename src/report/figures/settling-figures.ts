@@ -1,4 +1,6 @@
+import type {PerAxis} from '../../occupation/result.ts';
 import {correlationFinding, settlingFinding} from '../../wording/findings.ts';
+import {formatDuration} from '../../wording/numbers.ts';
 import {autocorrelationChart} from '../charts/autocorrelation.ts';
 import {settlingPanels} from '../charts/settling.ts';
 import {type ReportContext, singlePosition} from '../context.ts';
@@ -40,7 +42,7 @@ export function settlingFigure(context: ReportContext): FigureOrReason {
     title: SETTLING,
     finding: settlingFinding(horizontal, secondHalfM.up),
     note: banded
-      ? 'Time is logarithmic. The band takes the likeness of neighbouring epochs into account, so it narrows far more slowly than independent epochs would let it.'
+      ? 'Time is logarithmic. Neighbouring epochs are alike, so the band narrows far more slowly than for independent ones.'
       : 'Time is logarithmic. No band: the uncertainty of the mean could not be computed from this record.',
     wide: settlingPanels({...shared, narrow: false}),
     narrow: settlingPanels({...shared, narrow: true}),
@@ -68,12 +70,26 @@ export function correlationFigure(context: ReportContext): FigureOrReason {
       looks: least,
       correlationTimeS: longest,
     }),
-    note: 'Correlation of single epochs: 1 means that the later one repeats the earlier, 0 that it is a fresh look. Time is logarithmic.',
+    note: `1: the later epoch repeats the earlier one; 0: a fresh look. ${perDirection(looks, times)}Time is logarithmic.`,
     wide: autocorrelationChart(series.autocorrelation),
     narrow: null,
     legend: [],
     readout: [],
   };
+}
+
+/** Looks and correlation times of the three directions; nothing where they could not be told. */
+function perDirection(
+  looks: PerAxis<number | null> | null,
+  times: PerAxis<number | null> | null,
+): string {
+  const parts = (['east', 'north', 'up'] as const).flatMap((axis) => {
+    const count = looks?.[axis] ?? null;
+    const timeS = times?.[axis] ?? null;
+    if (count === null || timeS === null) return [];
+    return [`${axis} ${count.toFixed(count < 9.95 ? 1 : 0)} (${formatDuration(timeS)})`];
+  });
+  return parts.length === 0 ? '' : `Independent looks (correlation time): ${parts.join(', ')}. `;
 }
 
 function leastOf(values: readonly (number | null | undefined)[]): number | null {

@@ -1,7 +1,7 @@
 import type {Setting} from '../../occupation/result.ts';
 import type {Sky} from '../../occupation/series/sky.ts';
 import {signalFinding, skyFinding} from '../../wording/findings.ts';
-import {formatDuration} from '../../wording/numbers.ts';
+import {formatDuration, joined} from '../../wording/numbers.ts';
 import {signalPanels} from '../charts/signal.ts';
 import {STRENGTH_FLOORS_DB_HZ, skyChart, TRACK_FLOORS_DB_HZ} from '../charts/sky.ts';
 import type {ReportContext} from '../context.ts';
@@ -31,9 +31,11 @@ export function skyFigure({series, result}: ReportContext): FigureOrReason {
     id: 'sky',
     title: SKY,
     finding: skyFinding(series.sky.systems, blockedToward(series.sky)),
-    note: tracks
-      ? 'Zenith in the middle, horizon at the rim. Paths are wider where the signal was stronger (median of the path), dotted where none was heard; names stand at their ends.'
-      : 'Zenith in the middle, horizon at the rim. Cells show the median signal strength.',
+    note: `${joined(series.sky.systems.map(({name, satellites}) => `${name} ${satellites}`))}. Zenith in the middle, horizon at the rim. ${
+      tracks
+        ? 'Wider paths: stronger signal (median of the path); dotted: none heard. Names stand at the ends.'
+        : 'Cells show the median signal strength.'
+    }`,
     wide: chart,
     narrow: null,
     legend,

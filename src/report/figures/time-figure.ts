@@ -36,8 +36,10 @@ export function timeFigure(context: ReportContext): FigureOrReason {
         ? ([{shape: 'dash-estimate', text: 'mean'}] as const)
         : []),
     ...(input.steps.length > 0 ? ([{shape: 'dash-flagged', text: 'jump'}] as const) : []),
-    {shape: 'block-flagged', text: 'left out'},
-    {shape: 'block-hole', text: 'no data'},
+    ...(series.overTime.wide.leftOut.length > 0
+      ? ([{shape: 'block-flagged', text: 'left out'}] as const)
+      : []),
+    ...(input.gaps.length > 0 ? ([{shape: 'block-hole', text: 'no data'}] as const) : []),
   ];
   const bins = wide.hasBands
     ? `Bins of ${formatDuration(binS)}; every epoch used lies inside the light band.`

@@ -95,31 +95,6 @@ export function scatterTable({result, options}: ReportContext): Table | null {
   });
 }
 
-/** What the epochs are worth, per direction. */
-export function looksTable({result, options}: ReportContext): Table | null {
-  const position = result.position;
-  if (position?.independentLooks == null || position.correlationTimeS === null) return null;
-  const {independentLooks: looks, correlationTimeS: times, uncertainty95M: u} = position;
-  const column = lengthColumn([u?.east, u?.north, u?.up], options.units);
-  const axes = (['east', 'north', 'up'] as const).filter((axis) => looks[axis] !== null);
-  return fixedTable({
-    caption: 'Independent looks and correlation time of the record',
-    heads: [
-      head('Direction'),
-      numberHead('Looks'),
-      numberHead('Correlation s'),
-      numberHead(`95 % ± ${column.unit.name}`),
-    ],
-    rows: axes.map((axis) =>
-      row(axis === 'up' ? 'Up' : axis === 'east' ? 'East' : 'North', [
-        numberCell(fixed(looks[axis] ?? 0, (looks[axis] ?? 0) < 9.95 ? 1 : 0)),
-        numberCell(times[axis] === null ? '' : fixed(times[axis], times[axis] < 9.95 ? 1 : 0)),
-        numberCell(column.cell(u?.[axis])),
-      ]),
-    ),
-  });
-}
-
 /** Every jump found, whether it matters or not; null when there was none. */
 export function stepsTable({result, options}: ReportContext): Table | null {
   const {steps} = result.stability;
@@ -151,21 +126,6 @@ export function stepsTable({result, options}: ReportContext): Table | null {
   });
 }
 
-/** How many satellites of each system were seen. */
-export function systemsTable({series}: ReportContext): Table | null {
-  if (series.sky === null) return null;
-  const {systems} = series.sky;
-  const total = systems.reduce((sum, {satellites}) => sum + satellites, 0);
-  return fixedTable({
-    caption: 'Satellites seen during the record',
-    heads: [head('System'), numberHead('Satellites')],
-    rows: [
-      ...systems.map(({name, satellites}) => row(name, [numberCell(String(satellites))])),
-      row('All', [numberCell(String(total))], true),
-    ],
-  });
-}
-
 function valuesOf(m: ScatterMeasures): (number | null | undefined)[] {
   const {east, north, up} = m.standardDeviationM;
   return [east, north, up, m.drmsM, m.r95M, m.ellipse?.semiMajorM];
@@ -193,9 +153,14 @@ export function screeningTable({result}: ReportContext): Table {
 
 /** What happened to each line of each input; the rows add up to the lines of the files. */
 export function lineTable({result}: ReportContext): Table {
+  const several = result.inputs.length > 1;
   const rows = result.inputs.flatMap(({name, lines}) => {
     const of = (fate: string, reason: string, count: number, total = false) =>
-      row(name, [textCell(fate), textCell(reason), numberCell(String(count))], total);
+      row(
+        fate,
+        [...(several ? [textCell(name)] : []), textCell(reason), numberCell(String(count))],
+        total,
+      );
     return [
       of('used', '', lines.used),
       ...sorted(lines.ignored).map(([type, count]) => of('ignored', type, count)),
@@ -205,7 +170,12 @@ export function lineTable({result}: ReportContext): Table {
   });
   return fixedTable({
     caption: 'What happened to each line',
-    heads: [head('File'), head('Fate'), head('Type or reason'), numberHead('Lines')],
+    heads: [
+      head('Fate'),
+      ...(several ? [head('File')] : []),
+      head('Type or reason'),
+      numberHead('Lines'),
+    ],
     rows,
   });
 }

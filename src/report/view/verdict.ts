@@ -32,16 +32,19 @@ export interface KeyNumber {
   readonly qualifier: string;
 }
 
-/** The answer. The worst check sets the tone, so that a good mean never hides a finding. */
+/** The answer. A concern takes the calm tone away, so that a good mean never hides a finding. */
 export function verdictView(context: ReportContext, checks: readonly Check[]): VerdictView {
   const {result} = context;
   const {tone, status, sentence} = headline(headlineFacts(result));
   const open = checks.filter((check) => check.tone === 'look' || check.tone === 'outside');
-  const shown: Tone = tone === 'within' && open.length > 0 ? 'look' : tone;
+  const grave =
+    open.some((check) => check.tone === 'outside') ||
+    result.notices.some(({severity}) => severity === 'concern');
+  const shown: Tone = tone === 'within' && grave ? 'look' : tone;
   return {
     toneClass: shown.replace(' ', '-'),
     shape: TONE_SHAPES[shown],
-    status: shown === tone ? status : `${status}, with ${counted(open.length, 'check')} to look at`,
+    status: open.length === 0 ? status : `${status}; ${counted(open.length, 'check')} to look at`,
     sentence,
     lines: verdictLines(result),
     keys: keyNumbers(context),
