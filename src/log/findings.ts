@@ -50,6 +50,23 @@ export interface FindingValues {
   'datum-not-wgs84': {datum: string};
   /** DTM names several datums in one log. */
   'datum-changes': {datums: string};
+  // Tables: names of columns as they stand in the table or were given, parted by commas.
+  'table-columns': {used: string; unused: string};
+  /** Rows are dated by the day alone and stand at its midnight. */
+  'date-without-time': {column: string};
+  /** Nobody says on which scale the times are. */
+  'time-scale-assumed': {timeScale: 'utc'; columns: string};
+  /** A week below 1024 may be counted modulo 1024. */
+  'gps-week-below-1024': {week: number};
+  /** A column named as a height, and no more. */
+  'height-taken-as-ellipsoidal': {column: string};
+  'altitude-without-separation': {column: string};
+  /** Numbers in the quality column were read as those of GGA, or as a comment explains them. */
+  'quality-as-gga': {column: string};
+  'quality-from-comment': {column: string};
+  /** Sigmas of X, Y and Z without their correlations. */
+  'sigma-correlation-assumed-zero': {columns: string};
+  'sigmas-zero': {rows: number};
   // Lines.
   'checksum-absent': {lines: number; trusted: boolean};
   'bad-checksums': {lines: number; ofLines: number};

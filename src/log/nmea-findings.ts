@@ -132,7 +132,8 @@ function positionFindings({log, epochs, resolution}: Known): LogFinding[] {
   return found;
 }
 
-function resolutionFindings(epochs: Epochs, resolution: LogResolution): LogFinding[] {
+/** Says so when the digits cannot show what an average would. */
+export function resolutionFindings(epochs: Epochs, resolution: LogResolution): LogFinding[] {
   const latitudeDeg = epochs.latitudeDeg[0];
   if (latitudeDeg === undefined) return [];
   const cosine = Math.cos((latitudeDeg * Math.PI) / 180);

@@ -1,23 +1,14 @@
 import {EpochsBuilder} from '../epochs/builder.ts';
 import type {Satellites} from '../epochs/epochs.ts';
+import {flagOutOfOrder, flagRepeatedAndFrozen, inTimeOrder} from '../epochs/time-order.ts';
 import {InputError} from '../errors.ts';
 import {BANG, HASH} from './bytes.ts';
-import type {LogContents, LogFinding, LogReader, ReadOptions} from './contents.ts';
+import type {LogContents, LogReader, ReadOptions} from './contents.ts';
 import {type Delimiter, isBlank, textOf} from './delimited.ts';
 import {LineCutter} from './delimited-lines.ts';
 import {TableAccount} from './table-account.ts';
-import {
-  type NamedColumns,
-  namedColumns,
-  positionColumns,
-  sigmaColumns,
-  timeColumns,
-} from './table-columns.ts';
-import type {PositionColumns, SigmaColumns, TableLayout} from './table-layout.ts';
-import {inTimeOrder} from './table-order.ts';
-import {GGA_QUALITIES, qualityLegend} from './table-quality.ts';
-import {RowDecoder} from './table-rows.ts';
-import {type HeadLine, isCommentText, type TableShape, tableShape} from './table-shape.ts';
+import {tableFindings} from './table-findings.ts';
+import {type KeptLine, type OpenTable, openTable} from './table-open.ts';
 
 /** Rows read before the columns are decided on, and bytes if rows are slow to come. */
 const HEAD_ROWS = 200;
@@ -27,8 +18,6 @@ const SLASH = 0x2f;
 const SEMICOLON = 0x3b;
 /** Share of impossible positions above which a column, not a row, must be wrong. */
 const MOST_IMPLAUSIBLE = 0.01;
-const WEEKS_PER_ROLLOVER = 1024;
-const SECONDS_PER_WEEK = 604_800;
 
 /**
  * Reads a table of positions: one row per epoch, columns named by a header or by the options.
@@ -38,12 +27,6 @@ const SECONDS_PER_WEEK = 604_800;
  */
 export function createTableReader(options: ReadOptions): LogReader {
   return new TableReader(options);
-}
-
-/** A line of the head, kept until the layout is known. */
-interface KeptLine {
-  readonly bytes: Uint8Array;
-  readonly tooLong: boolean;
 }
 
 class TableReader implements LogReader {
@@ -170,7 +153,10 @@ class TableReader implements LogReader {
 
   #contents(table: OpenTable | undefined): LogContents {
     const account = this.#account;
-    const epochs = inTimeOrder(this.#builder.finish());
+    const read = this.#builder.finish();
+    const timeBack = flagOutOfOrder(read);
+    const epochs = inTimeOrder(read);
+    const order = {timeBack, sameness: flagRepeatedAndFrozen(epochs)};
     const unknown = Number.NaN;
     return {
       inputs: [
@@ -201,130 +187,11 @@ class TableReader implements LogReader {
         heightM: unknown,
         separationM: unknown,
       },
-      findings: table === undefined ? [] : findingsOf(table, epochs.gpsSeconds[0] ?? unknown),
+      findings: table === undefined ? [] : tableFindings(table, epochs, order, this.#options),
       timeScale: table?.layout.timeScale ?? 'utc',
       datumStated: null,
     };
   }
-}
-
-/** A table whose columns are decided on. */
-interface OpenTable {
-  readonly layout: TableLayout;
-  readonly columns: NamedColumns;
-  readonly rows: RowDecoder;
-  readonly headerLineNumbers: ReadonlySet<number>;
-  /** The first header line as it stands in the file; undefined without one. */
-  readonly headerText: string | undefined;
-  readonly findings: readonly LogFinding[];
-}
-
-/** @returns undefined when there is nothing but blank lines, comments and a header */
-function openTable(
-  head: readonly KeptLine[],
-  options: ReadOptions,
-  builder: EpochsBuilder,
-): OpenTable | undefined {
-  const lines: HeadLine[] = [];
-  head.forEach(({bytes, tooLong}, k) => {
-    requireText(bytes, k + 1, options.name);
-    const text = textOf(bytes, 0, bytes.length);
-    if (!tooLong && text.trim() !== '') lines.push({text, lineNumber: k + 1});
-  });
-  const shape = tableShape(lines, options.name);
-  if (shape === undefined || shape.samples.length === 0) return undefined;
-  const columns = namedColumns(shape, options.table, options.name);
-  const chosen = timeColumns(columns, options.table, options.date !== null);
-  const position = positionColumns(columns);
-  const sigmas = sigmaColumns(columns);
-  const quality = qualityOf(columns, lines, shape);
-  const layout: TableLayout = {
-    delimiter: shape.delimiter,
-    decimalMark: shape.decimalMark,
-    fields: columns.names.length,
-    time: chosen.time,
-    timeScale: chosen.timeScale,
-    position,
-    sigmas,
-    qualityField: columns.has('quality') ? columns.field('quality') : null,
-    qualityClasses: quality.classes,
-    satellites: columns.numberOrNull('satellites'),
-    hdop: columns.numberOrNull('hdop'),
-    pdop: columns.numberOrNull('pdop'),
-    vdop: columns.numberOrNull('vdop'),
-    correctionAge: columns.numberOrNull('correctionAge'),
-    stationId: columns.numberOrNull('stationId'),
-  };
-  const [firstHeaderLine] = shape.headerLineNumbers;
-  return {
-    layout,
-    columns,
-    rows: new RowDecoder(layout, options, builder),
-    headerLineNumbers: shape.headerLineNumbers,
-    headerText: lines.find(({lineNumber}) => lineNumber === firstHeaderLine)?.text,
-    findings: [
-      {
-        code: 'table-columns',
-        severity: 'note',
-        values: {used: columns.usedNames().join(', '), unused: columns.unusedNames().join(', ')},
-      },
-      ...chosen.findings,
-      ...positionFindings(position, columns),
-      ...sigmaFindings(sigmas),
-      ...quality.findings,
-    ],
-  };
-}
-
-function qualityOf(columns: NamedColumns, lines: readonly HeadLine[], shape: TableShape) {
-  const none: LogFinding[] = [];
-  const isNumeric = columns.samples('quality').some((text) => /^\d+(\.0*)?$/.test(text));
-  if (!isNumeric) return {classes: GGA_QUALITIES, findings: none};
-  const comments = lines
-    .map(({text}) => text)
-    .filter((text) => isCommentText(text, shape.delimiter));
-  const legend = qualityLegend(comments);
-  const finding: LogFinding = {
-    code: legend === undefined ? 'quality-as-gga' : 'quality-from-comment',
-    severity: 'note',
-    values: {column: columns.written('quality')},
-  };
-  return {classes: legend ?? GGA_QUALITIES, findings: [finding]};
-}
-
-function positionFindings(position: PositionColumns, columns: NamedColumns): LogFinding[] {
-  if (position.kind === 'geocentric') return [];
-  const {ellipsoidalHeight, altitude, separation} = position;
-  if (ellipsoidalHeight !== null) {
-    const column = ellipsoidalHeight.name;
-    return columns.has('height')
-      ? [{code: 'height-taken-as-ellipsoidal', severity: 'note', values: {column}}]
-      : [];
-  }
-  if (altitude !== null && separation === null) {
-    const values = {column: altitude.name};
-    return [{code: 'altitude-without-separation', severity: 'caution', values}];
-  }
-  return [];
-}
-
-function sigmaFindings(sigmas: SigmaColumns | null): LogFinding[] {
-  if (sigmas?.kind !== 'geocentric' || sigmas.xy !== null) return [];
-  const values = {columns: [sigmas.x.name, sigmas.y.name, sigmas.z.name].join(', ')};
-  return [{code: 'sigma-correlation-assumed-zero', severity: 'caution', values}];
-}
-
-function findingsOf(table: OpenTable, firstGpsSeconds: number): LogFinding[] {
-  const findings = [...table.findings];
-  const {zeroSigmas} = table.rows;
-  if (zeroSigmas > 0) {
-    findings.push({code: 'sigmas-zero', severity: 'note', values: {rows: zeroSigmas}});
-  }
-  const week = Math.floor(firstGpsSeconds / SECONDS_PER_WEEK);
-  if (table.layout.time.kind === 'gps week' && week < WEEKS_PER_ROLLOVER) {
-    findings.push({code: 'gps-week-below-1024', severity: 'caution', values: {week}});
-  }
-  return findings;
 }
 
 function isComment(
@@ -346,20 +213,6 @@ function isHeaderAgain(table: OpenTable, text: () => string): boolean {
 
 function hasByteOrderMark(bytes: Uint8Array, from: number): boolean {
   return bytes[from] === 0xef && bytes[from + 1] === 0xbb && bytes[from + 2] === 0xbf;
-}
-
-function requireText(bytes: Uint8Array, lineNumber: number, path: string): void {
-  const isUtf16 =
-    (bytes[0] === 0xff && bytes[1] === 0xfe) || (bytes[0] === 0xfe && bytes[1] === 0xff);
-  if (lineNumber === 1 && isUtf16) {
-    throw new InputError('this table is written in UTF-16; save it as UTF-8', {path, lineNumber});
-  }
-  if (bytes.includes(0)) {
-    throw new InputError('this is no text: it holds zero bytes; a table must be plain text', {
-      path,
-      lineNumber,
-    });
-  }
 }
 
 function noSatellites(): Satellites {

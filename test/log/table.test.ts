@@ -397,6 +397,49 @@ describe('order, repetition and stillness', () => {
   });
 });
 
+describe('findings about the rows as a whole', () => {
+  const row = (time: string, x: string): string => `${time},${x},617191.1131,4870822.7374`;
+
+  test('time that runs back, repeated and frozen epochs are counted', () => {
+    const {findings} = readLines([
+      'time,x,y,z',
+      row('2026-05-04T10:00:01Z', '4051761.1'),
+      row('2026-05-04T10:00:00Z', '4051761.2'),
+      row('2026-05-04T10:00:01Z', '4051761.3'),
+      row('2026-05-04T10:00:02Z', '4051761.3'),
+      row('2026-05-04T10:00:05Z', '4051761.3'),
+    ]);
+    expect(findings).toContainEqual({
+      code: 'time-back',
+      severity: 'caution',
+      values: {times: 1, largestS: 1, firstLineNumber: 3},
+    });
+    expect(findings).toContainEqual({
+      code: 'repeated-epochs',
+      severity: 'caution',
+      values: {epochs: 1},
+    });
+    expect(findings).toContainEqual({
+      code: 'frozen-run',
+      severity: 'note',
+      values: {epochs: 2, longestEpochs: 3, longestS: 4},
+    });
+  });
+
+  test('a date from the options, missing heights and coarse digits are said', () => {
+    const {findings} = readLines(['time,lat,lon', '10:00:00,50.12345,8.5'], {
+      date: {year: 2026, month: 5, day: 4},
+    });
+    const codes = findings.map(({code}) => code);
+    expect(codes).toEqual(
+      expect.arrayContaining(['date-assumed', 'height-absent', 'resolution-coarse']),
+    );
+    expect(findings.find(({code}) => code === 'date-assumed')?.values).toEqual({
+      date: '2026-05-04',
+    });
+  });
+});
+
 describe('rejected rows', () => {
   const GOOD = `${TIMES[0]},${XYZ.join()},4,0.01`;
   const bad: readonly (readonly [string, string])[] = [
