@@ -16,7 +16,7 @@ export interface Asked extends Partial<TableOptions> {
   readonly date?: ReadOptions['date'];
 }
 
-export function optionsWith({date = null, ...table}: Asked): ReadOptions {
+function optionsWith({date = null, ...table}: Asked): ReadOptions {
   return {
     name: 'table.csv',
     date,
