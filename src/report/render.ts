@@ -3,7 +3,7 @@ import {textWidthPx} from './charts/text-width.ts';
 import {slimSvg} from './svg/slim.ts';
 
 /** Words that stand for a picture where it cannot be seen. */
-export interface PictureWords {
+interface PictureWords {
   readonly id: string;
   readonly title: string;
   readonly description: string;

@@ -73,8 +73,6 @@ export async function pageView(context: ReportContext, renderer: Renderer, css: 
   };
 }
 
-export type PageView = Awaited<ReturnType<typeof pageView>>;
-
 /** What kind of report it is, and of which mark where the heading does not say so. */
 function kickerOf({result, options}: ReportContext): string {
   const kind =

@@ -73,7 +73,7 @@ export function movementFinding(facts: MovementFacts): string {
     case 'still':
       return small.length === 0
         ? 'No jump and no drift is found.'
-        : `No movement that matters; ${counted(small.length, 'small jump')} of at most ${formatLength(Math.max(...small.map(({sizeM}) => sizeM)))} found.`;
+        : `No movement that matters; ${counted(small.length, 'jump')} below the limit, at most ${formatLength(Math.max(...small.map(({sizeM}) => sizeM)))}.`;
     default:
       return 'Whether the point moved cannot be told from this record.';
   }

@@ -29,7 +29,7 @@ export interface SkyCells extends SkyFacts {
   readonly horizon: readonly {readonly azimuthDeg: number; readonly elevationDeg: number | null}[];
 }
 
-export interface SkyCell {
+interface SkyCell {
   readonly fromAzimuthDeg: number;
   readonly toAzimuthDeg: number;
   readonly fromElevationDeg: number;
@@ -179,7 +179,7 @@ function cellsOf(satellites: Satellites) {
 }
 
 /** Lower median of whole dB-Hz from their counts; null when nothing was counted. */
-export function medianLevel(counts: Uint32Array): number | null {
+function medianLevel(counts: Uint32Array): number | null {
   return levelAt(counts, 0.5);
 }
 

@@ -3,7 +3,7 @@ import {type FiveNumbers, fiveNumbers} from './order-statistics.ts';
 import {roundBinS} from './round-steps.ts';
 
 /** One bin that holds epochs used. */
-export interface TimeBin {
+interface TimeBin {
   /** Seconds since the first epoch read. */
   readonly startS: number;
   /** Bins without a hole between them share a run; lines are not drawn from run to run. */

@@ -13,7 +13,7 @@ export interface Chart {
   readonly padding: Padding;
 }
 
-export interface Padding {
+interface Padding {
   readonly left: number;
   readonly right: number;
   readonly top: number;
@@ -49,7 +49,7 @@ export const COLOUR = {
 /** Density from few to many. */
 export const RAMP = ['#dceaf5', '#b4d3e9', '#82b6d9', '#4a94c4', '#1b6fa6', '#0b4673'] as const;
 
-export const TEXT_PX = 11;
+const TEXT_PX = 11;
 
 export const CHART_CONFIG: Spec = {
   view: {stroke: null},

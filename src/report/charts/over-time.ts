@@ -90,14 +90,15 @@ interface AxisFrame {
 }
 
 /** The record's range, grown to hold the reference when that does not flatten the record. */
-function frameOf(axis: Axis, {bins, meanM}: OverTimeInput): AxisFrame {
+function frameOf(axis: Axis, {bins, meanM, referenceName}: OverTimeInput): AxisFrame {
   const range = bins.range[axis] ?? {leastM: 0, mostM: 0};
   const width = Math.max(range.mostM - range.leastM, 0.002);
   const distance = Math.max(range.leastM, -range.mostM, 0);
   if (distance <= 1.2 * width) {
     const low = Math.min(range.leastM, 0);
     const high = Math.max(range.mostM, 0);
-    return {axis, originM: 0, showsZero: true, low, high};
+    // About the mean, zero is the dashed line of the mean itself.
+    return {axis, originM: 0, showsZero: referenceName !== 'mean', low, high};
   }
   const originM = distance > 20 * width ? (meanM[axis] ?? range.leastM) : 0;
   const low = range.leastM - originM;

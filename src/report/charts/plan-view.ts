@@ -191,7 +191,7 @@ function frameLayer(frame: Frame, unit: LengthUnit, of: string): Spec {
 }
 
 /** Six classes of counts, their floors evenly spaced in the logarithm up to the fullest cell. */
-export function densityFloors(counts: readonly number[]): number[] {
+function densityFloors(counts: readonly number[]): number[] {
   let most = 1;
   for (const count of counts) most = Math.max(most, count);
   const floors = RAMP.map((_, k) => Math.ceil(most ** (k / RAMP.length)));
@@ -257,7 +257,7 @@ function cased(path: string, stroke: string, dash: readonly number[] | null, wid
 }
 
 /** Four Bézier quarters of an ellipse whose long axis points to the azimuth. */
-export function ellipsePath(
+function ellipsePath(
   x: number,
   y: number,
   semiMajorPx: number,

@@ -6,6 +6,8 @@ import {elapsedTicks, labelledAxis, roundTicks, tickAxis} from './ticks.ts';
 
 export interface SettlingInput {
   readonly settling: Settling;
+  /** Whether zero is a place of its own. */
+  readonly showsZero: boolean;
   readonly units: UnitChoice;
   readonly narrow: boolean;
 }
@@ -60,7 +62,7 @@ function frameOf(axis: keyof PerAxis, {elapsedS, meanM, halfWidthM}: Settling): 
 function panel(
   axis: keyof PerAxis,
   frame: Frame,
-  {settling, units}: SettlingInput,
+  {settling, showsZero, units}: SettlingInput,
   size: {plotPx: number; heightPx: number},
 ): Spec {
   const {elapsedS} = settling;
@@ -108,7 +110,7 @@ function panel(
       mark: {type: 'line', stroke: COLOUR.data, strokeWidth: 1.4, clip: true},
       encoding: {x, y: {...y, field: 'mean'}},
     },
-    ...(frame.low < 0 && frame.high > 0 ? [level(y, 0, COLOUR.ink, null)] : []),
+    ...(showsZero && frame.low < 0 && frame.high > 0 ? [level(y, 0, COLOUR.ink, null)] : []),
     level(y, final * unit.perM, COLOUR.estimate, [6, 4]),
     panelName(`${NAMES[axis]}, ${unit.name}`),
   ];

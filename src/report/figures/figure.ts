@@ -1,7 +1,7 @@
 import type {Chart} from '../charts/chart.ts';
 
 /** How a key of a legend is drawn in the style sheet. */
-export type KeyShape =
+type KeyShape =
   | 'line-data'
   | 'line-third'
   | 'line-ink'

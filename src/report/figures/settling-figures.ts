@@ -3,7 +3,7 @@ import {correlationFinding, settlingFinding} from '../../wording/findings.ts';
 import {formatDuration} from '../../wording/numbers.ts';
 import {autocorrelationChart} from '../charts/autocorrelation.ts';
 import {settlingPanels} from '../charts/settling.ts';
-import {type ReportContext, singlePosition} from '../context.ts';
+import {type ReportContext, referenceName, singlePosition} from '../context.ts';
 import {absent, type FigureOrReason, type LegendKey} from './figure.ts';
 
 const SETTLING = 'The mean of all epochs so far';
@@ -28,14 +28,20 @@ export function settlingFigure(context: ReportContext): FigureOrReason {
     secondHalfM.east === null || secondHalfM.north === null
       ? null
       : Math.hypot(secondHalfM.east, secondHalfM.north);
+  const name = referenceName(context);
   const legend: LegendKey[] = [
     {shape: 'line-data', text: 'mean so far'},
     ...(banded
       ? ([{shape: 'block-pale', text: '95 % of the mean, this record alone'}] as const)
       : []),
     {shape: 'dash-estimate', text: 'final mean'},
+    ...(name === 'mean' ? [] : ([{shape: 'line-ink', text: name}] as const)),
   ];
-  const shared = {settling: series.settling, units: options.units};
+  const shared = {
+    settling: series.settling,
+    showsZero: name !== 'mean',
+    units: options.units,
+  };
   return {
     kind: 'figure',
     id: 'settling',

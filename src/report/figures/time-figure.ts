@@ -29,7 +29,7 @@ export function timeFigure(context: ReportContext): FigureOrReason {
           {shape: 'block-pale', text: 'least to most'},
         ] as const)
       : []),
-    {shape: 'line-ink', text: name},
+    ...(name === 'mean' ? [] : ([{shape: 'line-ink', text: name}] as const)),
     ...(wide.showsDrift
       ? ([{shape: 'dash-estimate', text: 'fitted drift'}] as const)
       : input.steps.length === 0

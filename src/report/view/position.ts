@@ -92,10 +92,10 @@ export function coordinateTable(context: ReportContext): Table | null {
 }
 
 function coordinateCaption({of, frame, frameFrom, coordinateEpoch}: Position): string {
-  const where = frame === null ? 'frame not stated' : `${frame}${fromText(frameFrom)}`;
+  const where = frame === null ? 'not stated' : `${frame}${fromText(frameFrom)}`;
   const when = coordinateEpoch === null ? 'epoch not stated' : `epoch ${fixed(coordinateEpoch, 2)}`;
   const what = of === 'mark' ? 'Mark' : of.charAt(0).toUpperCase() + of.slice(1);
-  return `${what}: ${where}, ${when}`;
+  return `${what}. Frame and epoch: ${where}, ${when}`;
 }
 
 function fromText(from: Position['frameFrom']): string {
@@ -164,6 +164,11 @@ export function segmentTable(context: ReportContext): Table | null {
   const ups = segments.map((segment) => segment.position.uncertainty95M?.up);
   const column = lengthColumn([...radii, ...ups], options.units);
   const first = segments[0]?.position;
+  // One number of decimals per column: that of the best known part.
+  const decimals = {
+    plan: Math.max(...radii.map((radiusM) => coordinateDecimals(radiusM ?? null))),
+    up: Math.max(...ups.map((upM) => coordinateDecimals(upM ?? null))),
+  };
   return stacking({
     caption: `Each part has its own mean. ${first === undefined ? '' : coordinateCaption(first)}`,
     heads: [
@@ -175,18 +180,18 @@ export function segmentTable(context: ReportContext): Table | null {
       numberHead(`95 % plan ${column.unit.name}`),
       numberHead(`95 % up ${column.unit.name}`),
     ],
-    rows: segments.map((segment) => segmentRow(segment, column, context)),
+    rows: segments.map((segment) => segmentRow(segment, column, decimals, context)),
   });
 }
 
 function segmentRow(
   {fromUtc, toUtc, epochs, position}: Segment,
   column: {cell(valueM: number | null | undefined): string},
+  decimals: {readonly plan: number; readonly up: number},
   {options}: ReportContext,
 ): Row {
   const {geodetic, uncertainty95M} = position;
-  const degrees = degreeDecimals(coordinateDecimals(uncertainty95M?.horizontalRadius ?? null));
-  const upDecimals = coordinateDecimals(uncertainty95M?.up ?? null);
+  const degrees = degreeDecimals(decimals.plan);
   const height = geodetic.ellipsoidalHeightM;
   const sameDay = fromUtc.slice(0, 10) === toUtc.slice(0, 10);
   return row(
@@ -195,7 +200,7 @@ function segmentRow(
       numberCell(String(epochs)),
       numberCell(fixed(geodetic.latitudeDeg, degrees)),
       numberCell(fixed(geodetic.longitudeDeg, degrees)),
-      numberCell(height === null ? '' : fixed(height * largeUnit(options.units).perM, upDecimals)),
+      numberCell(height === null ? '' : fixed(height * largeUnit(options.units).perM, decimals.up)),
       numberCell(column.cell(uncertainty95M?.horizontalRadius)),
       numberCell(column.cell(uncertainty95M?.up)),
     ],
@@ -214,7 +219,9 @@ export function positionNotes(context: ReportContext): string[] {
         ? `Reduced to the mark by an antenna height of ${formatLength(height)}.`
         : position.of === 'mark'
           ? 'The position is that of the mark.'
-          : `The position is that of the ${position.of}, not of a mark below it.`,
+          : position.of === 'antenna, point not stated'
+            ? 'Nobody stated which point of the antenna the position is of, nor its height above the mark.'
+            : `The position is that of the ${position.of}, not of a mark below it.`,
     );
   }
   if (position?.grid) {

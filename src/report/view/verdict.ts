@@ -25,7 +25,7 @@ export interface VerdictView {
   readonly keys: readonly KeyNumber[];
 }
 
-export interface KeyNumber {
+interface KeyNumber {
   readonly label: string;
   readonly value: string;
   readonly unit: string;
