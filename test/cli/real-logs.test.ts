@@ -12,7 +12,7 @@ const LOGS = readdirSync(FOLDER).filter((name) => /^s\d\d-|\.snx$/.test(name));
 /** What reading each needs beyond its name: a date, or the meaning of bare columns. */
 const OPTIONS: Record<string, readonly string[]> = {
   s19: ['--date', '2014-08-01'],
-  s23: ['--columns', 'gps_week,tow_s,x,y,z,...'],
+  s23: ['--columns', '-,seconds,x,y,z,...', '--start', '2013-05-01T10:00:00'],
 };
 
 function optionsFor(name: string): readonly string[] {
