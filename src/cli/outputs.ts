@@ -56,7 +56,7 @@ async function reportOf(
     satellites: log.satellites,
     intervalS: result.epochs.intervalS,
     resolutionM: result.epochs.resolutionM,
-    settlingHalfWidthM: null,
+    settlingHalfWidthM: reduced.halfWidths95After,
   });
   return renderReport(result, series, {
     title: options.title ?? sheet.title ?? null,

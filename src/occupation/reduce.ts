@@ -55,6 +55,8 @@ export interface Reduced {
   readonly upM: Float64Array;
   /** Screening codes, 0 for the epochs used. */
   readonly reason: Uint8Array;
+  /** 95 % half-widths of the mean after a part of the record; null when there is no one mean. */
+  readonly halfWidths95After: Session['halfWidths95After'] | null;
 }
 
 /** One occupation from the joined logs to the result: the whole line, in order. */
@@ -168,6 +170,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
     result: explainNulls({...result, notices: notices.notices}, notices),
     ...aboutReference(columns, whole.meanM, offsetM),
     reason: outcome.reason,
+    halfWidths95After: single === null ? null : whole.halfWidths95After,
   };
 }
 
@@ -204,6 +207,7 @@ function withoutPosition(record: Record, outcome: ScreenOutcome): Reduced {
     northM: nowhere,
     upM: nowhere,
     reason: outcome.reason,
+    halfWidths95After: null,
   };
 }
 

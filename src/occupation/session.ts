@@ -50,6 +50,8 @@ export interface Session {
   } | null;
   /** Codes of what limits the statements above, for notices. */
   readonly limits: readonly {readonly code: string; readonly axes: readonly string[]}[];
+  /** 95 % half-widths of the mean after a part of the record; null: cannot be told. */
+  readonly halfWidths95After: (elapsedS: number) => PerAxis<number | null>;
   /** Time for a 95 % horizontal radius of the session's own; null when it cannot be told. */
   readonly timeForRadius: (radiusM: number) => {aboutS: number; allowS: number} | null;
 }
@@ -103,6 +105,10 @@ export function sessionOf(
       code,
       axes: concerned.map((component) => AXES[component]!),
     })),
+    halfWidths95After: (elapsedS) => {
+      const after = (component: number) => analysis.halfWidth95After(component, elapsedS) ?? null;
+      return {east: after(0), north: after(1), up: after(2)};
+    },
     timeForRadius: (radiusM) => timeForRadius(analysis, radiusM),
   };
 }

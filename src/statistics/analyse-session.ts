@@ -5,7 +5,7 @@ import {moments} from './moments.ts';
 import {movementSizes, settlingRegressor, stepRegressor} from './movement-sizes.ts';
 import {type MovingSumStep, movingSumStep, refineStepTime} from './moving-sums.ts';
 import {medianInPlace} from './quantile.ts';
-import {type RequiredTime, requiredTime} from './required-time.ts';
+import {deviationPart, type RequiredTime, requiredTime} from './required-time.ts';
 import {medianSpacing} from './robust.ts';
 import {jointSlopeScore, type Slope, slopes} from './slope.ts';
 import {type TimeCells, timeCells} from './time-cells.ts';
@@ -82,6 +82,8 @@ export interface SessionAnalysis {
   readonly halfWidthsWithout: (movement: TakenOut) => readonly (number | undefined)[];
   /** Largest probability that the noise is slower than the record. */
   readonly slowProbability: number;
+  /** Half-width of 95 % of the mean of one component after a part of the record, for a chart. */
+  readonly halfWidth95After: (component: number, timeS: number) => number | undefined;
   /**
    * How long the record would have to be for a half-width of one component; undefined when this
    * record cannot tell.
@@ -183,6 +185,7 @@ function untold(known: readonly Known[], code: SessionLimit): SessionAnalysis {
     limits: [{code, components: known.map((_, c) => c)}],
     slowProbability: 0,
     halfWidthsWithout: () => known.map(() => undefined),
+    halfWidth95After: () => undefined,
     requiredTime: () => undefined,
   };
 }
@@ -217,6 +220,12 @@ function analysed(record: Analysable): SessionAnalysis {
     limits: limitsOf(record, components, uncertainties, movement.testable),
     slowProbability,
     halfWidthsWithout: (takenOut) => halfWidthsWithout(record, movement, takenOut, pooled),
+    halfWidth95After: (component, timeS) => {
+      const at = varying.indexOf(component);
+      if (at < 0) return undefined;
+      const {halfWidth95, weights} = uncertainties[at]!;
+      return halfWidth95 * deviationPart(cells, fits, at, weights, timeS);
+    },
     requiredTime: (component, target) => {
       const at = varying.indexOf(component);
       const now = components[component]?.halfWidth95;

@@ -35,6 +35,32 @@ export function requiredTime(
   return {aboutS: weightedQuantile(ordered, 0.5), allowS: weightedQuantile(ordered, 0.8)};
 }
 
+/**
+ * The deviation of the mean after a time as a part of what it is after the record's own span,
+ * averaged over the models: how the mean of a growing record settles.
+ *
+ * @param weights  posterior weights of the models for this component
+ */
+export function deviationPart(
+  cells: TimeCells,
+  fits: readonly ModelFit[],
+  component: number,
+  weights: Float64Array,
+  timeS: number,
+): number {
+  let then = 0;
+  let now = 0;
+  fits.forEach(({model, components}, m) => {
+    if (weights[m]! < 1e-6) return;
+    const variance = weights[m]! * components[component]!.standardError ** 2;
+    now += variance;
+    then +=
+      (variance * varianceOfMean(model, cells.widthS, timeS)) /
+      varianceOfMean(model, cells.widthS, cells.spanS);
+  });
+  return Math.sqrt(then / now);
+}
+
 /** Time at which the deviation of the mean is `part` of what it is after the record's own span. */
 function timeFor(model: NoiseModel, cells: TimeCells, part: number): number {
   const now = varianceOfMean(model, cells.widthS, cells.spanS);
