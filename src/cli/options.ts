@@ -87,6 +87,11 @@ export function reduceOptions<T>(args: Argv<T>) {
         group: REFERENCE,
         describe: 'coordinate epoch of the positions, decimal year (that of the base or network)',
       },
+      grid: {
+        type: 'string',
+        group: REFERENCE,
+        describe: 'map grid for the position: UTM, UTM 33N, EPSG:25833 or a PROJ string',
+      },
       fix: {
         choices: [
           'best',
