@@ -9,6 +9,7 @@ import {buildSeries} from '../occupation/series.ts';
 import {type Output, readWhole} from './files.ts';
 import {logoDataUrl} from './logo.ts';
 import type {CommandArguments} from './options.ts';
+import type {ReportThread} from './report-thread.ts';
 
 const OUTPUT_NAMES = ['report', 'result', 'epochs', 'geojson', 'kml', 'sinex'] as const;
 
@@ -22,14 +23,16 @@ export async function outputsOf(
   options: CommandArguments,
   reduced: Reduced,
   request: ReduceRequest,
+  thread: ReportThread | null,
 ): Promise<Output[]> {
   const {result} = reduced;
   const outputs: Output[] = [];
   const add = (path: string | undefined, text: () => Iterable<string>) => {
     if (path !== undefined) outputs.push({path, text: text()});
   };
-  if (options.report !== undefined) {
-    outputs.push({path: options.report, text: [await reportOf(reduced, request, options)]});
+  if (options.report !== undefined && thread !== null) {
+    const text = [await reportOf(reduced, request, options, thread)];
+    outputs.push({path: options.report, text});
   }
   add(options.result, () => [resultJson(result)]);
   add(options.epochs, () => epochCsv({...reduced, epochs: request.log.epochs}));
@@ -39,13 +42,12 @@ export async function outputsOf(
   return outputs;
 }
 
-/** The report and what draws it are loaded only when a report is asked for. */
 async function reportOf(
   reduced: Reduced,
   {log, sheet}: ReduceRequest,
   options: CommandArguments,
+  thread: ReportThread,
 ): Promise<string> {
-  const {renderReport} = await import('../report/report.ts');
   const {result, reason, eastM, northM, upM} = reduced;
   const series = buildSeries({
     epochs: log.epochs,
@@ -58,7 +60,7 @@ async function reportOf(
     resolutionM: result.epochs.resolutionM,
     settlingHalfWidthM: reduced.halfWidths95After,
   });
-  return renderReport(result, series, {
+  const look = {
     title: options.title ?? sheet.title ?? null,
     preparedFor: options.preparedFor ?? sheet.client ?? null,
     remarks: options.remarks ?? sheet.remarks ?? null,
@@ -66,5 +68,6 @@ async function reportOf(
       options.logo === undefined ? null : logoDataUrl(await readWhole(options.logo), options.logo),
     units: options.units ?? sheet.units ?? 'm',
     angles: options.angles ?? 'deg',
-  });
+  };
+  return thread.render({result, series, options: look});
 }

@@ -19,6 +19,7 @@ import {outputPaths, outputsOf} from './outputs.ts';
 import {progressOn} from './progress.ts';
 import {readLogs} from './read-logs.ts';
 import {readingOptions} from './reading-options.ts';
+import {type ReportThread, startReportThread} from './report-thread.ts';
 import {
   askedOf,
   type InForce,
@@ -48,13 +49,30 @@ export async function reduce(typed: CommandArguments, command: Result['command']
   const sheet = typed.sheet === undefined ? emptySheet() : await sheetOf(typed.sheet);
   const inForce = withSheet(typed, sheet);
   const mark = await markOf(inForce.options, command);
-  const request = await requestOf(command, inForce, sheet, mark);
-  const reduced = reduceOccupation(request);
-  await writeOutputs(await outputsOf(typed, reduced, request));
+  const thread = typed.report === undefined ? null : startReportThread();
+  const reduced = await reducedAndWritten(typed, thread, () =>
+    requestOf(command, inForce, sheet, mark),
+  );
   if (!outputPaths(typed).includes('-')) {
     process.stdout.write(resultSummary(reduced.result, styleOf(process.stdout, process.env)));
   }
   return exitStatus(reduced);
+}
+
+/** Reads, computes and writes; the thread that draws the report is ended whatever happens. */
+async function reducedAndWritten(
+  typed: CommandArguments,
+  thread: ReportThread | null,
+  request: () => Promise<ReduceRequest>,
+): Promise<Reduced> {
+  try {
+    const asked = await request();
+    const reduced = reduceOccupation(asked);
+    await writeOutputs(await outputsOf(typed, reduced, asked, thread));
+    return reduced;
+  } finally {
+    await thread?.close();
+  }
 }
 
 function exitStatus({result}: Reduced): number {
