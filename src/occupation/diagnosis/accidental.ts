@@ -9,7 +9,7 @@ import {
   covarianceOver,
   difference,
   lengthM,
-  misfit,
+  misfitUnder,
   sum,
 } from './misfit.ts';
 import {combinations} from './pairs.ts';
@@ -44,16 +44,22 @@ const SIGNIFICANT_AT = 0.99;
 export function expectedMatches(check: Check, tested: readonly Tested[]): Accidental {
   const {axes, offset} = check;
   const withinM = Math.max(RANGE_M, lengthM(offset, axes));
-  const kind = significantAxes(check, offset);
+  const significantAxes = significance(check);
+  const kind = significantAxes(offset);
   const spread = kind.length === 0 ? axes : kind;
+  // Plan has two axes, height one: the number of axes names the kind.
+  const isOfKind = (point: Enu) => significantAxes(point).length === spread.length;
   const ball = ballPoints(spread.length, BALL_POINTS).map((point) =>
     onAxes(
       point.map((value) => value * withinM),
       spread,
     ),
   );
-  const possible = share(ball, (point) => isOfKind(check, point, spread));
-  const space: Space = {check, spread, withinM, possible: Math.max(possible, 1 / BALL_POINTS)};
+  const inKind = share(ball, isOfKind);
+  const others = axes.filter((axis) => !spread.includes(axis));
+  const noise = noisePoints(check, others);
+  const possible = Math.max(inKind, 1 / BALL_POINTS);
+  const space: Space = {check, spread, withinM, noise, isOfKind, possible};
   const matches = tested
     .filter(({prediction}) => prediction.freeParameters === 0)
     .map(({prediction}) => probability(space, prediction.offset, [prediction.covarianceM2]));
@@ -65,11 +71,17 @@ export function expectedMatches(check: Check, tested: readonly Tested[]): Accide
   };
 }
 
+type Matrices = Parameters<typeof covarianceOver>[1];
+
 /** Offsets that are spread over some axes within a radius, and noise on the others. */
 interface Space {
   readonly check: Check;
   readonly spread: Axes;
   readonly withinM: number;
+  /** Noise on the other axes, as points of equal weight. */
+  readonly noise: readonly Enu[];
+  /** Whether just the components of the spread are more than noise. */
+  readonly isOfKind: (offset: Enu) => boolean;
   /** Share of the ball where just these components are more than noise. */
   readonly possible: number;
 }
@@ -78,49 +90,52 @@ const BALL_POINTS = 512;
 const ELLIPSOID_POINTS = 64;
 
 function expectedPairs(space: Space, tested: readonly Tested[]): number {
-  const {check, spread, withinM} = space;
+  const {spread, withinM, isOfKind} = space;
   if (spread.length < 3) return 0;
   const probabilities = combinations(tested)
     .map(({plan, height}) => ({
       offset: sum(plan.prediction.offset, height.prediction.offset),
       covariances: [plan.prediction.covarianceM2, height.prediction.covarianceM2],
     }))
-    .filter(({offset}) => lengthM(offset, spread) <= withinM && isOfKind(check, offset, spread))
+    .filter(({offset}) => lengthM(offset, spread) <= withinM && isOfKind(offset))
     .map(({offset, covariances}) => ellipsoidOverBall(space, offset, covariances));
   return total(probabilities) / space.possible;
 }
 
 /** Probability that such an offset matches a prediction. */
 function probability(space: Space, offset: Enu, covariances: readonly Matrix3[]): number {
-  const {check, spread, withinM, possible} = space;
+  const {check, spread, withinM, isOfKind, possible} = space;
   const whole = ellipsoidOverBall(space, offset, covariances);
   if (whole === 0) return 0;
   const all = [check.covarianceM2, ...covariances];
   const points = ellipsoidPoints(space, offset, all);
+  const misfitOfIt = misfitUnder(spread, all);
+  const misfitOfNone = misfitUnder(spread, [check.covarianceM2]);
   const inside = share(
     points,
     (point) =>
       lengthM(point, spread) <= withinM &&
-      isOfKind(check, point, spread) &&
-      misfit(difference(point, offset), spread, all) < misfit(point, spread, [check.covarianceM2]),
+      isOfKind(point) &&
+      misfitOfIt(difference(point, offset)) < misfitOfNone(point),
   );
   return (whole * inside) / possible;
 }
 
 /** E[(q − t)^(n/2)] √det S / W^n. */
 function ellipsoidOverBall(
-  {check, spread, withinM}: Space,
+  {check, spread, withinM, noise}: Space,
   offset: Enu,
   covariances: readonly Matrix3[],
 ): number {
   const {axes, limit, covarianceM2} = check;
   const all = [covarianceM2, ...covariances];
+  if (lengthM(offset, spread) - reachM(spread, limit, all) > withinM) return 0;
   const others = axes.filter((axis) => !spread.includes(axis));
-  const noise = noisePoints(check, others);
+  const misfitOnOthers = misfitUnder(others, all);
   const room =
     total(
       noise.map((point) => {
-        const t = misfit(difference(point, offset), others, all);
+        const t = misfitOnOthers(difference(point, offset));
         return Math.max(0, limit - t) ** (spread.length / 2);
       }),
     ) / noise.length;
@@ -128,17 +143,18 @@ function ellipsoidOverBall(
   return (room * rootDeterminant) / withinM ** spread.length;
 }
 
-function rootDeterminantOf(axes: Axes, all: Parameters<typeof covarianceOver>[1]): number {
+/** No ellipsoid of acceptance reaches farther than √(q trace). */
+function reachM(axes: Axes, limit: number, all: Matrices): number {
+  return Math.sqrt(limit * covarianceOver(axes, all).reduce((sum, row, i) => sum + row[i]!, 0));
+}
+
+function rootDeterminantOf(axes: Axes, all: Matrices): number {
   const lower = choleskyFactor(covarianceOver(axes, all));
   return lower === undefined ? Number.NaN : lower.reduce((product, row, i) => product * row[i]!, 1);
 }
 
 /** Points that fill the ellipsoid of acceptance on the axes of the spread. */
-function ellipsoidPoints(
-  {check, spread}: Space,
-  offset: Enu,
-  all: Parameters<typeof covarianceOver>[1],
-): Enu[] {
+function ellipsoidPoints({check, spread}: Space, offset: Enu, all: Matrices): Enu[] {
   const others = check.axes.length - spread.length;
   const radius = Math.sqrt(Math.max(0, check.limit - others));
   const lower = choleskyFactor(covarianceOver(spread, all)) ?? [];
@@ -153,7 +169,7 @@ function noisePoints({covarianceM2}: Check, axes: Axes): Enu[] {
   return normalPoints(axes.length).map((point) => onAxes(transformed(lower, point, 1), axes));
 }
 
-const RINGS = 12;
+const RINGS = 8;
 
 /** Midpoints of equal shares of the standard normal law in 0, 1 or 2 dimensions. */
 function normalPoints(dimensions: number): number[][] {
@@ -188,21 +204,17 @@ function offsetOn(offset: Enu, axes: Axes): Enu {
   );
 }
 
-/** The axes of those components, plan and height, that are more than noise. */
-function significantAxes({axes, covarianceM2}: Check, offset: Enu): Axes {
-  return [axes.filter((axis) => axis < 2), axes.filter((axis) => axis === 2)]
+/** Which axes belong to the components, plan and height, that are more than noise. */
+function significance({axes, covarianceM2}: Check): (offset: Enu) => Axes {
+  const parts = [axes.filter((axis) => axis < 2), axes.filter((axis) => axis === 2)]
     .filter((part) => part.length > 0)
-    .filter(
-      (part) =>
-        misfit(offset, part, [covarianceM2]) > SIGNIFICANT_LIMITS[part.length === 1 ? 0 : 1]!,
-    )
-    .flat();
-}
-
-const SIGNIFICANT_LIMITS = [1, 2].map((axes) => chiSquareQuantile(SIGNIFICANT_AT, axes));
-
-function isOfKind(check: Check, offset: Enu, spread: Axes): boolean {
-  return significantAxes(check, offset).length === spread.length;
+    .map((part) => ({
+      part,
+      misfitOf: misfitUnder(part, [covarianceM2]),
+      limit: chiSquareQuantile(SIGNIFICANT_AT, part.length),
+    }));
+  return (offset) =>
+    parts.filter(({misfitOf, limit}) => misfitOf(offset) > limit).flatMap(({part}) => part);
 }
 
 function nameOf(axes: Axes): Accidental['of'] {

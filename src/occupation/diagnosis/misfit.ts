@@ -52,19 +52,29 @@ export function misfit(
   axes: Axes,
   matrices: readonly (CovarianceM2 | Matrix3)[],
 ): number {
+  return misfitUnder(axes, matrices)(residual);
+}
+
+/** `misfit` for many residuals under one covariance. */
+export function misfitUnder(
+  axes: Axes,
+  matrices: readonly (CovarianceM2 | Matrix3)[],
+): (residual: Enu) => number {
   const lower = choleskyFactor(covarianceOver(axes, matrices));
-  if (lower === undefined) return Number.POSITIVE_INFINITY;
-  const values = components(residual);
-  const solved: number[] = [];
-  let total = 0;
-  axes.forEach((axis, i) => {
-    let rest = values[axis]!;
-    for (let j = 0; j < i; j++) rest -= lower[i]![j]! * solved[j]!;
-    const scaled = rest / lower[i]![i]!;
-    solved.push(scaled);
-    total += scaled * scaled;
-  });
-  return total;
+  if (lower === undefined) return () => Number.POSITIVE_INFINITY;
+  return (residual) => {
+    const values = components(residual);
+    const solved: number[] = [];
+    let total = 0;
+    for (let i = 0; i < axes.length; i++) {
+      let rest = values[axes[i]!]!;
+      for (let j = 0; j < i; j++) rest -= lower[i]![j]! * solved[j]!;
+      const scaled = rest / lower[i]![i]!;
+      solved.push(scaled);
+      total += scaled * scaled;
+    }
+    return total;
+  };
 }
 
 /** L with C = L Lᵀ; undefined when C is not positive definite. */

@@ -30,7 +30,9 @@ export function pairsOf(check: Check, tested: readonly Tested[]): DiagnosedPair[
   const {axes, limit} = check;
   if (axes.length < 3) return [];
   const alone = tested.filter((one) => misfitOf(check, one) > limit);
-  return combinations(alone)
+  // A cause of the height alone helps no plan: the plan must fit by itself on its two axes.
+  const possible = alone.filter((one) => !hasPlan(one) || planMisfit(check, one) <= limit);
+  return combinations(possible)
     .map((pair) => ({...pair, misfit: pairMisfit(check, pair)}))
     .filter((pair) => pair.misfit <= limit)
     .sort((a, b) => a.misfit - b.misfit)
@@ -40,6 +42,15 @@ export function pairsOf(check: Check, tested: readonly Tested[]): DiagnosedPair[
       predictedM: perAxis(sum(plan.prediction.offset, height.prediction.offset), axes),
       misfit,
     }));
+}
+
+const PLAN_AXES = [0, 1];
+
+function planMisfit({offset, covarianceM2}: Check, {prediction}: Tested): number {
+  return misfit(difference(offset, prediction.offset), PLAN_AXES, [
+    covarianceM2,
+    prediction.covarianceM2,
+  ]);
 }
 
 function pairMisfit(
