@@ -52,27 +52,66 @@ interface Materiality {
   readonly steps: ReadonlySet<number>;
 }
 
+/** No more than this many steps are tried together: beyond them jumping is what the record does. */
+const TRIED_TOGETHER = 4;
+
 /**
- * Which steps matter, the largest first: each is held against the limit of the record without it
- * and without the material ones before it, until one does not matter. In a record that jumps again
- * and again by as much, no single jump stands out, and none is material.
+ * Which steps matter: the largest ones, as many as stand out together against the record without
+ * them. In a record that jumps again and again by as much, none stands out, and none is material.
  */
 function materialSteps(session: Session, rule: MovementRule): Materiality {
-  const {steps, halfWidths95Without} = session;
-  const order = steps
-    .map(({sizeM}, number) => ({number, sizeM}))
-    .sort((a, b) => horizontalM(b) - horizontalM(a) || a.number - b.number);
-  const material: number[] = [];
-  const other = {drift: session.movement === 'drift', settling: session.movement === 'settling'};
-  let limit = limitOf(halfWidths95Without({steps: [], ...other}), rule);
-  for (const step of order) {
-    limit = limitOf(halfWidths95Without({steps: [...material, step.number], ...other}), rule);
-    const matters =
-      exceeds(horizontalM(step), limit.horizontal) || exceeds(step.sizeM.up ?? 0, limit.up);
-    if (!matters) break;
-    material.push(step.number);
+  const {halfWidths95Without} = session;
+  const other = {drift: drifts(session), settling: session.movement === 'settling'};
+  const limitWithout = (steps: readonly number[]) =>
+    limitOf(halfWidths95Without({steps, ...other}), rule);
+  const order = lastingSteps(session);
+  for (let tried = Math.min(TRIED_TOGETHER, order.length); tried > 0; tried--) {
+    const together = order.slice(0, tried);
+    const limit = limitWithout(together.map(({number}) => number));
+    const standOut = together.every(
+      (step) =>
+        exceeds(horizontalM(step), limit.horizontal) || exceeds(step.sizeM.up ?? 0, limit.up),
+    );
+    if (standOut) return {limit, steps: new Set(together.map(({number}) => number))};
   }
-  return {limit, steps: new Set(material)};
+  const largest = order.slice(0, 1).map(({number}) => number);
+  return {limit: limitWithout(largest), steps: new Set()};
+}
+
+/** Whether some axis drifts beyond its own interval, beside the steps or without them. */
+function drifts({movement, drift}: Session): boolean {
+  if (movement !== 'drift' && movement !== 'step') return false;
+  return [drift.east, drift.north, drift.up].some(
+    (axis) => axis !== null && axis.interval95MPerS[0] * axis.interval95MPerS[1] > 0,
+  );
+}
+
+/** A jump that is taken back this soon, and by more than half, moves the mean by little. */
+const EXCURSION_SHARE = 0.1;
+const TAKEN_BACK = 0.5;
+
+/** Steps by size, the largest first; the two ends of an excursion are not among them. */
+function lastingSteps(session: Session): {number: number; sizeM: PerAxis<number | null>}[] {
+  const {steps} = session;
+  const spanS = session.toGpsSeconds - session.fromGpsSeconds;
+  const gone = new Set<number>();
+  for (let i = 1; i < steps.length; i++) {
+    const [out, back] = [steps[i - 1]!, steps[i]!];
+    const left = {
+      sizeM: {
+        east: (out.sizeM.east ?? 0) + (back.sizeM.east ?? 0),
+        north: (out.sizeM.north ?? 0) + (back.sizeM.north ?? 0),
+        up: null,
+      },
+    };
+    const soon = back.gpsSeconds - out.gpsSeconds < EXCURSION_SHARE * spanS;
+    const larger = Math.max(horizontalM(out), horizontalM(back));
+    if (soon && !gone.has(i - 1) && horizontalM(left) < TAKEN_BACK * larger) gone.add(i - 1).add(i);
+  }
+  return steps
+    .map(({sizeM}, number) => ({number, sizeM}))
+    .filter(({number}) => !gone.has(number))
+    .sort((a, b) => horizontalM(b) - horizontalM(a) || a.number - b.number);
 }
 
 function horizontalM({sizeM: {east, north}}: Pick<FoundStep, 'sizeM'>): number {
