@@ -5,26 +5,11 @@ export const MOST_FIELDS = 40;
 /** Digits that fit into a 32-bit integer. */
 const MOST_DIGITS = 9;
 
-/**
- * What a field is, in bits: its kind, its sign, digits before the point (4 bits), decimals (4 bits).
- */
-export const FieldShape = {
-  empty: 0,
-  number: 0x1000,
-  /** Neither empty nor a number. */
-  other: 0x2000,
-  /** The first byte is a sign. */
-  signed: 0x200,
-  negative: 0x100,
-  wholeDigits: 0xf0,
-  decimals: 0x0f,
-} as const;
-const WHOLE_DIGITS_SHIFT = 4;
-
-/** The shape of a whole number without sign of so many digits. */
-export function wholeShape(digits: number): number {
-  return FieldShape.number | (digits << WHOLE_DIGITS_SHIFT);
-}
+/** What a field is. */
+export const EMPTY = 0;
+export const NUMBER = 1;
+/** Neither empty nor a number. */
+export const OTHER = 2;
 
 /**
  * Where the fields of a sentence stand and what they are.
@@ -35,8 +20,13 @@ export function wholeShape(digits: number): number {
 export class FieldLayout {
   /** Fields. */
   count = 0;
-  /** By field, `FieldShape` bits; empty from `count` on. */
-  readonly shapes = new Int32Array(MOST_FIELDS);
+  // By field; empty from `count` on.
+  readonly kinds = new Uint8Array(MOST_FIELDS);
+  /** −1 and 1 for a number with that sign, 0 without. */
+  readonly signs = new Int8Array(MOST_FIELDS);
+  readonly wholeDigits = new Uint8Array(MOST_FIELDS);
+  /** At most nine; more are not counted. */
+  readonly decimals = new Uint8Array(MOST_FIELDS);
   /** By field, first byte from the start of the first field; one more for the end. */
   readonly starts = new Int32Array(MOST_FIELDS + 1);
   /** Bytes from the first field to `*`; −1 when the layout cannot be used again. */
@@ -49,7 +39,8 @@ export class FieldLayout {
   fits(bytes: Uint8Array, from: number, end: number): boolean {
     if (end - from !== this.#length) return false;
     const marks = this.#marks;
-    for (let k = 0; k < this.#markCount; k += 1) {
+    const markCount = this.#markCount;
+    for (let k = 0; k < markCount; k += 1) {
       const mark = marks[k] ?? 0;
       if (bytes[from + (mark >> 8)] !== (mark & 0xff)) return false;
     }
@@ -65,42 +56,39 @@ export class FieldLayout {
       this.starts[count] = at - from;
       let stop = at;
       while (stop < end && bytes[stop] !== COMMA) stop += 1;
-      this.shapes[count] = this.#shapeOf(bytes, from, at, stop);
+      this.kinds[count] = this.#learnField(bytes, from, count, stop);
       if (stop < end) this.#mark(from, stop, COMMA);
       at = stop + 1;
       count += 1;
     }
     this.starts[count] = at - from;
-    this.shapes.fill(FieldShape.empty, count);
+    this.kinds.fill(EMPTY, count);
     // What stands behind the last field was not looked at, and need not be the same.
     if (at <= end) this.#length = -1;
     this.count = count;
   }
 
-  #shapeOf(bytes: Uint8Array, from: number, start: number, stop: number): number {
-    if (start === stop) return FieldShape.empty;
-    let shape: number = FieldShape.number;
-    let at = start;
-    const sign = bytes[at] ?? 0;
-    if (sign === MINUS || sign === PLUS) {
-      shape |= FieldShape.signed | (sign === MINUS ? FieldShape.negative : 0);
-      at += 1;
-    }
-    const wholeEnd = digitsEnd(bytes, at, stop);
+  /** Learns the field that ends at `stop`; returns what it is. */
+  #learnField(bytes: Uint8Array, from: number, field: number, stop: number): number {
+    const start = from + (this.starts[field] ?? 0);
+    if (start === stop) return EMPTY;
+    const first = bytes[start] ?? 0;
+    const isSigned = first === MINUS || first === PLUS;
+    const wholeStart = isSigned ? start + 1 : start;
+    const wholeEnd = digitsEnd(bytes, wholeStart, stop);
     const hasPoint = wholeEnd < stop && bytes[wholeEnd] === DOT;
-    const fractionEnd = hasPoint ? digitsEnd(bytes, wholeEnd + 1, stop) : wholeEnd;
-    const wholeDigits = wholeEnd - at;
-    let decimals = hasPoint ? fractionEnd - wholeEnd - 1 : 0;
-    if (fractionEnd < stop || wholeDigits > MOST_DIGITS || wholeDigits + decimals === 0) {
-      return FieldShape.other;
-    }
-    if ((shape & FieldShape.signed) !== 0) this.#mark(from, start, sign);
+    const numberEnd = hasPoint ? digitsEnd(bytes, wholeEnd + 1, stop) : wholeEnd;
+    const wholeDigits = wholeEnd - wholeStart;
+    const decimals = hasPoint ? numberEnd - wholeEnd - 1 : 0;
+    if (numberEnd < stop || wholeDigits > MOST_DIGITS || wholeDigits + decimals === 0) return OTHER;
+    if (isSigned) this.#mark(from, start, first);
     if (hasPoint) this.#mark(from, wholeEnd, DOT);
-    if (decimals > MOST_DIGITS) {
-      decimals = MOST_DIGITS;
-      this.#length = -1;
-    }
-    return shape | (wholeDigits << WHOLE_DIGITS_SHIFT) | decimals;
+    // Digits that are not counted would not be looked at the next time.
+    if (decimals > MOST_DIGITS) this.#length = -1;
+    this.signs[field] = isSigned ? (first === MINUS ? -1 : 1) : 0;
+    this.wholeDigits[field] = wholeDigits;
+    this.decimals[field] = Math.min(decimals, MOST_DIGITS);
+    return NUMBER;
   }
 
   #mark(from: number, place: number, byte: number): void {

@@ -57,5 +57,5 @@ export function decodeGga(
 /** A height is followed by its unit; a height in another unit than metres is refused. */
 function checkMetres(fields: SentenceFields, field: number): void {
   const unit = fields.letter(field + 1);
-  if (unit !== METRES && unit !== 0 && fields.letter(field) !== 0) fields.fault = Rejection.unit;
+  if (unit !== METRES && unit !== 0 && fields.isGiven(field)) fields.fault = Rejection.unit;
 }

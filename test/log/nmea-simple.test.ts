@@ -208,8 +208,8 @@ describe('decoders agree with nmea-simple on every non-empty field', () => {
 
 function satellitesOf(fields: readonly string[]) {
   const split = new SentenceFields();
-  const text = fields.slice(1).join(',');
-  split.begin(bytesOf(`${text}*`), 0, text.length, 7);
+  const text = fields.join(',');
+  split.begin(bytesOf(`${text}*`), 7, text.length, 7);
   const sample = new SatelliteSample();
   expect(sample.take(split, 0x4750)).toBe(0);
   const builder = new SatellitesBuilder();
