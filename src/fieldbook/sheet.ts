@@ -11,7 +11,6 @@ export type AntennaEntry = NonNullable<SheetEntries['antenna']>;
 export type AntennaReadings = NonNullable<AntennaEntry['before']>;
 export type EccentricityEntry = NonNullable<SheetEntries['eccentricity']>;
 export type StatedUncertainty = NonNullable<SheetEntries['standardUncertainties']>[number];
-export type SheetSettings = NonNullable<SheetEntries['settings']>;
 
 /** What was written down in the field about one occupation; `undefined` is "not given". */
 export interface Sheet extends SheetEntries {

@@ -229,8 +229,7 @@ export class SentenceFields {
       const decimals = layout.decimals[field] ?? 0;
       const start = this.#from + (layout.starts[field] ?? 0) + (sign === 0 ? 0 : 1);
       const whole = digitsAt(this.#view, start, wholeDigits);
-      const fraction =
-        decimals === 0 ? 0 : digitsAt(this.#view, start + wholeDigits + 1, decimals);
+      const fraction = decimals === 0 ? 0 : digitsAt(this.#view, start + wholeDigits + 1, decimals);
       this.#sign = sign;
       this.#whole = whole;
       this.#wholeDigits = wholeDigits;

@@ -1,3 +1,5 @@
+import {leapSecondsKnownAt} from '../time/gps-time.ts';
+import {LEAP_SECONDS_SOURCE} from '../time/leap-seconds.ts';
 import {couldPass} from './compare.ts';
 import type {NoticeList} from './notices.ts';
 import type {ReduceRequest} from './request.ts';
@@ -16,6 +18,21 @@ const CLEAN_SHARE = 0.1;
 /** What reading found, before anything is computed. */
 export function noticeRecord({log}: ReduceRequest, notices: NoticeList): void {
   for (const {severity, code, values} of log.findings) notices.add(severity, code, [], values);
+  noticeLeapSeconds(log, notices);
+}
+
+/** GPS time was turned into UTC: by which table, and whether it reaches as far as the record. */
+function noticeLeapSeconds({timeScale, epochs}: ReduceRequest['log'], notices: NoticeList): void {
+  if (timeScale !== 'gps' || epochs.count === 0) return;
+  const known = leapSecondsKnownAt(epochs.gpsSeconds[epochs.count - 1]!);
+  notices.add(
+    known ? 'note' : 'caution',
+    known ? 'leap-seconds-used' : 'leap-seconds-expired',
+    [],
+    {
+      source: LEAP_SECONDS_SOURCE,
+    },
+  );
 }
 
 export function noticeScreening(

@@ -27,6 +27,8 @@ export interface LogRead {
     readonly separationM: number;
   };
   readonly findings: readonly Finding[];
+  /** `gps`: the leap-second table was needed to print UTC. */
+  readonly timeScale: 'utc' | 'gps';
 }
 
 /** Everything that one reduction rests on; every default is already filled in. */

@@ -32,6 +32,10 @@ export const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
     'The receiver was travelling during this record, so no mean is given. `stillmark contents` lists the periods during which it stood; take one with --stand N.',
   'no-usable-epoch': (v) =>
     `None of the ${numberIn(v, 'read')} epochs read passes the screening rules. Look at the counts of what each rule left out, and loosen the rule that was meant for other data.`,
+  'leap-seconds-used': (v) =>
+    `The log gives GPS time; UTC was made with the leap seconds of ${textIn(v, 'source')}.`,
+  'leap-seconds-expired': (v) =>
+    `The log gives GPS time later than the leap-second table reaches (${textIn(v, 'source')}): UTC may be off by a second. Get a newer stillmark.`,
   'fix-class-minority': (v) =>
     `Only ${formatPercent(numberIn(v, 'share'))} of the valid epochs are ${textIn(v, 'fixClass')} and were kept; the rest were left out by their flag. Log until the fix holds, or choose another class with --fix.`,
   'fix-class-unknown': () =>

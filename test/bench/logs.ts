@@ -6,7 +6,6 @@ import {simulate} from '../simulate/simulate.ts';
 
 /** The usual seven sentences of one epoch. */
 const SENTENCES = ['GGA', 'RMC', 'GSA', 'GST', 'VTG', 'GLL', 'ZDA'] as const;
-const DAY_S = 86_400;
 
 /**
  * Writes a day at 1 Hz, seven sentences an epoch and satellites twice a minute, again and again on
@@ -29,5 +28,3 @@ export function writeDays(path: string, days: number): void {
   }
   closeSync(file);
 }
-
-export const EPOCHS_PER_DAY = DAY_S;
