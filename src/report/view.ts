@@ -15,6 +15,7 @@ import {largeUnit} from './units.ts';
 import {causesTable} from './view/causes.ts';
 import {checks} from './view/checks.ts';
 import {type DrawnFigure, figurePainter} from './view/drawn-figure.ts';
+import {frameChangeTable} from './view/frame-change.ts';
 import {coordinateTable, offsetTable, positionNotes, segmentTable} from './view/position.ts';
 import {
   budgetTable,
@@ -60,6 +61,7 @@ export async function pageView(context: ReportContext, renderer: Renderer, css: 
     scatter: scatterTable(context),
     steps: stepsTable(context),
     budget: budgetTable(context),
+    frameChange: frameChangeTable(context),
     screening: screeningTable(context),
     lines: lineTable(context),
     inputs: inputViews(context),

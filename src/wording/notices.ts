@@ -1,6 +1,7 @@
 import {ANTENNA_SENTENCES} from './antenna-notices.ts';
 import {LOG_SENTENCES} from './log-notices.ts';
 import {
+  counted,
   formatDuration,
   formatGivenLength,
   formatLength,
@@ -58,7 +59,7 @@ export const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
   'step-material': (v) =>
     `The positions jumped by ${formatLength(numberIn(v, 'sizeM'))} at ${formatUtc(textIn(v, 'utc'))} UTC${beside(v)}. Each side has its own mean; find out which setup is the right one and measure again.`,
   'steps-small': (v) =>
-    `${numberIn(v, 'count')} small jumps of the positions were found, the largest ${formatLength(numberIn(v, 'sizeM'))} at ${formatUtc(textIn(v, 'utc'))} UTC${beside(v)}; all are below what matters for this record.`,
+    `${counted(numberIn(v, 'count'), 'small jump')} of the positions found, the largest ${formatLength(numberIn(v, 'sizeM'))} at ${formatUtc(textIn(v, 'utc'))} UTC${beside(v)}; all are below what matters for this record.`,
   'drift-material': (v) =>
     `The positions drift (${axisRates(v)}), by more over the record than may be overlooked. Check that tripod and tribrach were firm, and measure again.`,
   'settling-material': (v) =>
@@ -66,7 +67,7 @@ export const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
   'settling-small': (v) =>
     `The positions settle by ${formatLength(numberIn(v, 'sizeM'))} in the first ${formatDuration(numberIn(v, 'timeConstantS'))} or so, less than what matters for this record.`,
   gaps: (v) =>
-    `${numberIn(v, 'count')} gaps, the longest ${formatDuration(numberIn(v, 'longestS'))} from ${formatUtc(textIn(v, 'fromUtc'))} UTC.`,
+    `${counted(numberIn(v, 'count'), 'gap')}, the longest ${formatDuration(numberIn(v, 'longestS'))} from ${formatUtc(textIn(v, 'fromUtc'))} UTC.`,
   'segments-not-compared': (v) =>
     `The record falls into ${numberIn(v, 'segments')} parts with different means, so it is not compared with ${textIn(v, 'mark') || 'the mark'} as a whole.`,
   assumed: (v) =>
