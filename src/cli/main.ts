@@ -3,10 +3,13 @@ import yargs, {type Argv} from 'yargs';
 import {hideBin} from 'yargs/helpers';
 import {InputError, UsageError} from '../errors.ts';
 import {
+  checkExamples,
   checkOptions,
+  contentsExamples,
   contentsOptions,
   inputOptions,
   outputOptions,
+  reduceExamples,
   reduceOptions,
 } from './options.ts';
 import {STATUS} from './status.ts';
@@ -58,6 +61,7 @@ async function run(words: readonly string[]): Promise<number> {
     .exitProcess(false)
     .strict()
     .recommendCommands()
+    .completion('completion', 'Print a script for completion in bash or zsh')
     .demandCommand(1, 'name a command: contents, reduce or check')
     .wrap(100)
     .epilogue(EXIT_STATUSES)
@@ -73,21 +77,21 @@ function commands(parser: Argv, answer: (status: number) => void): Argv {
     .command(
       'contents <log..>',
       'What is in these logs, and what is wrong with them',
-      (args) => contentsOptions(inputOptions(args)),
+      (args) => contentsExamples(contentsOptions(inputOptions(args))),
       async (argv) =>
         answer(await (await import('./contents.ts')).contents(withStandardInput(argv))),
     )
     .command(
       'reduce <log..>',
       'One occupation: position, honest uncertainty, report',
-      (args) => outputOptions(reduceOptions(inputOptions(args))),
+      (args) => reduceExamples(outputOptions(reduceOptions(inputOptions(args)))),
       async (argv) =>
         answer(await (await import('./reduce.ts')).reduce(withStandardInput(argv), 'reduce')),
     )
     .command(
       'check <log..>',
       'The same against a known mark and a tolerance; the verdict sets the exit status',
-      (args) => outputOptions(checkOptions(reduceOptions(inputOptions(args)))),
+      (args) => checkExamples(outputOptions(checkOptions(reduceOptions(inputOptions(args))))),
       async (argv) =>
         answer(await (await import('./reduce.ts')).reduce(withStandardInput(argv), 'check')),
     );

@@ -13,6 +13,42 @@ const DECISION = 'What is asked of the record:';
 const PRESENTATION = 'How the report looks:';
 const OUTPUT = 'Outputs (nothing is written unasked; - is standard output):';
 
+/** Three real examples behind the options of a command, each on a line of its own. */
+function withExamples<T>(args: Argv<T>, examples: readonly (readonly [string, string])[]): Argv<T> {
+  const lines = examples.map(([command, says]) => `  ${command}\n      ${says}`);
+  return args.epilogue(`Examples:\n${lines.join('\n')}`);
+}
+
+export function contentsExamples<T>(args: Argv<T>): Argv<T> {
+  return withExamples(args, [
+    ['stillmark contents day1.nmea', 'list sentences, rate, gaps, fixes and rejected lines'],
+    ['stillmark contents morning.log evening.log.gz', 'join two files in time order'],
+    ['stillmark contents walk.nmea', 'number the periods during which the receiver stood'],
+  ]);
+}
+
+export function reduceExamples<T>(args: Argv<T>): Argv<T> {
+  return withExamples(args, [
+    ['stillmark reduce day1.nmea --report day1.html', 'position, uncertainty and a report'],
+    ['stillmark reduce base.txt --columns time,x,y,z --start 2026-05-04T10:00:00', 'a bare table'],
+    ['stillmark reduce walk.nmea --stand 2 --result stop2.json', 'one stop of a longer log'],
+  ]);
+}
+
+export function checkExamples<T>(args: Argv<T>): Argv<T> {
+  return withExamples(args, [
+    ['stillmark check am.nmea --marks marks.yaml --mark P7 --tolerance 20mm', 'the first setup'],
+    [
+      'stillmark check am.nmea --sheet am.yaml --marks site.yaml --report am.html',
+      'the rest from the field sheet, with a report',
+    ],
+    [
+      'stillmark check am.nmea pm.nmea --mark P7 --marks site.csv --fix fixed',
+      'two files, fixed only',
+    ],
+  ]);
+}
+
 export function inputOptions<T>(args: Argv<T>) {
   return args
     .positional('log', {
@@ -63,113 +99,90 @@ export function inputOptions<T>(args: Argv<T>) {
 }
 
 export function contentsOptions<T>(args: Argv<T>) {
-  return args
-    .options({
-      result: {type: 'string', group: OUTPUT, describe: 'write what was found as JSON'},
-    })
-    .example('$0 contents day1.nmea', 'list sentences, rate, gaps, fixes and rejected lines')
-    .example('$0 contents morning.log evening.log.gz', 'join two files in time order')
-    .example('$0 contents walk.nmea', 'number the periods during which the receiver stood');
+  return args.options({
+    result: {type: 'string', group: OUTPUT, describe: 'write what was found as JSON'},
+  });
 }
 
 export function reduceOptions<T>(args: Argv<T>) {
-  return args
-    .options({
-      sheet: {type: 'string', group: REFERENCE, describe: 'field sheet (YAML)'},
-      at: {
-        type: 'string',
-        group: REFERENCE,
-        describe: 'reference for east, north and up: latitude,longitude,ellipsoidal height',
-      },
-      frame: {type: 'string', group: REFERENCE, describe: 'frame of the positions in the log'},
-      'coordinate-epoch': {
-        type: 'number',
-        group: REFERENCE,
-        describe: 'coordinate epoch of the positions, decimal year (that of the base or network)',
-      },
-      grid: {
-        type: 'string',
-        group: REFERENCE,
-        describe: 'map grid for the position: UTM, UTM 33N, EPSG:25833 or a PROJ string',
-      },
-      fix: {
-        choices: [
-          'best',
-          'fixed',
-          'float',
-          'differential',
-          'autonomous',
-          'precise',
-          'any',
-        ] as const,
-        group: SCREENING,
-        describe: 'fix class to use (default: the best that lasts)',
-      },
-      'min-satellites': {type: 'number', group: SCREENING, describe: 'fewest satellites used'},
-      'max-hdop': {type: 'number', group: SCREENING, describe: 'largest horizontal DOP'},
-      'max-pdop': {type: 'number', group: SCREENING, describe: 'largest position DOP'},
-      'max-age': {type: 'string', group: SCREENING, describe: 'largest correction age, such as 5s'},
-      'max-sigma': {
-        type: 'string',
-        group: SCREENING,
-        describe: "largest horizontal sigma by the receiver's own account, such as 30mm",
-      },
-      'from-utc': {type: 'string', group: SCREENING, describe: 'leave out what is earlier'},
-      'to-utc': {type: 'string', group: SCREENING, describe: 'leave out what is later'},
-      settle: {
-        type: 'string',
-        group: SCREENING,
-        describe: 'leave out the start of the occupation, such as 5min',
-      },
-      stand: {
-        type: 'number',
-        group: SCREENING,
-        describe: 'use only the N-th standing period that `contents` lists',
-      },
-      want: {
-        type: 'string',
-        group: DECISION,
-        describe: 'wished 95 % horizontal radius, such as 10mm: how long would it take',
-      },
-      'movement-limit': {
-        type: 'string',
-        group: DECISION,
-        describe: 'movement that matters, such as 5mm (default: from the uncertainty)',
-      },
-    })
-    .example('$0 reduce day1.nmea --report day1.html', 'position, uncertainty and a report')
-    .example('$0 reduce base.txt --columns time,x,y,z --start 2026-05-04T10:00:00', 'a bare table')
-    .example('$0 reduce walk.nmea --stand 2 --result stop2.json', 'one stop of a longer log');
+  return args.options({
+    sheet: {type: 'string', group: REFERENCE, describe: 'field sheet (YAML)'},
+    at: {
+      type: 'string',
+      group: REFERENCE,
+      describe: 'reference for east, north and up: latitude,longitude,ellipsoidal height',
+    },
+    frame: {type: 'string', group: REFERENCE, describe: 'frame of the positions in the log'},
+    'coordinate-epoch': {
+      type: 'number',
+      group: REFERENCE,
+      describe: 'coordinate epoch of the positions, decimal year (that of the base or network)',
+    },
+    grid: {
+      type: 'string',
+      group: REFERENCE,
+      describe: 'map grid for the position: UTM, UTM 33N, EPSG:25833 or a PROJ string',
+    },
+    fix: {
+      choices: ['best', 'fixed', 'float', 'differential', 'autonomous', 'precise', 'any'] as const,
+      group: SCREENING,
+      describe: 'fix class to use (default: the best that lasts)',
+    },
+    'min-satellites': {type: 'number', group: SCREENING, describe: 'fewest satellites used'},
+    'max-hdop': {type: 'number', group: SCREENING, describe: 'largest horizontal DOP'},
+    'max-pdop': {type: 'number', group: SCREENING, describe: 'largest position DOP'},
+    'max-age': {type: 'string', group: SCREENING, describe: 'largest correction age, such as 5s'},
+    'max-sigma': {
+      type: 'string',
+      group: SCREENING,
+      describe: "largest horizontal sigma by the receiver's own account, such as 30mm",
+    },
+    'from-utc': {type: 'string', group: SCREENING, describe: 'leave out what is earlier'},
+    'to-utc': {type: 'string', group: SCREENING, describe: 'leave out what is later'},
+    settle: {
+      type: 'string',
+      group: SCREENING,
+      describe: 'leave out the start of the occupation, such as 5min',
+    },
+    stand: {
+      type: 'number',
+      group: SCREENING,
+      describe: 'use only the N-th standing period that `contents` lists',
+    },
+    want: {
+      type: 'string',
+      group: DECISION,
+      describe: 'wished 95 % horizontal radius, such as 10mm: how long would it take',
+    },
+    'movement-limit': {
+      type: 'string',
+      group: DECISION,
+      describe: 'movement that matters, such as 5mm (default: from the uncertainty)',
+    },
+  });
 }
 
 export function checkOptions<T>(args: Argv<T>) {
-  return args
-    .options({
-      marks: {type: 'string', group: REFERENCE, describe: 'marks file (YAML, CSV or SINEX)'},
-      mark: {type: 'string', group: REFERENCE, describe: 'name of the mark that was occupied'},
-      motion: {
-        type: 'string',
-        group: REFERENCE,
-        describe: 'how the mark moves between epochs: "at rest in ETRF2014", "plate EURA", …',
-      },
-      tolerance: {
-        type: 'string',
-        group: DECISION,
-        describe: 'horizontal radius to hold, such as 20mm',
-      },
-      'tolerance-up': {type: 'string', group: DECISION, describe: 'height difference to hold'},
-      'tolerance-reason': {
-        type: 'string',
-        group: DECISION,
-        describe: 'where the tolerance comes from, for the report',
-      },
-    })
-    .example('$0 check am.nmea --marks marks.yaml --mark P7 --tolerance 20mm', 'the first setup')
-    .example('$0 check am.nmea --sheet am.yaml --report am.html', 'everything from the field sheet')
-    .example(
-      '$0 check am.nmea pm.nmea --mark P7 --marks site.csv --fix fixed',
-      'two files, fixed only',
-    );
+  return args.options({
+    marks: {type: 'string', group: REFERENCE, describe: 'marks file (YAML, CSV or SINEX)'},
+    mark: {type: 'string', group: REFERENCE, describe: 'name of the mark that was occupied'},
+    motion: {
+      type: 'string',
+      group: REFERENCE,
+      describe: 'how the mark moves between epochs: "at rest in ETRF2014", "plate EURA", …',
+    },
+    tolerance: {
+      type: 'string',
+      group: DECISION,
+      describe: 'horizontal radius to hold, such as 20mm',
+    },
+    'tolerance-up': {type: 'string', group: DECISION, describe: 'height difference to hold'},
+    'tolerance-reason': {
+      type: 'string',
+      group: DECISION,
+      describe: 'where the tolerance comes from, for the report',
+    },
+  });
 }
 
 export function outputOptions<T>(args: Argv<T>) {
