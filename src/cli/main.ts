@@ -36,7 +36,7 @@ function tied(words: readonly string[]): string[] {
   for (let i = 0; i < words.length; i++) {
     const word = words[i] ?? '';
     const next = words[i + 1] ?? '';
-    if (/^--[a-z][a-z-]*$/.test(word) && /^-($|[\d.])/.test(next)) {
+    if (/^--[a-z][a-z-]*$/.test(word) && /^-($|[\d.,])/.test(next)) {
       joined.push(`${word}=${next}`);
       i++;
     } else {
