@@ -12,6 +12,7 @@ import type {Result} from '../occupation/result.ts';
 import type {ScreenRules} from '../occupation/screen.ts';
 import type {CivilDate} from '../time/calendar.ts';
 import {utcFromGpsSeconds} from '../time/gps-time.ts';
+import {causeAdvice, causeTitle, pairTitle} from '../wording/diagnosis.ts';
 import {noticeText} from '../wording/notices.ts';
 import {readWhole, requireInputs, requireOutputs, writeOutputs} from './files.ts';
 import type {CommandArguments} from './options.ts';
@@ -48,10 +49,10 @@ export async function reduce(typed: CommandArguments, command: Result['command']
   requireOutputs(outputPaths(typed), [...typed.log, ...companions]);
   const sheet = typed.sheet === undefined ? emptySheet() : await sheetOf(typed.sheet);
   const inForce = withSheet(typed, sheet);
-  const mark = await markOf(inForce.options, command);
+  const marks = await marksOf(inForce.options, command);
   const thread = typed.report === undefined ? null : startReportThread();
   const reduced = await reducedAndWritten(typed, thread, () =>
-    requestOf(command, inForce, sheet, mark),
+    requestOf(command, inForce, sheet, marks),
   );
   if (!outputPaths(typed).includes('-')) {
     process.stdout.write(resultSummary(reduced.result, styleOf(process.stdout, process.env)));
@@ -93,10 +94,16 @@ async function sheetOf(path: string): Promise<Sheet> {
   return readSheet(await readWhole(path), path);
 }
 
+/** The known mark and its neighbours in the marks file. */
+interface Marks {
+  readonly mark: Mark | null;
+  readonly all: readonly Mark[];
+}
+
 /** The known mark, when its coordinates can be found; `check` cannot do without. */
-async function markOf(options: CommandArguments, command: Result['command']): Promise<Mark | null> {
+async function marksOf(options: CommandArguments, command: Result['command']): Promise<Marks> {
   if (options.marks === undefined || options.mark === undefined) {
-    if (command === 'reduce') return null;
+    if (command === 'reduce') return {mark: null, all: []};
     throw new UsageError(
       options.mark === undefined
         ? 'check needs the name of the mark that was occupied: --mark NAME, or `mark:` in the field sheet'
@@ -105,7 +112,7 @@ async function markOf(options: CommandArguments, command: Result['command']): Pr
   }
   const marks = readMarks(await readWhole(options.marks), options.marks);
   const found = findMark(marks, options.mark);
-  if (found.kind === 'found') return found.mark;
+  if (found.kind === 'found') return {mark: found.mark, all: marks};
   const near = found.near.length === 0 ? '' : `; near in name: ${found.near.join(', ')}`;
   throw new UsageError(
     `no mark ${options.mark} among the ${marks.length} of ${options.marks}${near}`,
@@ -116,7 +123,7 @@ async function requestOf(
   command: Result['command'],
   inForce: InForce,
   sheet: Sheet,
-  mark: Mark | null,
+  {mark, all: marks}: Marks,
 ): Promise<ReduceRequest> {
   const {options} = inForce;
   const ellipsoid = ellipsoidOption(options.ellipsoid);
@@ -141,6 +148,7 @@ async function requestOf(
     rules: withinStand(rules, options.stand, log, ellipsoid),
     at,
     mark,
+    marks,
     markName: options.mark ?? null,
     sheet,
     asked,
@@ -152,6 +160,7 @@ async function requestOf(
     wantM: lengthOption('want', options.want),
     settings,
     say: noticeText,
+    sayCause: {title: causeTitle, advice: causeAdvice, pair: pairTitle},
   };
 }
 

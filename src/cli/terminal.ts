@@ -1,5 +1,6 @@
 import {headlineFacts} from '../occupation/headline-facts.ts';
-import type {Notice, PerAxis, Position, Result} from '../occupation/result.ts';
+import type {DiagnosisFound, Notice, PerAxis, Position, Result} from '../occupation/result.ts';
+import {accidentalSentence, NOTHING_FITS} from '../wording/diagnosis.ts';
 import {
   coordinateDecimals,
   counted,
@@ -73,6 +74,7 @@ export function resultSummary(result: Result, style: TerminalStyle): string {
     [painted(painted(title, TONE_PAINT[tone], style), 'bold', style), ...wrapped(sentence, style)],
     numberTable(result),
     facts(result),
+    causeLines(result, style),
     noticeLines(result.notices, style),
   ];
   const text = blocks
@@ -210,6 +212,63 @@ function stillnessText({stability}: Result): string {
   const small = stability.steps.filter((step) => !step.material).length;
   const steps = small === 0 ? '' : `; ${counted(small, 'small step')} found, below what matters`;
   return `${stability.verdict}${power}${steps}`;
+}
+
+/** More than these would bury the answer; the report and the result list all. */
+const CAUSES_SHOWN = 4;
+
+/** What the offset is consistent with, and what to measure to find out. */
+function causeLines({comparison}: Result, style: TerminalStyle): string[] {
+  const diagnosis = comparison?.diagnosis ?? null;
+  if (comparison === null || diagnosis === null) return [];
+  const {candidates} = comparison;
+  const found = [
+    ...candidates.map(({title, advice, predictedM}) => ({title, advice, predictedM})),
+    ...diagnosis.pairs.map(({title, predictedM}) => ({title, advice: '', predictedM})),
+  ];
+  if (found.length === 0) return wrapped(NOTHING_FITS, style);
+  const lines = found.slice(0, CAUSES_SHOWN).flatMap(({title, advice, predictedM}) => [
+    ...listItem(`${title} (${vectorText(predictedM)})`, style),
+    ...wrapped(advice, style, 4)
+      .filter((line) => line !== '')
+      .map((line) => `    ${line}`),
+  ]);
+  const more = found.length - CAUSES_SHOWN;
+  return [
+    'the offset is consistent with',
+    ...lines,
+    ...(more > 0 ? [`  and ${counted(more, 'more cause')}, in the report and the result`] : []),
+    ...accidentalLines(diagnosis, style),
+  ];
+}
+
+function accidentalLines(diagnosis: DiagnosisFound, style: TerminalStyle): string[] {
+  const {tested, accidentalMatches, accidentalWithinM, accidentalOf} = diagnosis;
+  if (accidentalOf === null) return [];
+  return wrapped(
+    accidentalSentence({
+      tested: tested.length,
+      matches: accidentalMatches,
+      withinM: accidentalWithinM,
+      of: accidentalOf,
+    }),
+    style,
+    2,
+  ).map((line) => `  ${line}`);
+}
+
+function listItem(text: string, style: TerminalStyle): string[] {
+  const [first = '', ...rest] = wrapped(text, style, 4);
+  return [`  - ${first}`, ...rest.map((line) => `    ${line}`)];
+}
+
+function vectorText(vectorM: PerAxis<number | null>): string {
+  return (['east', 'north', 'up'] as const)
+    .flatMap((axis) => {
+      const value = vectorM[axis];
+      return value === null || value === 0 ? [] : [`${axis} ${formatLength(value, true)}`];
+    })
+    .join(', ');
 }
 
 /** Notices as lines, gravest first; mere notes only when asked for. */

@@ -183,6 +183,18 @@ const FRAME_CHANGE = object({
   standardUncertaintyM: perAxis(LENGTH_M),
 });
 
+const DIAGNOSIS = object({
+  asked: oneOf('the offset is more than noise', 'a tolerance is exceeded'),
+  pairs: listOf(
+    object({codes: listOf(TEXT, 2), title: TEXT, predictedM: PER_AXIS_OR_NULL, misfit: NUMBER}),
+  ),
+  accidentalMatches: NUMBER,
+  accidentalWithinM: LENGTH_M,
+  accidentalOf: oneOf('plan', 'height', 'plan and height', null),
+  tested: listOf(TEXT),
+  notTested: listOf(object({code: TEXT, because: TEXT})),
+});
+
 const COMPARISON = object({
   mark: TEXT,
   offsetM: object({...PER_AXIS_OR_NULL.properties, horizontal: orNull(LENGTH_M)}),
@@ -213,6 +225,7 @@ const COMPARISON = object({
       advice: TEXT,
     }),
   ),
+  diagnosis: orNull(DIAGNOSIS),
 });
 
 const NOTICE = object({

@@ -34,7 +34,8 @@ export interface ComparisonInput {
 /** The offset from a known mark, what it means against the tolerances, and whether both agree. */
 export function compareWithMark(input: ComparisonInput): Comparison {
   const {offsetM, asked, mark, assumptions} = input;
-  const total = totalCovariance(input);
+  const {covarianceM2, markCovarianceM2} = input;
+  const total = covarianceM2 === null ? null : totalCovariance({covarianceM2, markCovarianceM2});
   const horizontal = horizontalM(offsetM);
   const normalisedError = normalisedErrors(offsetM, total);
   return {
@@ -47,6 +48,7 @@ export function compareWithMark(input: ComparisonInput): Comparison {
     assumptions,
     frameChange: input.frameChange,
     candidates: [],
+    diagnosis: null,
   };
 }
 
@@ -63,8 +65,10 @@ export function couldPass(asked: Asked, covarianceM2: CovarianceM2): boolean {
 export function totalCovariance({
   covarianceM2,
   markCovarianceM2,
-}: Pick<ComparisonInput, 'covarianceM2' | 'markCovarianceM2'>): CovarianceM2 | null {
-  if (covarianceM2 === null) return null;
+}: {
+  readonly covarianceM2: CovarianceM2;
+  readonly markCovarianceM2: CovarianceM2 | null;
+}): CovarianceM2 {
   return covarianceM2.map((row, i) =>
     row.map((value, j) => value + (markCovarianceM2?.[i]?.[j] ?? 0)),
   );

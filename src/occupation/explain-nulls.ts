@@ -19,6 +19,7 @@ const RULES: readonly Rule[] = [
   },
   {path: /^stability\.settling$/, code: 'no-settling', severity: 'absent'},
   {path: /\.(frame|frameFrom|coordinateEpoch)$/, code: 'frame-not-stated', severity: 'caution'},
+  {path: /^comparison\.diagnosis/, code: 'nothing-to-explain', severity: 'absent'},
   {path: /^comparison\.frameChange$/, code: 'frame-not-transformed', severity: 'absent'},
   {
     path: /\.(pointScale|combinedFactor|elevationFactor)$/,

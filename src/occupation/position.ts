@@ -86,8 +86,14 @@ function orthometricHeightM(
 ): number | null {
   if (heightKind === 'none') return null;
   if (heightKind === 'above the receiver geoid') return heightM;
+  const separationM = meanSeparationM(epochs, indices);
+  return separationM === null ? null : heightM - separationM;
+}
+
+/** Mean geoid separation that the receiver printed; null unless every epoch has one. */
+export function meanSeparationM(epochs: Epochs, indices: Uint32Array): number | null {
   const separationM = moments(taken(epochs.separationM, indices))?.mean;
-  return separationM === undefined || Number.isNaN(separationM) ? null : heightM - separationM;
+  return separationM === undefined || Number.isNaN(separationM) ? null : separationM;
 }
 
 function covarianceOf(session: Session, budget: readonly BudgetRow[]): CovarianceM2 | null {

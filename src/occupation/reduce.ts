@@ -4,7 +4,8 @@ import {epochAccount} from './account.ts';
 import {type AntennaReduction, reduceAntenna} from './antenna.ts';
 import {besideStep} from './beside-step.ts';
 import {budgetRows, comparisonRows} from './budget.ts';
-import {compareWithMark} from './compare.ts';
+import {type CovarianceM2, compareWithMark} from './compare.ts';
+import {withDiagnosis} from './diagnosis-of-check.ts';
 import {explainNulls} from './explain-nulls.ts';
 import {type Changed, inFrameOfMark} from './frame-change.ts';
 import {keptIndices, type LocalColumns, localColumns, taken} from './local-columns.ts';
@@ -137,7 +138,9 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   const reference = referenceOf(measured, place, request.at, request.ellipsoid);
   const offsetM = offsetFrom(targetOf(reference, place), measured, request.ellipsoid);
   const comparison =
-    place === null || single === null ? null : comparisonOf(record, place, measured, changed);
+    place === null || single === null
+      ? null
+      : comparisonOf({record, columns, session: whole, place, measured, changed});
   const result: Result = {
     ...common({...record, account: accountOf(request, outcome)}),
     reference,
@@ -333,28 +336,55 @@ function budgetOf(
   });
 }
 
-function comparisonOf(
-  {request}: Record,
-  place: MarkPlace,
-  measured: Position,
-  changed: Changed | undefined,
-): Comparison {
-  const own = measured.covarianceEnuM2;
-  const {east = 0, north = 0, up = 0} = changed?.contribution?.standardUncertaintyM ?? {};
-  const added = [east, north, up];
-  const covarianceM2 = own?.map((row, i) =>
-    row.map((value, j) => (value ?? Number.NaN) + (i === j ? added[i]! ** 2 : 0)),
-  );
-  return compareWithMark({
+/** A position about to be compared with a mark, and the record that it comes from. */
+interface Compared {
+  readonly record: Record;
+  readonly columns: LocalColumns;
+  readonly session: Session;
+  readonly place: MarkPlace;
+  /** In the frame of the mark where both frames are known. */
+  readonly measured: Position;
+  readonly changed: Changed | undefined;
+}
+
+function comparisonOf({record, columns, session, place, measured, changed}: Compared): Comparison {
+  const {request, account, antenna} = record;
+  const covarianceM2 = covarianceOf(measured, changed);
+  const comparison = compareWithMark({
     mark: place.name,
     offsetM: offsetFrom(place, measured, request.ellipsoid),
-    covarianceM2: covarianceM2 ?? null,
+    covarianceM2,
     markCovarianceM2: place.covarianceM2,
     asked: request.asked,
     // What is taken for granted because nobody stated it is said aloud in every output.
     assumptions: changed === undefined ? ['same frame and epoch as the mark'] : [],
     frameChange: changed?.change ?? null,
   });
+  if (covarianceM2 === null || antenna === undefined) return comparison;
+  return withDiagnosis({
+    request,
+    account,
+    antenna,
+    columns,
+    session,
+    place,
+    measured,
+    comparison,
+    covarianceM2,
+  });
+}
+
+/** Covariance of the measured position, the transformation into the frame of the mark included. */
+function covarianceOf(
+  {covarianceEnuM2}: Position,
+  changed: Changed | undefined,
+): CovarianceM2 | null {
+  if (covarianceEnuM2 === null) return null;
+  const {east = 0, north = 0, up = 0} = changed?.contribution?.standardUncertaintyM ?? {};
+  const added = [east, north, up];
+  return covarianceEnuM2.map((row, i) =>
+    row.map((value, j) => (value ?? Number.NaN) + (i === j ? added[i]! ** 2 : 0)),
+  );
 }
 
 function targetOf({geodetic}: Reference, place: MarkPlace | null) {

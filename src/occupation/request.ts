@@ -5,6 +5,7 @@ import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
 import type {PointMotion} from '../geodesy/point-motion.ts';
 import type {Geodetic} from '../geodesy/types.ts';
 import type {Asked} from './compare.ts';
+import type {CauseValues} from './diagnosis/hypothesis.ts';
 import type {Say} from './notices.ts';
 import type {InputAccount, Position, Result, Setting, Severity} from './result.ts';
 import type {ScreenRules} from './screen.ts';
@@ -57,5 +58,18 @@ export interface ReduceRequest {
   /** Wished 95 % horizontal radius. */
   readonly wantM: number | null;
   readonly settings: Readonly<Record<string, Setting>>;
+  /** All marks of the marks file: one of them may have been occupied by mistake. */
+  readonly marks: readonly Mark[];
   readonly say: Say;
+  /** Words for what an offset is consistent with. */
+  readonly sayCause: {
+    title(code: string, values: CauseValues): string;
+    advice(code: string, values: CauseValues): string;
+    pair(plan: Cause, height: Cause): string;
+  };
+}
+
+interface Cause {
+  readonly code: string;
+  readonly values: CauseValues;
 }

@@ -277,6 +277,24 @@ export interface FrameChange {
   readonly standardUncertaintyM: PerAxis;
 }
 
+/** What lies behind the candidates: what was asked, tested, and to be expected by accident. */
+export interface DiagnosisFound {
+  readonly asked: 'the offset is more than noise' | 'a tolerance is exceeded';
+  /** One mistake in plan with one in height, where neither fits alone. */
+  readonly pairs: readonly {
+    readonly codes: readonly string[];
+    readonly title: string;
+    readonly predictedM: PerAxis<number | null>;
+    readonly misfit: number;
+  }[];
+  /** How many predictions an offset of some other cause would match by accident. */
+  readonly accidentalMatches: number;
+  readonly accidentalWithinM: number;
+  readonly accidentalOf: 'plan' | 'height' | 'plan and height' | null;
+  readonly tested: readonly string[];
+  readonly notTested: readonly {readonly code: string; readonly because: string}[];
+}
+
 export interface Comparison {
   readonly mark: string;
   readonly offsetM: PerAxis<number | null> & {readonly horizontal: number | null};
@@ -288,6 +306,8 @@ export interface Comparison {
   /** null when a frame or epoch was not stated, so that nothing could be transformed. */
   readonly frameChange: FrameChange | null;
   readonly candidates: readonly Candidate[];
+  /** null when there is nothing to explain. */
+  readonly diagnosis: DiagnosisFound | null;
 }
 
 export type Verdict = 'holds' | 'off' | 'moving' | 'cannot tell';

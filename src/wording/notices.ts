@@ -90,6 +90,8 @@ export const MISSING_SENTENCES: Readonly<Record<string, Sentence>> = {
     'The frame or coordinate epoch of the positions was not stated; under corrections it is that of the base or network. Give --frame and --coordinate-epoch.',
   'no-settling': () => 'No settling was found.',
   'grid-not-asked': () => 'No grid coordinates were asked for.',
+  'nothing-to-explain': () =>
+    'The offset is within its uncertainty and the tolerances: there is nothing to explain.',
   'frame-not-transformed': () =>
     'Nothing was transformed: the frame of the log or of the mark was not stated, or the record has no ellipsoidal height.',
   'grid-factor-unknown': () =>

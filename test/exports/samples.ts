@@ -101,6 +101,8 @@ export function reducedSample({name, mark, frame, maxLines}: SampleAsked): {
     movementLimitM: null,
     wantM: null,
     settings: {fix: {value: 'best', from: 'default'}},
+    marks: [],
+    sayCause: {title: (code) => code, advice: (code) => code, pair: () => 'two at once'},
     say: codeAsText,
   });
   return {reduced, log};

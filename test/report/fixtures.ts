@@ -472,6 +472,7 @@ function resultOf(spec: SampleSpec, columns: Columns, series: ChartSeries): Resu
           agreement: 'disagrees',
           assumptions: ['the mark has the frame and the epoch of the log'],
           frameChange: null,
+          diagnosis: null,
           candidates: spec.candidates,
         }
       : null,
