@@ -123,6 +123,8 @@ function causesOf(
     wantM: null,
     settings: {},
     say: (code) => code,
+    marks: [],
+    sayCause: {title: (code) => code, advice: (code) => code, pair: () => 'two at once'},
   });
   const {comparison, position} = result;
   if (comparison === null || position?.covarianceEnuM2 == null) throw new Error('no comparison');
