@@ -94,6 +94,17 @@ function commands(parser: Argv, answer: (status: number) => void): Argv {
       (args) => checkExamples(outputOptions(checkOptions(reduceOptions(inputOptions(args))))),
       async (argv) =>
         answer(await (await import('./reduce.ts')).reduce(withStandardInput(argv), 'check')),
+    )
+    .command(
+      'sheet',
+      'Print a blank field sheet to fill in',
+      (args) =>
+        args.option('schema', {
+          type: 'boolean',
+          default: false,
+          describe: 'print its JSON Schema instead, for an editor',
+        }),
+      async (argv) => answer((await import('./sheet.ts')).printSheet(argv)),
     );
 }
 
