@@ -1,4 +1,4 @@
-import {quantile} from '../statistics/quantile.ts';
+import {median as medianOf} from '../statistics/quantile.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {epochAccount} from './account.ts';
 import {type AntennaReduction, reduceAntenna} from './antenna.ts';
@@ -409,7 +409,7 @@ function typicalStepM(columns: LocalColumns, {indices}: Session): PerAxis<number
     const values = taken(column, indices);
     if (values.length < 2) return null;
     const steps = values.subarray(1).map((value, i) => Math.abs(value - values[i]!));
-    const middle = quantile(steps, 0.5);
+    const middle = medianOf(steps);
     return Number.isNaN(middle) ? null : middle;
   };
   return {

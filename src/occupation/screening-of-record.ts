@@ -1,6 +1,6 @@
 import type {Epochs} from '../epochs/epochs.ts';
 import {moments} from '../statistics/moments.ts';
-import {quantile} from '../statistics/quantile.ts';
+import {median as medianOf} from '../statistics/quantile.ts';
 import {type LocalColumns, taken} from './local-columns.ts';
 import type {PerAxis, Screening} from './result.ts';
 import {reasonCode, type ScreenOutcome} from './screen.ts';
@@ -54,7 +54,7 @@ function withoutScreening(
 export function receiverSigma(epochs: Epochs, indices: Uint32Array): PerAxis<number | null> | null {
   const median = (column: Float32Array) => {
     const given = taken(column, indices).filter(Number.isFinite);
-    return given.length === 0 ? null : quantile(given, 0.5);
+    return given.length === 0 ? null : medianOf(given);
   };
   const sigma = {
     east: median(epochs.sigmaEastM),
