@@ -12,6 +12,7 @@ import {keptIndices, type LocalColumns, localColumns, taken} from './local-colum
 import {type MarkPlace, markPlace} from './mark-place.ts';
 import {isTravelling} from './motion.ts';
 import {type NoticeList, noticeList} from './notices.ts';
+import {withoutNegativeZero} from './plain-numbers.ts';
 import {positionOf} from './position.ts';
 import {
   noticeBudget,
@@ -97,6 +98,11 @@ function accountOf({log, ellipsoid}: ReduceRequest, {reason}: ScreenOutcome): Ep
   return epochAccount(log.epochs, reason, log.resolution, ellipsoid);
 }
 
+/** Every null explained, every zero a plain one. */
+function finished(result: Result, notices: NoticeList): Result {
+  return withoutNegativeZero(explainNulls({...result, notices: notices.notices}, notices));
+}
+
 interface Record {
   readonly request: ReduceRequest;
   readonly notices: NoticeList;
@@ -170,7 +176,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   noticeComparison(result, request, notices);
   noticeTime(single === null ? null : whole, request, notices);
   return {
-    result: explainNulls({...result, notices: notices.notices}, notices),
+    result: finished(result, notices),
     ...aboutReference(columns, whole.meanM, offsetM),
     reason: outcome.reason,
     halfWidths95After: single === null ? null : whole.halfWidths95After,
@@ -205,7 +211,7 @@ function withoutPosition(record: Record, outcome: ScreenOutcome): Reduced {
   });
   const nowhere = new Float64Array(request.log.epochs.count).fill(Number.NaN);
   return {
-    result: explainNulls({...result, notices: notices.notices}, notices),
+    result: finished(result, notices),
     eastM: nowhere,
     northM: nowhere,
     upM: nowhere,

@@ -12,7 +12,7 @@ import {timeFigure} from './figures/time-figure.ts';
 import type {Renderer} from './render.ts';
 import {cssString, fileStem, jsonForHtml, jsonUrl} from './text/embed.ts';
 import {largeUnit} from './units.ts';
-import {causesTable} from './view/causes.ts';
+import {accidentalNote, causesTable} from './view/causes.ts';
 import {checks} from './view/checks.ts';
 import {type DrawnFigure, figurePainter} from './view/drawn-figure.ts';
 import {frameChangeTable} from './view/frame-change.ts';
@@ -58,6 +58,7 @@ export async function pageView(context: ReportContext, renderer: Renderer, css: 
     checks: checked,
     notices: noticeViews(context),
     causes,
+    accidental: accidentalNote(context),
     scatter: scatterTable(context),
     steps: stepsTable(context),
     budget: budgetTable(context),

@@ -1,3 +1,4 @@
+import {accidentalSentence} from '../../wording/diagnosis.ts';
 import {fixed} from '../../wording/numbers.ts';
 import type {ReportContext} from '../context.ts';
 import {lengthColumn, numberCell, textCell} from './columns.ts';
@@ -6,12 +7,15 @@ import {head, numberHead, row, stacking, type Table} from './table.ts';
 /** The suspected causes in the order of how well they fit, with what to do about each. */
 export function causesTable({result, options}: ReportContext): Table | null {
   const comparison = result.comparison;
-  if (comparison === null || comparison.candidates.length === 0) return null;
+  const diagnosis = comparison?.diagnosis ?? null;
+  if (comparison === null || diagnosis === null) return null;
   const {candidates, offsetM} = comparison;
+  const {pairs} = diagnosis;
+  if (candidates.length + pairs.length === 0) return null;
   const column = lengthColumn(
     [
       ...[offsetM.east, offsetM.north, offsetM.up],
-      ...candidates.flatMap(({predictedM: p}) => [p.east, p.north, p.up]),
+      ...[...candidates, ...pairs].flatMap(({predictedM: p}) => [p.east, p.north, p.up]),
     ],
     options.units,
   );
@@ -22,7 +26,8 @@ export function causesTable({result, options}: ReportContext): Table | null {
   ];
   const name = column.unit.name;
   return stacking({
-    caption: 'The offset measured, and what each suspected cause predicts; the best fit first',
+    caption:
+      'The offset measured, and what each everyday mistake that it is consistent with would leave; the best fit first',
     heads: [
       head('Cause'),
       numberHead(`East ${name}`),
@@ -40,6 +45,25 @@ export function causesTable({result, options}: ReportContext): Table | null {
           textCell(candidate.advice),
         ]),
       ),
+      ...pairs.map((pair) =>
+        row(pair.title, [
+          ...cells(pair.predictedM),
+          numberCell(fixed(pair.misfit, 1)),
+          textCell('Measure what each of the two asks for.'),
+        ]),
+      ),
     ],
+  });
+}
+
+/** How easily such an offset matches the list by accident; null when nothing was asked. */
+export function accidentalNote({result}: ReportContext): string | null {
+  const diagnosis = result.comparison?.diagnosis ?? null;
+  if (diagnosis === null || diagnosis.accidentalOf === null) return null;
+  return accidentalSentence({
+    tested: diagnosis.tested.length,
+    matches: diagnosis.accidentalMatches,
+    withinM: diagnosis.accidentalWithinM,
+    of: diagnosis.accidentalOf,
   });
 }
