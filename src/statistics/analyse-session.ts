@@ -207,7 +207,7 @@ function analysed(record: Analysable): SessionAnalysis {
   const means = varying.map((c) => known[c]!.mean);
   const uncertainties = meanUncertainties(cells, fits, means, pooled);
   const slowProbability = Math.max(0, ...uncertainties.map((one) => one.slowProbability));
-  const movement = movementOf(tested(record, fits), slowProbability);
+  const movement = movementOf(tested(record, fits));
   const components = known.map((one, c) =>
     componentOf(one, c, {record, uncertainties, drifts: movement.drifts}),
   );
@@ -349,12 +349,11 @@ interface FoundMovement {
  * few records out of a hundred.
  */
 const STEP_SCORE = 22;
-const STEP_SCORE_SLOW = 26;
 const STEP_SCORE_UNEVEN = 34;
 const SETTLING_SCORE = 18;
 const MOVING_SUM_P = 0.05;
 
-function movementOf(part: Testable, slowProbability: number): FoundMovement {
+function movementOf(part: Testable): FoundMovement {
   const {cells, fits, columns, numbers, pooled, record} = part;
   const enough = cells.index.length >= LEAST_CELLS_SHARE * cells.expected;
   if (numbers.length === 0 || !enough) {
@@ -369,7 +368,8 @@ function movementOf(part: Testable, slowProbability: number): FoundMovement {
   const scores = ratioScores(cells, fits);
   const sums = movingSumStep(record.input.elapsedS, columns, record.spacingS);
   const drifts = slopes(cells, fits, pooled);
-  const kind = kindOf(scores, sums, drifts, stepThreshold(cells, slowProbability));
+  const threshold = unevenness(cells) > UNEVEN ? STEP_SCORE_UNEVEN : STEP_SCORE;
+  const kind = kindOf(scores, sums, drifts, threshold);
   if (kind !== 'step') {
     const settling = kind === 'settling' ? settlingOf(part, scores.settling.part) : undefined;
     return {kind, steps: [], settling, drifts: numbered(numbers, drifts), testable: true};
@@ -405,11 +405,6 @@ function kindOf(
 
 /** Unevenness of the noise between quarters of a record beyond which steps need more evidence. */
 const UNEVEN = 1.5;
-
-function stepThreshold(cells: TimeCells, slowProbability: number): number {
-  if (unevenness(cells) > UNEVEN) return STEP_SCORE_UNEVEN;
-  return slowProbability > SLOW ? STEP_SCORE_SLOW : STEP_SCORE;
-}
 
 /** Largest over smallest noise of a quarter: medians of the differences of neighbouring cells. */
 function unevenness({means}: TimeCells): number {
