@@ -44,6 +44,7 @@ export function blockMedianScreen(columns: ScreenedColumns): Uint8Array {
   if (count < LEAST_EPOCHS) return rejected;
   const blocks = layOutBlocks(elapsedS);
   const buffer = new Float64Array(count);
+  const spreads: number[] = [];
   components.forEach((values, c) => {
     const residuals = residualsFromBlocks(values, elapsedS, blocks);
     const resolution = resolutions[c] ?? 0;
@@ -51,12 +52,48 @@ export function blockMedianScreen(columns: ScreenedColumns): Uint8Array {
       SIGMA_PER_MAD * medianAbsolute(residuals, buffer),
       resolution / Math.sqrt(12),
     );
+    spreads.push(spread);
     const limit =
       Math.max(NEIGHBOUR_SIGMAS * spread, RECORD_SIGMAS * robustDeviation(values, buffer)) +
       resolution / 2;
     for (let i = 0; i < count; i++) if (Math.abs(residuals[i]!) > limit) rejected[i] = 1;
   });
-  return close(rejected, elapsedS);
+  const closed = close(rejected, elapsedS);
+  keepSteadyEnds(closed, columns, spreads);
+  return closed;
+}
+
+/** A stretch at an end of the record must last this long to be a new place rather than a burst. */
+const STEADY_S = 15;
+/** How much more than the record it may spread about its own median. */
+const STEADY_SPREADS = 3;
+
+/**
+ * Takes back the rejection of a whole end of the record that lies elsewhere but is as steady as the
+ * rest: the positions jumped near the end, and that is for the step test to find, not to hide.
+ */
+function keepSteadyEnds(
+  rejected: Uint8Array,
+  {elapsedS, components}: ScreenedColumns,
+  spreads: readonly number[],
+): void {
+  const count = rejected.length;
+  let first = 0;
+  while (first < count && rejected[first] === 1) first++;
+  let last = count;
+  while (last > 0 && rejected[last - 1] === 1) last--;
+  for (const [from, to] of [
+    [0, first],
+    [last, count],
+  ] as const) {
+    if (to - from < LEAST_EPOCHS || to - from === count) continue;
+    const lasts = elapsedS[to - 1]! - elapsedS[from]! >= STEADY_S;
+    const steady = components.every((values, c) => {
+      const part = values.subarray(from, to);
+      return robustDeviation(part, new Float64Array(part.length)) <= STEADY_SPREADS * spreads[c]!;
+    });
+    if (lasts && steady) rejected.fill(0, from, to);
+  }
 }
 
 /** Median spacing of times that do not decrease; undefined for fewer than two. */
