@@ -1,6 +1,6 @@
 import {type RatioScores, ratioScores} from './likelihood-ratios.ts';
 import {errorCorrelation, type MeanUncertainty, meanUncertainties} from './mean-uncertainty.ts';
-import {fitModels, type ModelFit} from './model-fits.ts';
+import {fitModels, type ModelFit, type Pooling} from './model-fits.ts';
 import {moments} from './moments.ts';
 import {movementSizes, settlingRegressor, stepRegressor} from './movement-sizes.ts';
 import {type MovingSumStep, movingSumStep, refineStepTime} from './moving-sums.ts';
@@ -202,10 +202,11 @@ interface Analysable {
 
 function analysed(record: Analysable): SessionAnalysis {
   const {known, varying, cells} = record;
-  const pooled = varying[0] === 0 && varying[1] === 1;
+  const planVaries = varying[0] === 0 && varying[1] === 1;
+  const pooling: Pooling = planVaries ? 'plan' : 'none';
   const fits = fitModels(cells);
   const means = varying.map((c) => known[c]!.mean);
-  const uncertainties = meanUncertainties(cells, fits, means, pooled);
+  const uncertainties = meanUncertainties(cells, fits, means, pooling);
   const slowProbability = Math.max(0, ...uncertainties.map((one) => one.slowProbability));
   const movement = movementOf(tested(record, fits));
   const components = known.map((one, c) =>
@@ -213,13 +214,13 @@ function analysed(record: Analysable): SessionAnalysis {
   );
   return {
     components,
-    planCorrelation: pooled ? errorCorrelation(fits, 0, 1) : 0,
+    planCorrelation: planVaries ? errorCorrelation(fits, 0, 1) : 0,
     movement: movement.kind,
     steps: movement.steps,
     settling: movement.settling,
     limits: limitsOf(record, components, uncertainties, movement.testable),
     slowProbability,
-    halfWidthsWithout: (takenOut) => halfWidthsWithout(record, movement, takenOut, pooled),
+    halfWidthsWithout: (takenOut) => halfWidthsWithout(record, movement, takenOut, pooling),
     halfWidth95After: (component, timeS) => {
       const at = varying.indexOf(component);
       if (at < 0) return undefined;
@@ -317,7 +318,7 @@ interface Testable {
   readonly columns: readonly Float64Array[];
   readonly cells: TimeCells;
   readonly fits: readonly ModelFit[];
-  readonly pooled: boolean;
+  readonly pooling: Pooling;
 }
 
 function tested(record: Analysable, fits: readonly ModelFit[]): Testable {
@@ -330,7 +331,7 @@ function tested(record: Analysable, fits: readonly ModelFit[]): Testable {
     columns: numbers.map((c) => input.components[c]!),
     cells: {...cells, means: at.map((i) => cells.means[i]!)},
     fits: fits.map((fit) => ({...fit, components: at.map((i) => fit.components[i]!)})),
-    pooled: numbers[0] === 0 && numbers[1] === 1,
+    pooling: numbers[0] === 0 && numbers[1] === 1 ? 'plan' : 'none',
   };
 }
 
@@ -353,8 +354,16 @@ const STEP_SCORE_UNEVEN = 34;
 const SETTLING_SCORE = 18;
 const MOVING_SUM_P = 0.05;
 
+/**
+ * A drift is tested with the shape of the noise taken from all components: one height alone tells
+ * too little of it, and a line costs the likelihood more than a constant does.
+ */
+function slopePooling(means: Pooling): Pooling {
+  return means === 'none' ? 'none' : 'all';
+}
+
 function movementOf(part: Testable): FoundMovement {
-  const {cells, fits, columns, numbers, pooled, record} = part;
+  const {cells, fits, columns, numbers, pooling, record} = part;
   const enough = cells.index.length >= LEAST_CELLS_SHARE * cells.expected;
   if (numbers.length === 0 || !enough) {
     return {
@@ -367,7 +376,7 @@ function movementOf(part: Testable): FoundMovement {
   }
   const scores = ratioScores(cells, fits);
   const sums = movingSumStep(record.input.elapsedS, columns, record.spacingS);
-  const drifts = slopes(cells, fits, pooled);
+  const drifts = slopes(cells, fits, slopePooling(pooling));
   const threshold = unevenness(cells) > UNEVEN ? STEP_SCORE_UNEVEN : STEP_SCORE;
   const kind = kindOf(scores, sums, drifts, threshold);
   if (kind !== 'step') {
@@ -376,7 +385,7 @@ function movementOf(part: Testable): FoundMovement {
   }
   const steps = sizedSteps(part, stepTimes(part, scores, sums));
   const quiet = withoutSteps(cells, numbers, record.input.elapsedS[0]!, steps);
-  const left = slopes(quiet, fitModels(quiet), pooled);
+  const left = slopes(quiet, fitModels(quiet), slopePooling(pooling));
   return {kind, steps, settling: undefined, drifts: numbered(numbers, left), testable: true};
 }
 
@@ -508,14 +517,14 @@ function jumpAtCell({means}: TimeCells, component: number, cell: number): number
 }
 
 function sizedSteps(part: Testable, times: readonly TimedStep[]): StepAnalysis[] {
-  const {cells, fits, numbers, record, pooled} = part;
+  const {cells, fits, numbers, record, pooling} = part;
   const firstS = record.input.elapsedS[0]!;
   const atCells = times.map(({atS}) => (atS - firstS) / cells.widthS);
   const sized = movementSizes(
     cells,
     fits,
     atCells.map((atCell) => stepRegressor(cells, atCell)),
-    pooled,
+    pooling,
   );
   return times.map(({atS, interval95S}, i) => ({
     elapsedS: atS,
@@ -525,8 +534,8 @@ function sizedSteps(part: Testable, times: readonly TimedStep[]): StepAnalysis[]
   }));
 }
 
-function settlingOf({cells, fits, numbers, record, pooled}: Testable, part: number) {
-  const sized = movementSizes(cells, fits, [settlingRegressor(cells, part)], pooled);
+function settlingOf({cells, fits, numbers, record, pooling}: Testable, part: number) {
+  const sized = movementSizes(cells, fits, [settlingRegressor(cells, part)], pooling);
   return {
     part,
     timeConstantS: part * cells.spanS,
@@ -538,7 +547,7 @@ function halfWidthsWithout(
   {cells, varying, known, input}: Analysable,
   {steps, drifts, settling}: FoundMovement,
   takenOut: TakenOut,
-  pooled: boolean,
+  pooling: Pooling,
 ): (number | undefined)[] {
   const gone = takenOut.steps.map((step) => steps[step]!);
   let quiet = withoutSteps(cells, varying, input.elapsedS[0]!, gone);
@@ -546,7 +555,7 @@ function halfWidthsWithout(
   if (takenOut.settling === true && settling !== undefined) {
     quiet = withoutSettling(quiet, varying, settling);
   }
-  const found = meanUncertainties(quiet, fitModels(quiet), quiet.means.map(meanOfCells), pooled);
+  const found = meanUncertainties(quiet, fitModels(quiet), quiet.means.map(meanOfCells), pooling);
   return known.map((_, c) => (varying.includes(c) ? found[varying.indexOf(c)]!.halfWidth95 : 0));
 }
 

@@ -1,5 +1,5 @@
 import {mixtureHalfWidth, mixtureOf} from './mixture.ts';
-import {dot, type ModelFit, modelWeights} from './model-fits.ts';
+import {dot, type ModelFit, modelWeights, type Pooling} from './model-fits.ts';
 import type {TimeCells} from './time-cells.ts';
 
 /** How well the mean of one component is known from the record alone. */
@@ -24,13 +24,13 @@ export function meanUncertainties(
   cells: TimeCells,
   fits: readonly ModelFit[],
   plainMeans: readonly number[],
-  pooled: boolean,
+  pooling: Pooling,
 ): MeanUncertainty[] {
   const freedom = cells.index.length - 1;
   const weights = modelWeights(
     fits.map(({model}) => model.logPrior),
     fits.map(({components}) => components.map(({logLikelihood}) => logLikelihood)),
-    pooled,
+    pooling,
   );
   return weights.map((componentWeights, c) => {
     const mixture = mixtureOf(

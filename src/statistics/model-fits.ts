@@ -70,25 +70,30 @@ export function dot(a: Float64Array, b: Float64Array): number {
 }
 
 /**
+ * Which components lend each other evidence about the shape of the noise: none, east and north, or
+ * all. East and north see the same sky; height is often slower, so it borrows nothing for a mean.
+ */
+export type Pooling = 'none' | 'plan' | 'all';
+
+/**
  * Posterior weights of the models, one list per component, each summing to one.
  *
- * East and north see the same sky: each lends the other half of its
- * evidence, unless their shapes disagree. Height stands alone: it is often slower.
+ * Components that are pooled lend each other half of their evidence, unless their shapes disagree.
  *
- * @param logLikelihoods  per model, per component
- * @param pooled          whether the first two components are east and north
+ * @param logLikelihoods  per model, per component; east and north first
  */
 export function modelWeights(
   logPriors: readonly number[],
   logLikelihoods: readonly (readonly number[])[],
-  pooled: boolean,
+  pooling: Pooling,
 ): Float64Array[] {
   const components = logLikelihoods[0]?.length ?? 0;
-  const lending = pooled && sharesShape(logLikelihoods);
+  const group = pooledGroup(components, pooling);
+  const lending = group.length > 1 && sharesShape(logLikelihoods, group);
   return Array.from({length: components}, (_, c) => {
-    const other = lending && c < 2 ? 1 - c : undefined;
+    const lenders = lending && group.includes(c) ? group.filter((other) => other !== c) : [];
     const logs = logLikelihoods.map((row, m) => {
-      const lent = other === undefined ? 0 : 0.5 * row[other]!;
+      const lent = lenders.reduce((sum, other) => sum + 0.5 * row[other]!, 0);
       return logPriors[m]! + row[c]! + lent;
     });
     const largest = logs.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY);
@@ -98,20 +103,23 @@ export function modelWeights(
   });
 }
 
+function pooledGroup(components: number, pooling: Pooling): number[] {
+  if (pooling === 'none') return [];
+  const all = Array.from({length: components}, (_, c) => c);
+  return pooling === 'plan' ? all.slice(0, 2) : all;
+}
+
 /** Twice the log-likelihood that the best common model may cost one component. */
 const SHAPE_LIMIT = 6;
 
-function sharesShape(logLikelihoods: readonly (readonly number[])[]): boolean {
-  const best = [Number.NEGATIVE_INFINITY, Number.NEGATIVE_INFINITY];
-  let jointBest = Number.NEGATIVE_INFINITY;
-  let atJoint: readonly number[] = [0, 0];
-  for (const row of logLikelihoods) {
-    best[0] = Math.max(best[0]!, row[0]!);
-    best[1] = Math.max(best[1]!, row[1]!);
-    if (row[0]! + row[1]! > jointBest) {
-      jointBest = row[0]! + row[1]!;
-      atJoint = row;
-    }
-  }
-  return 2 * Math.max(best[0]! - atJoint[0]!, best[1]! - atJoint[1]!) <= SHAPE_LIMIT;
+function sharesShape(
+  logLikelihoods: readonly (readonly number[])[],
+  group: readonly number[],
+): boolean {
+  const best = group.map((c) =>
+    logLikelihoods.reduce((most, row) => Math.max(most, row[c]!), Number.NEGATIVE_INFINITY),
+  );
+  const joint = (row: readonly number[]) => group.reduce((sum, c) => sum + row[c]!, 0);
+  const common = logLikelihoods.reduce((one, other) => (joint(other) > joint(one) ? other : one));
+  return group.every((c, i) => 2 * (best[i]! - common[c]!) <= SHAPE_LIMIT);
 }

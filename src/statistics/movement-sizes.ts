@@ -1,4 +1,4 @@
-import {dot, type ModelFit, modelWeights} from './model-fits.ts';
+import {dot, type ModelFit, modelWeights, type Pooling} from './model-fits.ts';
 import {whiten} from './semiseparable.ts';
 import type {TimeCells} from './time-cells.ts';
 
@@ -19,7 +19,7 @@ export function movementSizes(
   cells: TimeCells,
   fits: readonly ModelFit[],
   regressors: readonly Float64Array[],
-  pooled: boolean,
+  pooling: Pooling,
 ): MovementSizes[] {
   const m = cells.index.length;
   const k = regressors.length;
@@ -27,7 +27,7 @@ export function movementSizes(
   const weights = modelWeights(
     fits.map(({model}) => model.logPrior),
     rows.map((row) => row.map(({logLikelihood}) => logLikelihood)),
-    pooled,
+    pooling,
   );
   return weights.map((componentWeights, c) => {
     const sizes = new Float64Array(k);

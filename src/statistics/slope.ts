@@ -1,6 +1,6 @@
 import {normalQuantile} from './distribution.ts';
 import {mixtureCdf, mixtureHalfWidth, mixtureOf} from './mixture.ts';
-import {dot, type ModelFit, modelWeights} from './model-fits.ts';
+import {dot, type ModelFit, modelWeights, type Pooling} from './model-fits.ts';
 import {whiten} from './semiseparable.ts';
 import type {TimeCells} from './time-cells.ts';
 
@@ -18,7 +18,7 @@ export interface Slope {
  * Method: generalised least squares with a constant and a line per model, likelihood restricted to
  * the residuals, Student mixture over the models.
  */
-export function slopes(cells: TimeCells, fits: readonly ModelFit[], pooled: boolean): Slope[] {
+export function slopes(cells: TimeCells, fits: readonly ModelFit[], pooling: Pooling): Slope[] {
   const m = cells.index.length;
   const centre = cells.index.reduce((sum, index) => sum + index, 0) / m;
   const line = Float64Array.from(cells.index, (index) => index - centre);
@@ -26,7 +26,7 @@ export function slopes(cells: TimeCells, fits: readonly ModelFit[], pooled: bool
   const weights = modelWeights(
     fits.map(({model}) => model.logPrior),
     rows.map((row) => row.map(({logLikelihood}) => logLikelihood)),
-    pooled,
+    pooling,
   );
   return weights.map((componentWeights, c) => {
     const mixture = mixtureOf(
