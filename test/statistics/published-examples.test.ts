@@ -1,6 +1,17 @@
 import {describe, expect, test} from 'vitest';
 import {autocorrelationOf} from '../../src/occupation/series/autocorrelation.ts';
-import {chiSquareTail, normalCdf, normalQuantile} from '../../src/statistics/distribution.ts';
+import {
+  principalDeviations,
+  probabilityInCircle,
+  r95,
+  sep,
+} from '../../src/statistics/accuracy-measures.ts';
+import {
+  chiSquareCdf,
+  chiSquareTail,
+  normalCdf,
+  normalQuantile,
+} from '../../src/statistics/distribution.ts';
 import {fitModels, type ModelFit} from '../../src/statistics/model-fits.ts';
 import {moments} from '../../src/statistics/moments.ts';
 import {median, quantiles} from '../../src/statistics/quantile.ts';
@@ -88,6 +99,8 @@ function whiteFit(cells: TimeCells): ModelFit {
   expect(white).toHaveLength(1);
   return white[0]!;
 }
+
+const CIRCLE = {eastEast: 1, northNorth: 1, eastNorth: 0};
 
 const nistSeries = examples.normality_and_correlation.filter(({series}) =>
   strd.some(({name}) => name === series),
@@ -202,4 +215,101 @@ describe('reference: Baarda (1968), critical value and shift of a test by its po
     near(critical, critical_w, 1e-9);
     near(critical + normalQuantile(Number(power)), delta0, 1e-9);
   });
+});
+
+describe('reference: an offset in a circle, by the distribution of Rice (1945)', () => {
+  /** Noncentral chi-square with two degrees of freedom as its Poisson sum (Patnaik 1949). */
+  const rice = (radius: number, offset: number) => {
+    const half = (offset * offset) / 2;
+    let weight = Math.exp(-half);
+    let sum = 0;
+    for (let j = 0; j < 400; j++) {
+      sum += weight * chiSquareCdf(radius * radius, 2 + 2 * j);
+      weight *= half / (j + 1);
+    }
+    return sum;
+  };
+
+  test('without an offset it is Rayleigh: 1 − exp(−r²/2)', () => {
+    for (const radius of [0.01, 0.5, 1, 2, 4]) {
+      expect(probabilityInCircle({radius, east: 0, north: 0, covariance: CIRCLE})).toBeCloseTo(
+        -Math.expm1((-radius * radius) / 2),
+        10,
+      );
+    }
+  });
+
+  test.each([
+    [1, 0.5],
+    [2, 2],
+    [0.3, 3],
+    [6, 5],
+    [12, 10],
+    [10, 12],
+  ])('radius %f, offset %f deviations', (radius, offset) => {
+    for (const bearing of [0, 0.7, 2.9]) {
+      const [east, north] = [offset * Math.sin(bearing), offset * Math.cos(bearing)];
+      const found = probabilityInCircle({radius, east, north, covariance: CIRCLE});
+      expect(Math.abs(found - rice(radius, offset))).toBeLessThanOrEqual(1e-10);
+    }
+  });
+});
+
+describe('reference: axes of a covariance in space', () => {
+  test.each([
+    [
+      'second differences: 2 − 2 cos(kπ/4)',
+      [
+        [2, -1, 0],
+        [-1, 2, -1],
+        [0, -1, 2],
+      ],
+      [2 + Math.SQRT2, 2, 2 - Math.SQRT2],
+    ],
+    [
+      'equal correlations: 1 + 2ρ and 1 − ρ',
+      [
+        [2, 1, 1],
+        [1, 2, 1],
+        [1, 1, 2],
+      ],
+      [4, 1, 1],
+    ],
+  ])('%s', (_, matrix, variances) => {
+    const found = principalDeviations(matrix);
+    variances.forEach((variance, i) => {
+      expect(found[i]!).toBeCloseTo(Math.sqrt(variance), 13);
+    });
+  });
+
+  test('GeodePy tests (Geoscience Australia), commit 00bd983: the same in XYZ and in ENU', () => {
+    const xyz = [
+      [1.44, -1.32, 1.32],
+      [-1.32, 1.22, -1.2],
+      [1.32, -1.2, 1.2],
+    ];
+    const enu = [
+      [2.23971834, -1.86955194, 0.3599339],
+      [-1.86955194, 1.55096504, -0.29615085],
+      [0.3599339, -0.29615085, 0.06931662],
+    ];
+    const [inXyz, inEnu] = [principalDeviations(xyz), principalDeviations(enu)];
+    // Eight decimals are printed; the smallest variance is zero but for them.
+    inXyz.forEach((deviation, i) => {
+      expect(deviation ** 2).toBeCloseTo(inEnu[i]! ** 2, 7);
+    });
+    expect(sep(enu) / sep(xyz)).toBeCloseTo(1, 7);
+  });
+});
+
+test('property: a thin ellipse in a circle comes close to a line', () => {
+  const line = {east: 0.3, north: 0.2, radius: 1};
+  const exact = normalCdf(Math.sqrt(1 - 0.04) - 0.3) - normalCdf(-Math.sqrt(1 - 0.04) - 0.3);
+  for (const thin of [1e-4, 1e-6, 1e-8]) {
+    const covariance = {eastEast: 1, northNorth: thin * thin, eastNorth: 0};
+    expect(Math.abs(probabilityInCircle({...line, covariance}) - exact)).toBeLessThanOrEqual(
+      thin * thin + 1e-10,
+    );
+    expect(r95(covariance)).toBeCloseTo(normalQuantile(0.975), 7);
+  }
 });
