@@ -1,6 +1,7 @@
 import {dot, type ModelFit} from './model-fits.ts';
 import {settlingRegressor} from './movement-sizes.ts';
-import {type Factor, whiten} from './semiseparable.ts';
+import {whiten} from './semiseparable.ts';
+import {stepProducts} from './step-products.ts';
 import type {TimeCells} from './time-cells.ts';
 
 /** Cells at both ends in which no step is sought. */
@@ -39,13 +40,13 @@ class RatioSum {
     );
   }
 
-  /** @param explained  per model and component, the squares that the regressor takes away */
-  score(explained: readonly Float64Array[]): number {
+  /** @param explained  the squares of a model and component that the regressor takes away */
+  score(explained: (model: number, component: number) => number): number {
     let sum = 0;
     for (let c = 0; c < this.base.length; c++) {
       const better = this.logAverage((m) => {
         const {squares} = this.fits[m]!.components[c]!;
-        return Math.max(squares - explained[m]![c]!, squares * 1e-12);
+        return Math.max(squares - explained(m, c), squares * 1e-12);
       });
       sum += 2 * (better - this.base[c]!);
     }
@@ -85,7 +86,7 @@ export function ratioScores(cells: TimeCells, fits: readonly ModelFit[]): RatioS
   const index = Float64Array.from(cells.index);
   return {
     step: bestStep(sum, fits, m),
-    drift: sum.score(fits.map((fit) => explainedBy(fit, index))),
+    drift: scoreOf(sum, fits, index),
     settling: bestSettling(sum, fits, cells),
   };
 }
@@ -93,9 +94,14 @@ export function ratioScores(cells: TimeCells, fits: readonly ModelFit[]): RatioS
 function bestSettling(sum: RatioSum, fits: readonly ModelFit[], cells: TimeCells): SettlingScore {
   const scores = SETTLING_PARTS.map((part) => {
     const regressor = settlingRegressor(cells, part);
-    return {part, score: sum.score(fits.map((fit) => explainedBy(fit, regressor)))};
+    return {part, score: scoreOf(sum, fits, regressor)};
   });
   return scores.reduce((best, one) => (one.score > best.score ? one : best));
+}
+
+function scoreOf(sum: RatioSum, fits: readonly ModelFit[], regressor: Float64Array): number {
+  const explained = fits.map((fit) => explainedBy(fit, regressor));
+  return sum.score((model, component) => explained[model]![component]!);
 }
 
 /** Squares of each component that a regressor explains beyond a constant. */
@@ -112,60 +118,26 @@ function explainedBy(fit: ModelFit, regressor: Float64Array): Float64Array {
 /** Every cell edge is tried: in slow noise the score of a step falls off within one cell. */
 function bestStep(sum: RatioSum, fits: readonly ModelFit[], m: number): StepScore {
   let best: StepScore = {score: 0, cell: 0};
-  const edges = Array.from(
-    {length: Math.max(0, m - 2 * TRIMMED_CELLS + 1)},
-    (_, i) => TRIMMED_CELLS + i,
-  );
-  const explained = fits.map((fit) => stepsExplained(fit, edges));
-  edges.forEach((cell, i) => {
-    const score = sum.score(explained.map((rows) => rows[i]!));
+  const explained = fits.map(stepsExplained);
+  for (let cell = TRIMMED_CELLS; cell <= m - TRIMMED_CELLS; cell++) {
+    const score = sum.score((model, c) => explained[model]![c]![cell]!);
     if (score > best.score) best = {score, cell};
-  });
+  }
   return best;
 }
 
-/** For a step before each of the cells, the squares of each component that it explains. */
-function stepsExplained(fit: ModelFit, at: readonly number[]): Float64Array[] {
-  const {ones, onesSquared, components, factor} = fit;
-  const m = ones.length;
-  const whitened = new Float64Array(m);
-  const state = new Float64Array(factor.weights.length);
-  return at.map((cell) => {
-    whitenStep(factor, cell, whitened, state);
-    let onOnes = 0;
-    let square = 0;
-    for (let k = cell; k < m; k++) {
-      const value = whitened[k]!;
-      onOnes += ones[k]! * value;
-      square += value * value;
-    }
-    const left = square - (onOnes * onOnes) / onesSquared;
-    return Float64Array.from(components, ({residuals}) => {
-      let projection = 0;
-      for (let k = cell; k < m; k++) projection += whitened[k]! * residuals[k]!;
+/** Per component, the squares that a step before each cell explains beyond a constant. */
+function stepsExplained({factor, ones, onesSquared, components}: ModelFit): Float64Array[] {
+  const {squares, projections} = stepProducts(factor, [
+    ones,
+    ...components.map(({residuals}) => residuals),
+  ]);
+  const onOnes = projections[0]!;
+  return components.map((_, c) =>
+    squares.map((square, cell) => {
+      const left = square - (onOnes[cell]! * onOnes[cell]!) / onesSquared;
+      const projection = projections[c + 1]![cell]!;
       return left > 0 ? (projection * projection) / left : 0;
-    });
-  });
-}
-
-/** `whiten` for a step of one at `cell`, into a column that is used again and again. */
-function whitenStep(factor: Factor, cell: number, out: Float64Array, state: Float64Array): void {
-  const {inverseRoot, gain, decay, weights} = factor;
-  const m = out.length;
-  const j = weights.length;
-  state.fill(0);
-  let previous = 1;
-  out[cell] = inverseRoot[cell]!;
-  for (let n = cell + 1; n < m; n++) {
-    let z = 1;
-    const now = n * j;
-    const before = now - j;
-    for (let a = 0; a < j; a++) {
-      const value = decay[now + a]! * (state[a]! + gain[before + a]! * previous);
-      state[a] = value;
-      z -= weights[a]! * value;
-    }
-    previous = z;
-    out[n] = z * inverseRoot[n]!;
-  }
+    }),
+  );
 }
