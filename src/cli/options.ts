@@ -123,6 +123,21 @@ export function reduceOptions<T>(args: Argv<T>) {
       group: REFERENCE,
       describe: 'map grid for the position: UTM, UTM 33N, EPSG:25833 or a PROJ string',
     },
+    geoid: {
+      type: 'string',
+      group: REFERENCE,
+      describe: 'geoid grid (GTX or ISG) for heights above the geoid',
+    },
+    'geoid-interpolation': {
+      choices: ['bilinear', 'biquadratic'] as const,
+      group: REFERENCE,
+      describe: 'between the nodes of the geoid grid (default: bilinear)',
+    },
+    separation: {
+      type: 'string',
+      group: REFERENCE,
+      describe: 'ellipsoidal minus orthometric height, such as --separation=44.667m',
+    },
     fix: {
       choices: ['best', 'fixed', 'float', 'differential', 'autonomous', 'precise', 'any'] as const,
       group: SCREENING,
@@ -233,6 +248,9 @@ export interface CommandArguments {
   readonly frame?: string | undefined;
   readonly coordinateEpoch?: number | undefined;
   readonly grid?: string | undefined;
+  readonly geoid?: string | undefined;
+  readonly geoidInterpolation?: 'bilinear' | 'biquadratic' | undefined;
+  readonly separation?: string | undefined;
   readonly motion?: string | undefined;
   readonly fix?: string | undefined;
   readonly minSatellites?: number | undefined;

@@ -15,6 +15,7 @@ import {utcFromGpsSeconds} from '../time/gps-time.ts';
 import {causeAdvice, causeTitle, pairTitle} from '../wording/diagnosis.ts';
 import {noticeText} from '../wording/notices.ts';
 import {readWhole, requireInputs, requireOutputs, writeOutputs} from './files.ts';
+import {geoidRequest} from './geoid.ts';
 import type {CommandArguments} from './options.ts';
 import {outputPaths, outputsOf} from './outputs.ts';
 import {progressOn} from './progress.ts';
@@ -44,7 +45,9 @@ import {VERSION} from './version.ts';
 /** `stillmark reduce` and `stillmark check`; returns the exit status. */
 export async function reduce(typed: CommandArguments, command: Result['command']): Promise<number> {
   requireSingle({...typed});
-  const companions = [typed.sheet, typed.marks, typed.logo].filter((path) => path !== undefined);
+  const companions = [typed.sheet, typed.marks, typed.logo, typed.geoid].filter(
+    (path) => path !== undefined,
+  );
   requireInputs(companions);
   requireOutputs(outputPaths(typed), [...typed.log, ...companions]);
   const sheet = typed.sheet === undefined ? emptySheet() : await sheetOf(typed.sheet);
@@ -126,6 +129,7 @@ async function requestOf(
   {mark, all: marks}: Marks,
 ): Promise<ReduceRequest> {
   const {options} = inForce;
+  const geoid = await geoidRequest(inForce, sheet);
   const ellipsoid = ellipsoidOption(options.ellipsoid);
   const at = placeOption('at', options.at);
   const progress = progressOn(process.stderr, options.quiet, () => performance.now());
@@ -155,6 +159,7 @@ async function requestOf(
     frame: frameOf(inForce),
     coordinateEpoch: options.coordinateEpoch ?? null,
     motion: options.motion === undefined ? null : parsePointMotion(options.motion),
+    geoid,
     grid: options.grid ?? null,
     movementLimitM: lengthOption('movement-limit', options.movementLimit),
     wantM: lengthOption('want', options.want),

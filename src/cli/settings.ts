@@ -1,3 +1,4 @@
+import {dirname, isAbsolute, join} from 'node:path';
 import {UsageError} from '../errors.ts';
 import type {Mark} from '../fieldbook/mark.ts';
 import type {Sheet} from '../fieldbook/sheet.ts';
@@ -27,6 +28,7 @@ export function withSheet(options: CommandArguments, sheet: Sheet): InForce {
     ...sheetSettings(sheet),
     ...(sheet.mark === undefined ? {} : {mark: sheet.mark}),
     ...(sheet.frame === undefined ? {} : {frame: sheet.frame}),
+    ...geoidOfSheet(options, sheet),
     ...(sheet.projection === undefined ? {} : {grid: sheet.projection}),
     ...(sheet.coordinateEpoch === undefined ? {} : {coordinateEpoch: sheet.coordinateEpoch}),
   };
@@ -35,6 +37,18 @@ export function withSheet(options: CommandArguments, sheet: Sheet): InForce {
   );
   const fromSheet = Object.keys(stated).filter((name) => !Object.hasOwn(given, name));
   return {options: {...options, ...stated, ...given}, fromSheet: new Set(fromSheet)};
+}
+
+/** Whatever the command line says of the geoid replaces all that the sheet says of it. */
+function geoidOfSheet(options: CommandArguments, sheet: Sheet): Partial<CommandArguments> {
+  if (options.geoid !== undefined || options.separation !== undefined) return {};
+  if (sheet.geoidGrid !== undefined) return {geoid: besideSheet(sheet, sheet.geoidGrid)};
+  return sheet.separationM === undefined ? {} : {separation: `${sheet.separationM} m`};
+}
+
+/** A file that the sheet names stands where the sheet stands. */
+function besideSheet({path}: Sheet, file: string): string {
+  return isAbsolute(file) || path === '-' ? file : join(dirname(path), file);
 }
 
 function sheetSettings({settings}: Sheet): Partial<CommandArguments> {
@@ -141,6 +155,9 @@ export function rememberOthers(inForce: InForce, settings: Settings): void {
     'coordinateEpoch',
     'motion',
     'grid',
+    'geoid',
+    'geoidInterpolation',
+    'separation',
     'date',
     'start',
     'columns',

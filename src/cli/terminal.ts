@@ -1,6 +1,7 @@
 import {headlineFacts} from '../occupation/headline-facts.ts';
 import type {DiagnosisFound, Notice, PerAxis, Position, Result} from '../occupation/result.ts';
 import {accidentalSentence, NOTHING_FITS} from '../wording/diagnosis.ts';
+import {geoidName} from '../wording/heights.ts';
 import {
   coordinateDecimals,
   counted,
@@ -148,6 +149,7 @@ function facts(result: Result): string[] {
     lines.push(['position', `${positionText(segment.position, scatterM)}${span}`]);
   }
   const first = result.segments[0]?.position;
+  if (first?.separation != null) lines.push(['height', separationText(first)]);
   if (first !== undefined) lines.push(['of', `${first.of}; ${frameText(first)}`]);
   const {epochs, occupation} = result;
   if (occupation.startUtc !== null && occupation.endUtc !== null) {
@@ -185,6 +187,13 @@ function positionText(
         ? `height above the receiver's geoid ${fixed(orthometricHeightM, heights)} m`
         : 'no height';
   return `${fixed(Math.abs(geodetic.latitudeDeg), degrees)}° ${north}  ${fixed(Math.abs(geodetic.longitudeDeg), degrees)}° ${east}  ${height}`;
+}
+
+/** The height above the geoid of a named model; the receiver's own is no height to hand on. */
+function separationText({orthometricHeightM, separation, uncertainty95M}: Position): string {
+  if (separation === null || orthometricHeightM === null) return 'no height above the geoid';
+  const decimals = coordinateDecimals(uncertainty95M?.up ?? null);
+  return `${fixed(orthometricHeightM, decimals)} m above ${geoidName(separation)}; separation ${fixed(separation.separationM, 3)} m (${separation.from})`;
 }
 
 function frameText({frame, frameFrom, coordinateEpoch}: Position): string {

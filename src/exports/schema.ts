@@ -93,6 +93,14 @@ const POSITION = object({
   ecefM: orNull(XYZ),
   geodetic: GEODETIC,
   orthometricHeightM: orNull(LENGTH_M),
+  separation: orNull(
+    object({
+      separationM: LENGTH_M,
+      from: oneOf('geoid grid', 'command line', 'field sheet', 'receiver'),
+      model: orNull(TEXT),
+      receiverM: orNull(LENGTH_M),
+    }),
+  ),
   grid: orNull(GRID),
   originEcefM: XYZ,
   standardUncertaintyM: orNull(PER_AXIS_OR_NULL),

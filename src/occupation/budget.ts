@@ -29,7 +29,6 @@ export interface BudgetInput {
   readonly base: StatedContribution | null;
   readonly antennaHeight: StatedContribution | null;
   readonly centring: StatedContribution | null;
-  readonly geoid: StatedContribution | null;
 }
 
 /**
@@ -84,22 +83,29 @@ export function budgetRows(input: BudgetInput): BudgetRow[] {
   rows.push(correctionRow(input));
   rows.push(statedRow('antenna height', 'antenna', input.antennaHeight));
   rows.push(statedRow('centring over the mark', null, input.centring));
-  if (input.geoid !== null) rows.push(statedRow('geoid model', 'geoid', input.geoid));
   return input.hasHeight ? rows : rows.map(withoutUp);
 }
 
-/**
- * What enters a comparison beside the position's own budget: the transformation into the frame of
- * the mark, and the mark itself.
- */
-export function comparisonRows(
-  mark: {
+export interface ComparisonContributions {
+  readonly mark: {
     readonly name: string;
     readonly covarianceM2: readonly (readonly number[])[] | null;
-  } | null,
-  transformation: StatedContribution | null,
-): BudgetRow[] {
+  } | null;
+  /** null: nothing was transformed. */
+  readonly transformation: StatedContribution | null;
+  /** Heights above the geoid are compared, so that its model counts. */
+  readonly heightsAboveGeoid: boolean;
+  readonly geoid: StatedContribution | null;
+}
+
+/**
+ * What enters a comparison beside the position's own budget: the geoid model, the transformation
+ * into the frame of the mark, and the mark itself.
+ */
+export function comparisonRows(contributions: ComparisonContributions): BudgetRow[] {
+  const {mark, transformation, heightsAboveGeoid, geoid} = contributions;
   const rows: BudgetRow[] = [];
+  if (heightsAboveGeoid) rows.push(statedRow('geoid model', 'geoid', geoid));
   if (transformation !== null) {
     rows.push(statedRow('transformation to the frame of the mark', 'frame', transformation));
   }

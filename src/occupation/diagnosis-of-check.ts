@@ -8,10 +8,10 @@ import {antennaFacts, nearbyMarks, offsetPointFacts, separationFacts} from './di
 import type {DiagnosisInput} from './diagnosis/input.ts';
 import type {LocalColumns} from './local-columns.ts';
 import type {MarkPlace} from './mark-place.ts';
-import {meanSeparationM} from './position.ts';
 import {eccentricityOf} from './reduce-to-mark.ts';
 import type {ReduceRequest} from './request.ts';
 import type {Candidate, Comparison, DiagnosisFound, EpochAccount, Position} from './result.ts';
+import {meanSeparationM, undulationAt} from './separation.ts';
 import type {Session} from './session.ts';
 
 /** What one finished comparison was made from. */
@@ -87,7 +87,7 @@ function inputOf(compared: ComparedRecord): DiagnosisInput {
       mark,
       sheet,
       logSeparationM: meanSeparationM(request.log.epochs, session.indices),
-      gridUndulationM: null,
+      gridUndulationM: undulationOfGrid(request, place.plan ?? measured.geodetic),
       logHasAltitudes: columns.heightKind !== 'none',
     }),
     offsetPoint: offsetPointFacts(eccentricityOf(sheet, convergenceDeg ?? undefined)),
@@ -119,4 +119,11 @@ function projectionOfCheck({request, place}: ComparedRecord): Projection | null 
   const {mark, grid, ellipsoid} = request;
   const named = mark?.coordinates.kind === 'grid' ? mark.coordinates.projection : grid;
   return named === null ? null : projectionOf(parseGrid(named, {place: place.plan, ellipsoid}));
+}
+
+function undulationOfGrid(
+  {geoid}: ReduceRequest,
+  place: {readonly latitudeDeg: number; readonly longitudeDeg: number},
+): number | null {
+  return geoid.grid === null ? null : undulationAt(geoid.grid, place);
 }

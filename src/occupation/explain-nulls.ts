@@ -29,8 +29,10 @@ const RULES: readonly Rule[] = [
   {path: /\.grid$/, code: 'grid-not-asked', severity: 'absent'},
   {path: /\.(sharedBy|id)$/, code: 'budget-row-not-shared', severity: 'absent'},
   {path: /^budget\[\]\.standardUncertaintyM/, code: 'budget-row-not-included', severity: 'absent'},
+  {path: /separation\.model$/, code: 'geoid-model-not-named', severity: 'absent'},
+  {path: /separation\.receiverM$/, code: 'no-receiver-separation', severity: 'absent'},
   {
-    path: /orthometricHeightM$/,
+    path: /(orthometricHeightM|separation)$/,
     code: 'no-orthometric-height',
     severity: 'absent',
   },

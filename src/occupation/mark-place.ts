@@ -17,13 +17,21 @@ export interface MarkPlace {
 
 export function markPlace(mark: Mark, ellipsoid: Ellipsoid): MarkPlace {
   const {plan, ellipsoidalHeightM} = planAndHeight(mark, ellipsoid);
+  const orthometricHeightM = mark.coordinates.orthometricHeightM ?? null;
   return {
     name: mark.name,
     plan,
-    ellipsoidalHeightM,
-    orthometricHeightM: mark.coordinates.orthometricHeightM ?? null,
+    ellipsoidalHeightM: ellipsoidalHeightM ?? raised(orthometricHeightM, mark.separationM),
+    orthometricHeightM,
     covarianceM2: covarianceOf(mark, plan, ellipsoid),
   };
+}
+
+/** The ellipsoidal height of a mark with a height above the geoid and its separation. */
+function raised(orthometricHeightM: number | null, separationM: number | undefined): number | null {
+  return orthometricHeightM === null || separationM === undefined
+    ? null
+    : orthometricHeightM + separationM;
 }
 
 function planAndHeight(

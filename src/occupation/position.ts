@@ -1,14 +1,14 @@
 import type {Epochs} from '../epochs/epochs.ts';
 import {ecefFromEnu, geodeticFromEnu} from '../geodesy/local.ts';
 import {r95} from '../statistics/accuracy-measures.ts';
-import {moments} from '../statistics/moments.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {budgetVariancesM2} from './budget.ts';
 import {type CovarianceM2, planeOf} from './compare.ts';
 import {gridPosition} from './grid-position.ts';
-import {type LocalColumns, taken} from './local-columns.ts';
-import type {BudgetRow, PerAxis, Position} from './result.ts';
+import type {LocalColumns} from './local-columns.ts';
+import type {BudgetRow, PerAxis, Position, Separation} from './result.ts';
 import {ellipseOf} from './scatter.ts';
+import {type GeoidRequest, meanSeparationM, separationInUse} from './separation.ts';
 import type {Session} from './session.ts';
 
 const NORMAL_95 = 1.959963984540054;
@@ -24,6 +24,7 @@ export interface PositionInput {
   readonly frameFrom: Position['frameFrom'];
   readonly coordinateEpoch: number | null;
   readonly of: Position['of'];
+  readonly geoid: GeoidRequest;
   /** Map grid as written; null: none asked for. */
   readonly grid: string | null;
 }
@@ -39,6 +40,9 @@ export function positionOf(input: PositionInput): Position {
   const geodetic = geodeticFromEnu(mean, columns.frame);
   const ecef = ecefFromEnu(mean, columns.frame);
   const ellipsoidal = columns.heightKind === 'ellipsoidal';
+  const separation = ellipsoidal
+    ? separationInUse(input.geoid, geodetic, meanSeparationM(epochs, session.indices))
+    : null;
   const covarianceEnuM2 = covarianceOf(session, input.budget);
   const {originEcef} = columns.frame;
   return {
@@ -53,12 +57,8 @@ export function positionOf(input: PositionInput): Position {
       longitudeDeg: geodetic.longitudeDeg,
       ellipsoidalHeightM: ellipsoidal ? geodetic.ellipsoidalHeightM : null,
     },
-    orthometricHeightM: orthometricHeightM(
-      columns,
-      geodetic.ellipsoidalHeightM,
-      epochs,
-      session.indices,
-    ),
+    orthometricHeightM: orthometricHeightM(columns, geodetic.ellipsoidalHeightM, separation),
+    separation,
     grid:
       input.grid === null
         ? null
@@ -75,25 +75,16 @@ export function positionOf(input: PositionInput): Position {
 }
 
 /**
- * Height above the receiver's own geoid: the ellipsoidal height less the mean separation that the
- * receiver printed, or the averaged altitude itself where the log gives nothing else.
+ * The ellipsoidal height less the separation in use, or the averaged altitude itself where the log
+ * gives no separation: that is above the receiver's own geoid, whatever model was asked for.
  */
 function orthometricHeightM(
   {heightKind}: LocalColumns,
   heightM: number,
-  epochs: Epochs,
-  indices: Uint32Array,
+  separation: Separation | null,
 ): number | null {
-  if (heightKind === 'none') return null;
   if (heightKind === 'above the receiver geoid') return heightM;
-  const separationM = meanSeparationM(epochs, indices);
-  return separationM === null ? null : heightM - separationM;
-}
-
-/** Mean geoid separation that the receiver printed; null unless every epoch has one. */
-export function meanSeparationM(epochs: Epochs, indices: Uint32Array): number | null {
-  const separationM = moments(taken(epochs.separationM, indices))?.mean;
-  return separationM === undefined || Number.isNaN(separationM) ? null : separationM;
+  return separation === null ? null : heightM - separation.separationM;
 }
 
 function covarianceOf(session: Session, budget: readonly BudgetRow[]): CovarianceM2 | null {

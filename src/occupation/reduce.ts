@@ -1,13 +1,12 @@
 import {median as medianOf} from '../statistics/quantile.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {epochAccount} from './account.ts';
+import {comparisonOf, heightsAboveGeoid, measuredForMark} from './against-mark.ts';
 import {type AntennaReduction, reduceAntenna} from './antenna.ts';
 import {besideStep} from './beside-step.ts';
 import {budgetRows, comparisonRows} from './budget.ts';
-import {type CovarianceM2, compareWithMark} from './compare.ts';
-import {withDiagnosis} from './diagnosis-of-check.ts';
 import {explainNulls} from './explain-nulls.ts';
-import {type Changed, inFrameOfMark} from './frame-change.ts';
+import {noticeHeights} from './height-notices.ts';
 import {keptIndices, type LocalColumns, localColumns, taken} from './local-columns.ts';
 import {type MarkPlace, markPlace} from './mark-place.ts';
 import {isTravelling} from './motion.ts';
@@ -29,10 +28,8 @@ import {offsetFrom, referenceOf} from './reference.ts';
 import type {ReduceRequest} from './request.ts';
 import type {
   BudgetRow,
-  Comparison,
   EpochAccount,
   PerAxis,
-  Position,
   Reference,
   Result,
   Segment,
@@ -45,7 +42,7 @@ import {screeningOf} from './screening-of-record.ts';
 import {type Session, sessionOf} from './session.ts';
 import {sheetItems} from './sheet-items.ts';
 import {stabilityOf} from './stability.ts';
-import {statedContributions} from './stated-contributions.ts';
+import {statedContributions, statedOfGeoid} from './stated-contributions.ts';
 import {checkVerdict} from './verdict.ts';
 
 /** The result, and the epochs it rests on for charts and the epoch table. */
@@ -136,17 +133,13 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   const segments = sessions.map((part) => segmentOf(part, record, columns, outcome));
   const single = segments.length === 1 ? segments[0]! : null;
   const mean = (single ?? segmentOf(whole, record, columns, outcome)).position;
-  const changed =
-    request.mark === null
-      ? undefined
-      : inFrameOfMark(mean, request.mark, request.motion, request.ellipsoid);
-  const measured = changed === undefined ? mean : {...mean, geodetic: changed.geodetic};
+  const {measured, changed} = measuredForMark(mean, request);
   const reference = referenceOf(measured, place, request.at, request.ellipsoid);
   const offsetM = offsetFrom(targetOf(reference, place), measured, request.ellipsoid);
   const comparison =
     place === null || single === null
       ? null
-      : comparisonOf({record, columns, session: whole, place, measured, changed});
+      : comparisonOf({...record, columns, session: whole, place, measured, changed});
   const result: Result = {
     ...common({...record, account: accountOf(request, outcome)}),
     reference,
@@ -154,7 +147,12 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
     segments,
     budget: [
       ...budgetOf(whole, record, outcome, columns),
-      ...comparisonRows(place, changed?.contribution ?? null),
+      ...comparisonRows({
+        mark: place,
+        transformation: changed?.contribution ?? null,
+        heightsAboveGeoid: heightsAboveGeoid(place, measured),
+        geoid: statedOfGeoid(request.sheet),
+      }),
     ],
     scatter: {
       aboutMean: scatterAbout(usedPositions(columns, whole), whole.meanM),
@@ -170,6 +168,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   };
   noticeScreening(result, outcome, notices);
   noticeSession(sessions, notices);
+  noticeHeights(result, request, columns, heightsAboveGeoid(place, measured), notices);
   noticeBudget(result, notices);
   noticeReceiver(result, typicalStepM(columns, whole), notices);
   noticeStability(result, notices);
@@ -318,6 +317,7 @@ function segmentOf(
       frameFrom: request.frame?.from ?? null,
       coordinateEpoch: request.coordinateEpoch,
       of: record.antenna?.pointReached ?? 'antenna, point not stated',
+      geoid: request.geoid,
       grid: request.grid,
     }),
   };
@@ -340,57 +340,6 @@ function budgetOf(
     hasHeight: heightKind !== 'none',
     ...statedContributions(request.sheet, antenna ?? null),
   });
-}
-
-/** A position about to be compared with a mark, and the record that it comes from. */
-interface Compared {
-  readonly record: Record;
-  readonly columns: LocalColumns;
-  readonly session: Session;
-  readonly place: MarkPlace;
-  /** In the frame of the mark where both frames are known. */
-  readonly measured: Position;
-  readonly changed: Changed | undefined;
-}
-
-function comparisonOf({record, columns, session, place, measured, changed}: Compared): Comparison {
-  const {request, account, antenna} = record;
-  const covarianceM2 = covarianceOf(measured, changed);
-  const comparison = compareWithMark({
-    mark: place.name,
-    offsetM: offsetFrom(place, measured, request.ellipsoid),
-    covarianceM2,
-    markCovarianceM2: place.covarianceM2,
-    asked: request.asked,
-    // What is taken for granted because nobody stated it is said aloud in every output.
-    assumptions: changed === undefined ? ['same frame and epoch as the mark'] : [],
-    frameChange: changed?.change ?? null,
-  });
-  if (covarianceM2 === null || antenna === undefined) return comparison;
-  return withDiagnosis({
-    request,
-    account,
-    antenna,
-    columns,
-    session,
-    place,
-    measured,
-    comparison,
-    covarianceM2,
-  });
-}
-
-/** Covariance of the measured position, the transformation into the frame of the mark included. */
-function covarianceOf(
-  {covarianceEnuM2}: Position,
-  changed: Changed | undefined,
-): CovarianceM2 | null {
-  if (covarianceEnuM2 === null) return null;
-  const {east = 0, north = 0, up = 0} = changed?.contribution?.standardUncertaintyM ?? {};
-  const added = [east, north, up];
-  return covarianceEnuM2.map((row, i) =>
-    row.map((value, j) => (value ?? Number.NaN) + (i === j ? added[i]! ** 2 : 0)),
-  );
 }
 
 function targetOf({geodetic}: Reference, place: MarkPlace | null) {

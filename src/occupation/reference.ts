@@ -74,14 +74,27 @@ function heightDifferenceM(
   target: {readonly ellipsoidalHeightM: number | null; readonly orthometricHeightM: number | null},
   measured: Measured,
 ): number | null {
-  const {ellipsoidalHeightM} = measured.geodetic;
-  if (target.ellipsoidalHeightM !== null && ellipsoidalHeightM !== null) {
-    return ellipsoidalHeightM - target.ellipsoidalHeightM;
+  switch (heightSystemOf(target, measured)) {
+    case 'ellipsoidal':
+      return measured.geodetic.ellipsoidalHeightM! - target.ellipsoidalHeightM!;
+    case 'above the geoid':
+      return measured.orthometricHeightM! - target.orthometricHeightM!;
+    case null:
+      return null;
   }
-  if (target.orthometricHeightM !== null && measured.orthometricHeightM !== null) {
-    return measured.orthometricHeightM - target.orthometricHeightM;
+}
+
+/** The height system that target and measured point both have; heights are never mixed. */
+export function heightSystemOf(
+  target: {readonly ellipsoidalHeightM: number | null; readonly orthometricHeightM: number | null},
+  measured: Measured,
+): 'ellipsoidal' | 'above the geoid' | null {
+  if (target.ellipsoidalHeightM !== null && measured.geodetic.ellipsoidalHeightM !== null) {
+    return 'ellipsoidal';
   }
-  return null;
+  return target.orthometricHeightM !== null && measured.orthometricHeightM !== null
+    ? 'above the geoid'
+    : null;
 }
 
 function atHeight(geodetic: Reference['geodetic'], otherwiseM: number): Geodetic {

@@ -9,6 +9,7 @@ import type {CauseValues} from './diagnosis/hypothesis.ts';
 import type {Say} from './notices.ts';
 import type {InputAccount, Position, Result, Setting, Severity} from './result.ts';
 import type {ScreenRules} from './screen.ts';
+import type {GeoidRequest} from './separation.ts';
 
 /** A finding of the reading stage: a code with values. */
 export interface Finding {
@@ -52,6 +53,7 @@ export interface ReduceRequest {
   readonly coordinateEpoch: number | null;
   /** How the mark moves between epochs, as the user states it. */
   readonly motion: PointMotion | null;
+  readonly geoid: GeoidRequest;
   /** Map grid for the position, as written. */
   readonly grid: string | null;
   readonly movementLimitM: number | null;

@@ -127,6 +127,8 @@ export interface Position {
   readonly ecefM: PerAxisXyz | null;
   readonly geodetic: GeodeticPosition;
   readonly orthometricHeightM: number | null;
+  /** Between both heights; null when no separation is known at the position. */
+  readonly separation: Separation | null;
   readonly grid: GridPosition | null;
   readonly originEcefM: PerAxisXyz;
   readonly standardUncertaintyM: PerAxis<number | null> | null;
@@ -138,6 +140,16 @@ export interface Position {
   readonly covarianceEnuM2: Covariance3 | null;
   readonly independentLooks: PerAxis<number | null> | null;
   readonly correlationTimeS: PerAxis<number | null> | null;
+}
+
+/** Ellipsoidal minus orthometric height, and the receiver's own for comparison. */
+export interface Separation {
+  readonly separationM: number;
+  readonly from: 'geoid grid' | 'command line' | 'field sheet' | 'receiver';
+  /** null: the receiver's own model, which logs do not name, or a number without one. */
+  readonly model: string | null;
+  /** As printed in the log; null: the log has none. */
+  readonly receiverM: number | null;
 }
 
 export interface Ellipse {

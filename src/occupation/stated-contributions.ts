@@ -6,18 +6,26 @@ import type {BudgetInput, StatedContribution} from './budget.ts';
 export function statedContributions(
   {standardUncertainties}: Sheet,
   antenna: AntennaReduction | null,
-): Pick<BudgetInput, 'service' | 'base' | 'antennaHeight' | 'centring' | 'geoid'> {
-  const stated = (...names: readonly StatedUncertainty['of'][]) => {
-    const entry = standardUncertainties?.find(({of}) => names.includes(of));
-    return entry === undefined ? null : contribution(entry);
-  };
+): Pick<BudgetInput, 'service' | 'base' | 'antennaHeight' | 'centring'> {
   return {
-    service: stated('service'),
-    base: stated('base', 'network'),
+    service: stated(standardUncertainties, 'service'),
+    base: stated(standardUncertainties, 'base', 'network'),
     antennaHeight: antennaHeight(antenna),
-    centring: stated('centring'),
-    geoid: stated('geoid', 'separation'),
+    centring: stated(standardUncertainties, 'centring'),
   };
+}
+
+/** What the field sheet states of the geoid model, which counts where heights above it meet. */
+export function statedOfGeoid({standardUncertainties}: Sheet): StatedContribution | null {
+  return stated(standardUncertainties, 'geoid', 'separation');
+}
+
+function stated(
+  all: Sheet['standardUncertainties'],
+  ...names: readonly StatedUncertainty['of'][]
+): StatedContribution | null {
+  const entry = all?.find(({of}) => names.includes(of));
+  return entry === undefined ? null : contribution(entry);
 }
 
 function contribution(entry: StatedUncertainty): StatedContribution {

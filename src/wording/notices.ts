@@ -56,6 +56,14 @@ export const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
   'centring-not-included': () => 'The uncertainty of centring over the mark is not included.',
   'service-included': (v) =>
     `The 95 % figures include what the positioning service itself leaves uncertain (${textIn(v, 'from')}): a record of autonomous fixes repeats its own errors and cannot see them.`,
+  'geoid-outside': (v) =>
+    `The geoid grid ${textIn(v, 'model')} says nothing at this position: it reaches from ${degreesIn(v, 'southDeg')} to ${degreesIn(v, 'northDeg')} in latitude and from ${degreesIn(v, 'westDeg')} to ${degreesIn(v, 'eastDeg')} in longitude. No height above the geoid is given; name a grid that covers the place.`,
+  'geoid-not-applied': () =>
+    "The log gives heights above the receiver's own geoid and no separation, so the geoid named cannot be applied: the receiver's separation must be known first. Have the receiver print it.",
+  'separations-compared': (v) =>
+    `The separation used is ${numberIn(v, 'separationM').toFixed(3)} m (${textIn(v, 'model') || textIn(v, 'from')}); the receiver prints ${numberIn(v, 'receiverM').toFixed(3)} m, ${formatLength(Math.abs(numberIn(v, 'differenceM')))} ${numberIn(v, 'differenceM') > 0 ? 'less' : 'more'}. Heights printed by the receiver differ from these by that much.`,
+  'receiver-geoid-compared': () =>
+    "The height compared with the mark rests on the receiver's own geoid model, which the log does not name and prints rounded. State the separation, or name the geoid grid of the mark's height system.",
   'step-material': (v) =>
     `The positions jumped by ${formatLength(numberIn(v, 'sizeM'))} at ${formatUtc(textIn(v, 'utc'))} UTC${beside(v)}. Each side has its own mean; find out which setup is the right one and measure again.`,
   'steps-small': (v) =>
@@ -98,6 +106,8 @@ export const MISSING_SENTENCES: Readonly<Record<string, Sentence>> = {
     'A factor of the grid that has no single value there, or needs an ellipsoidal height.',
   'budget-row-not-shared': () => 'A contribution to the budget that no other occupation shares.',
   'budget-row-not-included': () => 'A contribution to the budget that nobody gave is not included.',
+  'geoid-model-not-named': () => 'Which geoid model the separation comes from is not stated.',
+  'no-receiver-separation': () => 'The log prints no geoid separation to compare with.',
   'no-orthometric-height': () =>
     'No orthometric height: the log gives no geoid separation, and none was stated.',
   'no-ellipsoidal-height': () =>
@@ -126,6 +136,10 @@ export function noticeText(code: string, values: NoticeValues): string {
   const sentence = SENTENCES.get(code);
   if (sentence === undefined) throw new Error(`noticeText: no sentence for the code ${code}`);
   return sentence(values);
+}
+
+function degreesIn(values: NoticeValues, name: string): string {
+  return `${Number(numberIn(values, name).toFixed(4))}°`;
 }
 
 function beside(values: NoticeValues): string {

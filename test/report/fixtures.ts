@@ -516,6 +516,7 @@ function positionOf(spec: SampleSpec, series: ChartSeries): Position {
       ellipsoidalHeightM: spec.heights ? 60.9876 : null,
     },
     orthometricHeightM: spec.heights ? 4.321 : null,
+    separation: null,
     grid: null,
     originEcefM: {x: 3_444_012, y: -381_013, z: 5_337_014},
     standardUncertaintyM: known ? perAxis(halfM / 1.96, (1.8 * halfM) / 1.96) : null,

@@ -1,5 +1,6 @@
 import {sexagesimal} from '../../geodesy/angle.ts';
 import type {Position, Segment} from '../../occupation/result.ts';
+import {geoidName} from '../../wording/heights.ts';
 import {
   arcSecondDecimals,
   coordinateDecimals,
@@ -106,7 +107,7 @@ function fromText(from: Position['frameFrom']): string {
 }
 
 function coordinateRows(position: Position, {options}: ReportContext): Row[] {
-  const {geodetic, uncertainty95M, ecefM, grid, orthometricHeightM} = position;
+  const {geodetic, uncertainty95M, ecefM, grid, orthometricHeightM, separation} = position;
   const planDecimals = coordinateDecimals(uncertainty95M?.horizontalRadius ?? null);
   const upDecimals = coordinateDecimals(uncertainty95M?.up ?? null);
   const unit = largeUnit(options.units);
@@ -120,7 +121,10 @@ function coordinateRows(position: Position, {options}: ReportContext): Row[] {
       : length('Ellipsoidal height', geodetic.ellipsoidalHeightM, upDecimals),
   ];
   if (orthometricHeightM !== null) {
-    rows.push(length('Height above the geoid', orthometricHeightM, upDecimals));
+    rows.push(length(`Height above ${heightFrom(position)}`, orthometricHeightM, upDecimals));
+  }
+  if (separation !== null) {
+    rows.push(length('Geoid separation', separation.separationM, 3));
   }
   if (grid !== null) {
     rows.push(
@@ -137,6 +141,11 @@ function coordinateRows(position: Position, {options}: ReportContext): Row[] {
     );
   }
   return rows;
+}
+
+/** An altitude without a separation is above the receiver's own geoid too. */
+function heightFrom({separation}: Position): string {
+  return geoidName(separation ?? {from: 'receiver', model: null});
 }
 
 function angleRow(

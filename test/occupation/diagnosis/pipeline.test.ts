@@ -117,6 +117,7 @@ function causesOf(
     asked: [{of: 'horizontal', toleranceM: 0.02, reason: null}],
     frame: null,
     motion: null,
+    geoid: {grid: null, stated: null},
     grid: null,
     coordinateEpoch: null,
     movementLimitM: null,

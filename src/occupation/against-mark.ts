@@ -1,0 +1,104 @@
+import type {AntennaReduction} from './antenna.ts';
+import {type CovarianceM2, compareWithMark} from './compare.ts';
+import {withDiagnosis} from './diagnosis-of-check.ts';
+import {type Changed, inFrameOfMark} from './frame-change.ts';
+import type {LocalColumns} from './local-columns.ts';
+import type {MarkPlace} from './mark-place.ts';
+import {heightSystemOf, offsetFrom} from './reference.ts';
+import type {ReduceRequest} from './request.ts';
+import type {Comparison, EpochAccount, Position} from './result.ts';
+import type {Session} from './session.ts';
+import {statedOfGeoid} from './stated-contributions.ts';
+
+/** The measured position in the frame and at the epoch of the mark, where both are known. */
+export function measuredForMark(
+  mean: Position,
+  {mark, motion, ellipsoid}: ReduceRequest,
+): {readonly measured: Position; readonly changed: Changed | undefined} {
+  const changed = mark === null ? undefined : inFrameOfMark(mean, mark, motion, ellipsoid);
+  if (changed === undefined) return {measured: mean, changed};
+  const {geodetic} = changed;
+  const orthometricHeightM = transformedOrthometric(mean, geodetic.ellipsoidalHeightM);
+  return {measured: {...mean, geodetic, orthometricHeightM}, changed};
+}
+
+/**
+ * A geoid model belongs to the frame of the mark; the receiver's own belongs to its positions, and
+ * its heights stay as they were.
+ */
+function transformedOrthometric(
+  {orthometricHeightM, separation}: Position,
+  ellipsoidalHeightM: number | null,
+): number | null {
+  if (separation === null || separation.from === 'receiver' || ellipsoidalHeightM === null) {
+    return orthometricHeightM;
+  }
+  return ellipsoidalHeightM - separation.separationM;
+}
+
+/** Whether the heights that are compared stand above a geoid, so that its model counts. */
+export function heightsAboveGeoid(place: MarkPlace | null, measured: Position): boolean {
+  return place !== null && heightSystemOf(place, measured) === 'above the geoid';
+}
+
+/** A position about to be compared with a mark, and the record that it comes from. */
+export interface Compared {
+  readonly request: ReduceRequest;
+  readonly account: EpochAccount;
+  readonly antenna?: AntennaReduction;
+  readonly columns: LocalColumns;
+  readonly session: Session;
+  readonly place: MarkPlace;
+  /** In the frame of the mark where both frames are known. */
+  readonly measured: Position;
+  readonly changed: Changed | undefined;
+}
+
+/** The offset from the mark, what it means, and what it is consistent with. */
+export function comparisonOf(compared: Compared): Comparison {
+  const {request, account, antenna, columns, session, place, measured, changed} = compared;
+  const covarianceM2 = covarianceOf(measured, addedVariancesM2(compared));
+  const comparison = compareWithMark({
+    mark: place.name,
+    offsetM: offsetFrom(place, measured, request.ellipsoid),
+    covarianceM2,
+    markCovarianceM2: place.covarianceM2,
+    asked: request.asked,
+    // What is taken for granted because nobody stated it is said aloud in every output.
+    assumptions: changed === undefined ? ['same frame and epoch as the mark'] : [],
+    frameChange: changed?.change ?? null,
+  });
+  if (covarianceM2 === null || antenna === undefined) return comparison;
+  return withDiagnosis({
+    request,
+    account,
+    antenna,
+    columns,
+    session,
+    place,
+    measured,
+    comparison,
+    covarianceM2,
+  });
+}
+
+/** What the comparison adds to the uncertainty of the position, per axis. */
+function addedVariancesM2({request, place, measured, changed}: Compared): number[] {
+  const frame = changed?.contribution?.standardUncertaintyM;
+  const geoid = heightsAboveGeoid(place, measured)
+    ? statedOfGeoid(request.sheet)?.standardUncertaintyM
+    : undefined;
+  return (['east', 'north', 'up'] as const).map(
+    (axis) => (frame?.[axis] ?? 0) ** 2 + (geoid?.[axis] ?? 0) ** 2,
+  );
+}
+
+function covarianceOf(
+  {covarianceEnuM2}: Position,
+  addedM2: readonly number[],
+): CovarianceM2 | null {
+  if (covarianceEnuM2 === null) return null;
+  return covarianceEnuM2.map((row, i) =>
+    row.map((value, j) => (value ?? Number.NaN) + (i === j ? addedM2[i]! : 0)),
+  );
+}
