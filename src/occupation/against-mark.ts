@@ -1,9 +1,11 @@
 import type {AntennaReduction} from './antenna.ts';
-import {type CovarianceM2, compareWithMark} from './compare.ts';
+import {compareWithMark} from './compare.ts';
+import {type CovarianceM2, covarianceSum, withVariances} from './covariance.ts';
 import {withDiagnosis} from './diagnosis-of-check.ts';
 import {type Changed, inFrameOfMark} from './frame-change.ts';
 import type {LocalColumns} from './local-columns.ts';
 import type {MarkPlace} from './mark-place.ts';
+import {type OutOfReach, outOfReach} from './reach.ts';
 import {heightSystemOf, offsetFrom} from './reference.ts';
 import type {ReduceRequest} from './request.ts';
 import type {Comparison, EpochAccount, Position} from './result.ts';
@@ -57,7 +59,7 @@ export interface Compared {
 /** The offset from the mark, what it means, and what it is consistent with. */
 export function comparisonOf(compared: Compared): Comparison {
   const {request, account, antenna, columns, session, place, measured, changed} = compared;
-  const covarianceM2 = covarianceOf(measured, addedVariancesM2(compared));
+  const covarianceM2 = covarianceOf(compared);
   const comparison = compareWithMark({
     mark: place.name,
     offsetM: offsetFrom(place, measured, request.ellipsoid),
@@ -82,6 +84,27 @@ export function comparisonOf(compared: Compared): Comparison {
   });
 }
 
+/** Tolerances that no offset could pass with this record, and how long a record would have to be. */
+export function tolerancesOutOfReach(compared: Compared): OutOfReach[] {
+  const {request, session, place} = compared;
+  const covarianceM2 = covarianceOf(compared);
+  if (covarianceM2 === null || session.covarianceM2 === null) return [];
+  return outOfReach({
+    asked: request.asked,
+    session,
+    sessionM2: session.covarianceM2,
+    totalM2: covarianceSum(covarianceM2, place.covarianceM2),
+  });
+}
+
+/** Covariance of the measured position with what the comparison adds to it. */
+function covarianceOf(compared: Compared): CovarianceM2 | null {
+  const own = compared.measured.covarianceEnuM2;
+  if (own === null) return null;
+  const known = own.map((row) => row.map((value) => value ?? Number.NaN));
+  return withVariances(known, addedVariancesM2(compared));
+}
+
 /** What the comparison adds to the uncertainty of the position, per axis. */
 function addedVariancesM2({request, place, measured, changed}: Compared): number[] {
   const frame = changed?.contribution?.standardUncertaintyM;
@@ -90,15 +113,5 @@ function addedVariancesM2({request, place, measured, changed}: Compared): number
     : undefined;
   return (['east', 'north', 'up'] as const).map(
     (axis) => (frame?.[axis] ?? 0) ** 2 + (geoid?.[axis] ?? 0) ** 2,
-  );
-}
-
-function covarianceOf(
-  {covarianceEnuM2}: Position,
-  addedM2: readonly number[],
-): CovarianceM2 | null {
-  if (covarianceEnuM2 === null) return null;
-  return covarianceEnuM2.map((row, i) =>
-    row.map((value, j) => (value ?? Number.NaN) + (i === j ? addedM2[i]! : 0)),
   );
 }

@@ -1,9 +1,7 @@
 import {probabilityInCircle} from '../statistics/accuracy-measures.ts';
 import {normalWithin} from '../statistics/distribution.ts';
+import {type CovarianceM2, covarianceSum, planeOf} from './covariance.ts';
 import type {Comparison, Decision, FrameChange, PerAxis, Requirement} from './result.ts';
-
-/** Covariance of east, north and up in m², row by row; NaN in the row of a height not known. */
-export type CovarianceM2 = readonly (readonly number[])[];
 
 /** χ² with 2 degrees of freedom and normal, at 95 %. */
 const CHI_SQUARE_2_AT_95 = 5.991464547107982;
@@ -35,7 +33,7 @@ export interface ComparisonInput {
 export function compareWithMark(input: ComparisonInput): Comparison {
   const {offsetM, asked, mark, assumptions} = input;
   const {covarianceM2, markCovarianceM2} = input;
-  const total = covarianceM2 === null ? null : totalCovariance({covarianceM2, markCovarianceM2});
+  const total = covarianceM2 === null ? null : covarianceSum(covarianceM2, markCovarianceM2);
   const horizontal = horizontalM(offsetM);
   const normalisedError = normalisedErrors(offsetM, total);
   return {
@@ -59,19 +57,6 @@ export function compareWithMark(input: ComparisonInput): Comparison {
 export function couldPass(asked: Asked, covarianceM2: CovarianceM2): boolean {
   const probability = probabilityWithin(asked, {east: 0, north: 0, up: 0}, covarianceM2);
   return probability !== null && probability >= SURE;
-}
-
-/** Sum of both covariances; an unknown one of the mark counts as zero. */
-export function totalCovariance({
-  covarianceM2,
-  markCovarianceM2,
-}: {
-  readonly covarianceM2: CovarianceM2;
-  readonly markCovarianceM2: CovarianceM2 | null;
-}): CovarianceM2 {
-  return covarianceM2.map((row, i) =>
-    row.map((value, j) => value + (markCovarianceM2?.[i]?.[j] ?? 0)),
-  );
 }
 
 function horizontalM({east, north}: PerAxis<number | null>): number | null {
@@ -125,14 +110,6 @@ function probabilityWithin(
 }
 
 const AXIS = {east: 0, north: 1, up: 2} as const;
-
-export function planeOf(covarianceM2: CovarianceM2) {
-  return {
-    eastEast: covarianceM2[0]![0]!,
-    eastNorth: covarianceM2[0]![1]!,
-    northNorth: covarianceM2[1]![1]!,
-  };
-}
 
 function normalisedErrors(
   offsetM: PerAxis<number | null>,

@@ -2,7 +2,7 @@ import {parseGrid} from '../geodesy/grid-definition.ts';
 import {type Projection, projectionOf} from '../geodesy/projection.ts';
 import {decimalYear} from '../time/gps-time.ts';
 import type {AntennaReduction} from './antenna.ts';
-import {type CovarianceM2, totalCovariance} from './compare.ts';
+import {type CovarianceM2, covarianceSum} from './covariance.ts';
 import {type Diagnosis, diagnose} from './diagnosis/diagnose.ts';
 import {antennaFacts, nearbyMarks, offsetPointFacts, separationFacts} from './diagnosis/facts.ts';
 import type {DiagnosisInput} from './diagnosis/input.ts';
@@ -74,10 +74,7 @@ function inputOf(compared: ComparedRecord): DiagnosisInput {
   const observed = (session.fromGpsSeconds + session.toGpsSeconds) / 2;
   return {
     offsetM: comparison.offsetM,
-    covarianceM2: totalCovariance({
-      covarianceM2: compared.covarianceM2,
-      markCovarianceM2: place.covarianceM2,
-    }),
+    covarianceM2: covarianceSum(compared.covarianceM2, place.covarianceM2),
     asked: request.asked,
     ellipsoid,
     markPlan: place.plan,

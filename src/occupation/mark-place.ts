@@ -3,7 +3,7 @@ import {covarianceEnuFromEcef} from '../geodesy/covariance.ts';
 import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
 import {geodeticFromEcef} from '../geodesy/geocentric.ts';
 import {type LocalFrame, localFrame} from '../geodesy/local.ts';
-import type {CovarianceM2} from './compare.ts';
+import type {CovarianceM2} from './covariance.ts';
 import {planOfGrid} from './grid-position.ts';
 
 /** A known mark as the comparison needs it: plan, heights and covariance, each only if known. */

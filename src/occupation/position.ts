@@ -3,7 +3,7 @@ import {ecefFromEnu, geodeticFromEnu} from '../geodesy/local.ts';
 import {r95} from '../statistics/accuracy-measures.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {budgetVariancesM2} from './budget.ts';
-import {type CovarianceM2, planeOf} from './compare.ts';
+import {type CovarianceM2, planeOf, withVariances} from './covariance.ts';
 import {gridPosition} from './grid-position.ts';
 import type {LocalColumns} from './local-columns.ts';
 import type {BudgetRow, PerAxis, Position, Separation} from './result.ts';
@@ -87,17 +87,10 @@ function orthometricHeightM(
   return separation === null ? null : heightM - separation.separationM;
 }
 
-function covarianceOf(session: Session, budget: readonly BudgetRow[]): CovarianceM2 | null {
-  const own = session.standardUncertaintyM;
-  if (own === null || own.east === null || own.north === null) return null;
-  const others = budgetVariancesM2(budget);
-  const eastNorth = session.eastNorthCorrelation * own.east * own.north;
-  return [
-    [own.east ** 2 + others.east, eastNorth, 0],
-    [eastNorth, own.north ** 2 + others.north, 0],
-    // NaN for a height that is not known; null in the result.
-    [0, 0, own.up === null ? Number.NaN : own.up ** 2 + others.up],
-  ];
+function covarianceOf({covarianceM2}: Session, budget: readonly BudgetRow[]): CovarianceM2 | null {
+  if (covarianceM2 === null) return null;
+  const {east, north, up} = budgetVariancesM2(budget);
+  return withVariances(covarianceM2, [east, north, up]);
 }
 
 function uncertaintyOf(

@@ -1,9 +1,17 @@
 import {leapSecondsKnownAt} from '../time/gps-time.ts';
 import {LEAP_SECONDS_SOURCE} from '../time/leap-seconds.ts';
-import {couldPass} from './compare.ts';
 import type {NoticeList} from './notices.ts';
+import type {OutOfReach} from './reach.ts';
 import type {ReduceRequest} from './request.ts';
-import type {BudgetRow, PerAxis, Result, Step} from './result.ts';
+import type {
+  BudgetRow,
+  Comparison,
+  Decision,
+  PerAxis,
+  Requirement,
+  Result,
+  Step,
+} from './result.ts';
 import type {ScreenOutcome} from './screen.ts';
 import type {Session} from './session.ts';
 
@@ -214,7 +222,8 @@ export function noticeSession(sessions: readonly Session[], notices: NoticeList)
 
 export function noticeComparison(
   {comparison, segments, reference, command}: Result,
-  request: ReduceRequest,
+  {asked: allAsked}: ReduceRequest,
+  outOfReach: readonly OutOfReach[],
   notices: NoticeList,
 ): void {
   if (command !== 'check') return;
@@ -233,20 +242,50 @@ export function noticeComparison(
       mark: comparison.mark,
     });
   }
-  if (request.asked.length === 0)
-    notices.add('caution', 'no-tolerance', ['comparison.requirements']);
-  const covarianceM2 = segments[0]?.position.covarianceEnuM2;
-  if (!covarianceM2) return;
-  const finite = covarianceM2.map((row) => row.map((value) => value ?? Number.NaN));
-  for (const asked of request.asked) {
-    if (asked.of === 'up' && comparison.offsetM.up === null) continue;
-    if (!couldPass(asked, finite)) {
-      notices.add('caution', 'tolerance-out-of-reach', ['comparison.requirements'], {
-        of: asked.of,
-        toleranceM: asked.toleranceM,
-      });
-    }
+  if (allAsked.length === 0) notices.add('caution', 'no-tolerance', ['comparison.requirements']);
+  for (const {asked, needed} of outOfReach) {
+    const told = typeof needed === 'object';
+    notices.add('caution', 'tolerance-out-of-reach', ['comparison.requirements'], {
+      of: asked.of,
+      toleranceM: asked.toleranceM,
+      record: told ? 'longer' : needed,
+      aboutS: told ? needed.aboutS : null,
+      allowS: told ? needed.allowS : null,
+    });
   }
+  noticeAgreement(comparison, notices);
+}
+
+/** What the decision and the agreement say together: one of six sentences, or why only one says. */
+function noticeAgreement(
+  {requirements, agreement, normalisedError}: Comparison,
+  notices: NoticeList,
+): void {
+  if (requirements.length === 0) return;
+  const decision = decisionOfAll(requirements);
+  const beyond = [
+    (normalisedError.horizontal ?? 0) > 1 ? 'in plan' : '',
+    (normalisedError.up ?? 0) > 1 ? 'in height' : '',
+  ].filter((where) => where !== '');
+  const settled = decision === 'accept' && agreement !== 'disagrees';
+  notices.add(
+    settled ? 'note' : 'caution',
+    `${DECISION_CODES[decision]}-${agreement === 'not tested' ? 'untested' : agreement}`,
+    ['comparison.agreement'],
+    {where: beyond.join(' and ')},
+  );
+}
+
+const DECISION_CODES: Readonly<Record<Decision, string>> = {
+  accept: 'accept',
+  reject: 'reject',
+  'cannot tell': 'cannot-tell',
+};
+
+function decisionOfAll(requirements: readonly Requirement[]): Decision {
+  const all = requirements.map(({decision}) => decision);
+  if (all.includes('reject')) return 'reject';
+  return all.every((decision) => decision === 'accept') ? 'accept' : 'cannot tell';
 }
 
 /** How long it would take to reach the radius that the user wishes, or the tolerance asks for. */

@@ -1,7 +1,12 @@
 import {median as medianOf} from '../statistics/quantile.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {epochAccount} from './account.ts';
-import {comparisonOf, heightsAboveGeoid, measuredForMark} from './against-mark.ts';
+import {
+  comparisonOf,
+  heightsAboveGeoid,
+  measuredForMark,
+  tolerancesOutOfReach,
+} from './against-mark.ts';
 import {type AntennaReduction, reduceAntenna} from './antenna.ts';
 import {besideStep} from './beside-step.ts';
 import {budgetRows, comparisonRows} from './budget.ts';
@@ -136,10 +141,11 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   const {measured, changed} = measuredForMark(mean, request);
   const reference = referenceOf(measured, place, request.at, request.ellipsoid);
   const offsetM = offsetFrom(targetOf(reference, place), measured, request.ellipsoid);
-  const comparison =
+  const compared =
     place === null || single === null
       ? null
-      : comparisonOf({...record, columns, session: whole, place, measured, changed});
+      : {...record, columns, session: whole, place, measured, changed};
+  const comparison = compared === null ? null : comparisonOf(compared);
   const result: Result = {
     ...common({...record, account: accountOf(request, outcome)}),
     reference,
@@ -172,7 +178,8 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   noticeBudget(result, notices);
   noticeReceiver(result, typicalStepM(columns, whole), notices);
   noticeStability(result, notices);
-  noticeComparison(result, request, notices);
+  const unreachable = compared === null ? [] : tolerancesOutOfReach(compared);
+  noticeComparison(result, request, unreachable, notices);
   noticeTime(single === null ? null : whole, request, notices);
   return {
     result: finished(result, notices),

@@ -6,6 +6,7 @@ import {
   type SessionAnalysis,
   type TakenOut,
 } from '../statistics/analyse-session.ts';
+import {type CovarianceM2, planeOf} from './covariance.ts';
 import {type LocalColumns, taken} from './local-columns.ts';
 import type {PerAxis} from './result.ts';
 
@@ -34,8 +35,6 @@ export interface Session {
   readonly standardUncertaintyM: PerAxis<number | null> | null;
   /** 95 % half-widths of the means had some of the steps, or the drift, not happened. */
   readonly halfWidths95Without: (movement: TakenOut) => PerAxis<number | null>;
-  /** Correlation of the errors of the east and north means. */
-  readonly eastNorthCorrelation: number;
   /** What the digits of the log can hide after averaging; null where they are fine. */
   readonly quantisationM: PerAxis<number | null> | null;
   readonly independentLooks: PerAxis<number | null> | null;
@@ -53,8 +52,20 @@ export interface Session {
   /** 95 % half-widths of the mean after a part of the record; null: cannot be told. */
   readonly halfWidths95After: (elapsedS: number) => PerAxis<number | null>;
   /** Time for a 95 % horizontal radius of the session's own; null when it cannot be told. */
-  readonly timeForRadius: (radiusM: number) => {aboutS: number; allowS: number} | null;
+  readonly timeForRadius: (radiusM: number) => TimeNeeded | null;
+  /** Time for a part of the standard uncertainty of some axes; null when it cannot be told. */
+  readonly timeForPart: (part: number, axes: readonly Axis[]) => TimeNeeded | null;
+  /** Covariance of the mean by scatter and correlation alone; null: cannot be told. */
+  readonly covarianceM2: CovarianceM2 | null;
 }
+
+/** How long a record would have to be: as likely as not, and in four cases of five. */
+export interface TimeNeeded {
+  readonly aboutS: number;
+  readonly allowS: number;
+}
+
+export type Axis = keyof PerAxis;
 
 const AXES = ['east', 'north', 'up'] as const;
 /** Half-width of 95 % of a normal distribution in standard deviations. */
@@ -89,7 +100,6 @@ export function sessionOf(
       const [east, north, up] = analysis.halfWidthsWithout(movement);
       return {east: east ?? null, north: north ?? null, up: up ?? null};
     },
-    eastNorthCorrelation: analysis.planCorrelation,
     quantisationM: quantisation(components),
     independentLooks: told ? perAxis(components, (one) => one.independentLooks) : null,
     correlationTimeS: told ? perAxis(components, (one) => one.correlationTimeS) : null,
@@ -110,6 +120,8 @@ export function sessionOf(
       return {east: after(0), north: after(1), up: after(2)};
     },
     timeForRadius: (radiusM) => timeForRadius(analysis, radiusM),
+    timeForPart: (part, wanted) => timeForPart(analysis, part, wanted),
+    covarianceM2: told ? covarianceOf(analysis) : null,
   };
 }
 
@@ -152,23 +164,38 @@ function foundDrift({drift}: ComponentAnalysis): FoundDrift | undefined {
   };
 }
 
+/** East, north and up; NaN for a height that is not known. */
+function covarianceOf({components, planCorrelation}: SessionAnalysis): CovarianceM2 | null {
+  const [east, north, up] = components.map(sigma);
+  if (east === undefined || north === undefined) return null;
+  const eastNorth = planCorrelation * east * north;
+  return [
+    [east ** 2, eastNorth, 0],
+    [eastNorth, north ** 2, 0],
+    [0, 0, up === undefined ? Number.NaN : up ** 2],
+  ];
+}
+
 /** Both plan axes shrink alike, so the radius asks the same part of each. */
-function timeForRadius(
+function timeForRadius(analysis: SessionAnalysis, radiusM: number): TimeNeeded | null {
+  const covarianceM2 = covarianceOf(analysis);
+  if (covarianceM2 === null) return null;
+  return timeForPart(analysis, radiusM / r95(planeOf(covarianceM2)), ['east', 'north']);
+}
+
+/** The slowest of the axes decides. */
+function timeForPart(
   analysis: SessionAnalysis,
-  radiusM: number,
-): {aboutS: number; allowS: number} | null {
-  const [east, north] = analysis.components;
-  if (east?.halfWidth95 === undefined || north?.halfWidth95 === undefined) return null;
-  const [sigmaEast, sigmaNorth] = [east.halfWidth95 / NORMAL_95, north.halfWidth95 / NORMAL_95];
-  const now = r95({
-    eastEast: sigmaEast ** 2,
-    northNorth: sigmaNorth ** 2,
-    eastNorth: analysis.planCorrelation * sigmaEast * sigmaNorth,
+  part: number,
+  axes: readonly Axis[],
+): TimeNeeded | null {
+  const times = axes.map((axis) => {
+    const component = AXES.indexOf(axis);
+    const halfWidth95 = analysis.components[component]?.halfWidth95;
+    return halfWidth95 === undefined
+      ? undefined
+      : analysis.requiredTime(component, part * halfWidth95);
   });
-  const part = radiusM / now;
-  const times = [east, north].map(({halfWidth95}, component) =>
-    analysis.requiredTime(component, part * halfWidth95!),
-  );
   const known = times.filter((time) => time !== undefined);
   if (known.length < times.length) return null;
   return {

@@ -1,3 +1,4 @@
+import {AGREEMENT_SENTENCES} from './agreement.ts';
 import {ANTENNA_SENTENCES} from './antenna-notices.ts';
 import {LOG_SENTENCES} from './log-notices.ts';
 import {
@@ -83,7 +84,7 @@ export const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
   'no-tolerance': () =>
     'No tolerance was given, so there is nothing to decide: give --tolerance with its reason.',
   'tolerance-out-of-reach': (v) =>
-    `No offset, not even zero, could be accepted against ${formatGivenLength(numberIn(v, 'toleranceM'))} (${textIn(v, 'of')}) with the uncertainty of this record.`,
+    `No offset, not even zero, could be accepted against ${formatGivenLength(numberIn(v, 'toleranceM'))} (${textIn(v, 'of')}) with the uncertainty of this record${reachWords(v)}`,
   'time-needed': (v) =>
     `A 95 % horizontal radius of ${formatGivenLength(numberIn(v, 'wantM'))} would take a record of about ${formatDuration(numberIn(v, 'aboutS'))}; allow ${formatDuration(numberIn(v, 'allowS'))}. Base, antenna and mark add to it.`,
   'time-not-known': (v) =>
@@ -126,6 +127,7 @@ const SENTENCES: ReadonlyMap<string, Sentence> = new Map(
   Object.entries({
     ...LOG_SENTENCES,
     ...ANTENNA_SENTENCES,
+    ...AGREEMENT_SENTENCES,
     ...RECORD_SENTENCES,
     ...MISSING_SENTENCES,
   }),
@@ -136,6 +138,17 @@ export function noticeText(code: string, values: NoticeValues): string {
   const sentence = SENTENCES.get(code);
   if (sentence === undefined) throw new Error(`noticeText: no sentence for the code ${code}`);
   return sentence(values);
+}
+
+function reachWords(values: NoticeValues): string {
+  switch (textIn(values, 'record')) {
+    case 'longer':
+      return `: a record of about ${formatDuration(numberIn(values, 'aboutS'))} would be needed; allow ${formatDuration(numberIn(values, 'allowS'))}.`;
+    case 'never':
+      return ': what no record can see (base, antenna, frame, mark) is too much by itself, however long one logs. Look for the largest row of the budget.';
+    default:
+      return '; how long a record would have to be cannot be told from this one.';
+  }
 }
 
 function degreesIn(values: NoticeValues, name: string): string {

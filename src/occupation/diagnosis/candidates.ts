@@ -1,5 +1,5 @@
 import type {Enu, Matrix3} from '../../geodesy/types.ts';
-import type {CovarianceM2} from '../compare.ts';
+import type {CovarianceM2} from '../covariance.ts';
 import type {PerAxis} from '../result.ts';
 import type {CauseValues, Prediction} from './hypothesis.ts';
 import {type Axes, difference, misfit} from './misfit.ts';

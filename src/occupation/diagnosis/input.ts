@@ -2,7 +2,8 @@ import type {Ellipsoid} from '../../geodesy/ellipsoid.ts';
 import type {FrameAndEpoch} from '../../geodesy/frames.ts';
 import type {PointMotion} from '../../geodesy/point-motion.ts';
 import type {Projection} from '../../geodesy/projection.ts';
-import type {Asked, CovarianceM2} from '../compare.ts';
+import type {Asked} from '../compare.ts';
+import type {CovarianceM2} from '../covariance.ts';
 import type {PerAxis} from '../result.ts';
 
 /**

@@ -1,5 +1,5 @@
 import type {Enu, Matrix3} from '../../geodesy/types.ts';
-import type {CovarianceM2} from '../compare.ts';
+import type {CovarianceM2} from '../covariance.ts';
 import type {DiagnosisInput} from './input.ts';
 
 /** Axes of east, north, up as 0, 1, 2. */

@@ -120,7 +120,8 @@ function agreementCheck({result}: ReportContext): CheckDraft {
   const name = 'Agreement with the mark within both uncertainties';
   const {comparison} = result;
   if (comparison === null) return {name, tone: 'not tested', note: 'nothing was compared'};
-  const error = comparison.normalisedError.horizontal ?? comparison.normalisedError.up;
+  const {horizontal, up} = comparison.normalisedError;
+  const error = horizontal === null && up === null ? null : Math.max(horizontal ?? 0, up ?? 0);
   if (comparison.agreement === 'not tested' || error === null) {
     return {name, tone: 'not tested', note: 'the mark or the position has no stated uncertainty'};
   }
