@@ -28,8 +28,14 @@ const HEIGHTS: Readonly<Record<string, CauseWords>> = {
       'Measure the height again at three places of the plate and once vertically, and book which is which.',
   },
   V03: {
-    title: (v) => `the antenna height of ${m(v, 'heightM')} (${by(v)}) not taken off`,
-    advice: () => `Find out which point the log is of. ${MEASURE_HEIGHT}`,
+    title: (v) =>
+      v.by === 'nobody'
+        ? `an antenna height of ${m(v, 'heightM')} not taken off: none was given`
+        : `the antenna height of ${m(v, 'heightM')} (${by(v)}) not taken off`,
+    advice: (v) =>
+      v.by === 'nobody'
+        ? 'State in a field sheet which point the log is of, and the antenna readings from the booking; compare the height with this one.'
+        : `Find out which point the log is of. ${MEASURE_HEIGHT}`,
   },
   V04: {
     title: (v) => `the antenna height of ${m(v, 'heightM')} (${by(v)}) taken off twice`,

@@ -47,16 +47,16 @@ const CLEARLY_BETTER = 6.6349;
  */
 const TOLD_APART = (2 * 1.959964) ** 2;
 
-/** The survivors in order: predicted from inputs alone before fitted ones, each by misfit. */
+/**
+ * The survivors in order: predicted from inputs alone before fitted ones, those fitted by fewer
+ * numbers first, each by misfit.
+ */
 export function ranked(check: Check, tested: readonly Tested[]): DiagnosedCandidate[] {
   const survivors = tested
     .map((one) => ({...one, misfit: misfitOf(check, one)}))
     .filter((one) => survives(check, one))
     .sort(
-      (a, b) =>
-        Number(a.prediction.freeParameters > 0) - Number(b.prediction.freeParameters > 0) ||
-        a.misfit - b.misfit ||
-        a.prediction.freeParameters - b.prediction.freeParameters,
+      (a, b) => a.prediction.freeParameters - b.prediction.freeParameters || a.misfit - b.misfit,
     );
   const groups = groupsOf(check, survivors);
   return survivors

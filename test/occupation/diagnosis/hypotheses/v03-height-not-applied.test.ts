@@ -9,6 +9,7 @@ import {
   predictionsOf,
   reasonOf,
   signature,
+  withOffset,
 } from '../check-input.ts';
 
 /** Half of the last digit printed. */
@@ -20,8 +21,21 @@ test('reference: worked example V03', () => {
   expect(nearestM(found, offsetOf(example))).toBeLessThan(PRINTED_M);
 });
 
-test('needs an antenna height', () => {
-  expect(reasonOf(heightNotApplied, bareInput())).toBe('no-antenna-height');
+test('a height that nobody gave is fitted to an offset that could be one', () => {
+  const raised = withOffset(bareInput(), {eastM: 0, northM: 0, upM: 1.74});
+  const [found] = predictionsOf(heightNotApplied, raised);
+  expect(found).toMatchObject({freeParameters: 1, values: {heightM: 1.74, by: 'nobody'}});
+});
+
+test.each([-1.74, 0.05, 4.2])('no antenna stands %d m above its mark', (upM) => {
+  const input = withOffset(bareInput(), {eastM: 0, northM: 0, upM});
+  expect(reasonOf(heightNotApplied, input)).toBe('no-antenna-height');
+});
+
+test('nothing is fitted where the receiver took the height off', () => {
+  const antenna = {...NO_ANTENNA, takenOffBy: 'receiver' as const};
+  const input = withOffset(bareInput({antenna}), {eastM: 0, northM: 0, upM: 1.74});
+  expect(reasonOf(heightNotApplied, input)).toBe('no-antenna-height');
 });
 
 test('property: sheet and receiver heights that differ are tested apart', () => {
