@@ -181,6 +181,13 @@ export function checkOptions<T>(args: Argv<T>) {
   return args.options({
     marks: {type: 'string', group: REFERENCE, describe: 'marks file (YAML, CSV or SINEX)'},
     mark: {type: 'string', group: REFERENCE, describe: 'name of the mark that was occupied'},
+    with: {
+      type: 'string',
+      array: true,
+      nargs: 1,
+      group: REFERENCE,
+      describe: 'results of other checks of the day, to be set beside this one',
+    },
     motion: {
       type: 'string',
       group: REFERENCE,
@@ -251,6 +258,7 @@ export interface CommandArguments {
   readonly geoid?: string | undefined;
   readonly geoidInterpolation?: 'bilinear' | 'biquadratic' | undefined;
   readonly separation?: string | undefined;
+  readonly with?: readonly string[] | undefined;
   readonly motion?: string | undefined;
   readonly fix?: string | undefined;
   readonly minSatellites?: number | undefined;

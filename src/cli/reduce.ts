@@ -14,6 +14,7 @@ import type {CivilDate} from '../time/calendar.ts';
 import {utcFromGpsSeconds} from '../time/gps-time.ts';
 import {causeAdvice, causeTitle, pairTitle} from '../wording/diagnosis.ts';
 import {noticeText} from '../wording/notices.ts';
+import {readEarlierChecks} from './earlier-results.ts';
 import {readWhole, requireInputs, requireOutputs, writeOutputs} from './files.ts';
 import {geoidRequest} from './geoid.ts';
 import type {CommandArguments} from './options.ts';
@@ -45,9 +46,13 @@ import {VERSION} from './version.ts';
 /** `stillmark reduce` and `stillmark check`; returns the exit status. */
 export async function reduce(typed: CommandArguments, command: Result['command']): Promise<number> {
   requireSingle({...typed});
-  const companions = [typed.sheet, typed.marks, typed.logo, typed.geoid].filter(
-    (path) => path !== undefined,
-  );
+  const companions = [
+    typed.sheet,
+    typed.marks,
+    typed.logo,
+    typed.geoid,
+    ...(typed.with ?? []),
+  ].filter((path) => path !== undefined);
   requireInputs(companions);
   requireOutputs(outputPaths(typed), [...typed.log, ...companions]);
   const sheet = typed.sheet === undefined ? emptySheet() : await sheetOf(typed.sheet);
@@ -153,6 +158,7 @@ async function requestOf(
     at,
     mark,
     marks,
+    earlier: await readEarlierChecks(options.with ?? []),
     markName: options.mark ?? null,
     sheet,
     asked,

@@ -167,6 +167,10 @@ export function rememberOthers(inForce: InForce, settings: Settings): void {
   ] as const) {
     remember(settings, inForce, name);
   }
+  const beside = inForce.options.with;
+  settings.with = beside
+    ? {value: beside.join(', '), from: 'command line'}
+    : {value: null, from: 'default'};
   remember(settings, inForce, 'ellipsoid', 'WGS84');
   remember(settings, inForce, 'acceptNoChecksum', false);
 }

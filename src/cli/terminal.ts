@@ -94,6 +94,10 @@ function numberTable(result: Result): string[] {
     const {offsetM, azimuthDeg} = result.comparison;
     const toward = azimuthDeg === null ? '' : `toward ${formatAzimuth(azimuthDeg)}`;
     rows.push(['offset', offsetM, offsetM.horizontal, toward]);
+    for (const {differenceM, startUtc, agreement} of result.comparison.otherSetups) {
+      const when = startUtc === null ? 'other setup' : `minus ${startUtc.slice(11, 16)} UTC`;
+      rows.push([when, differenceM, differenceM.horizontal, agreement]);
+    }
   }
   if (position?.uncertainty95M) {
     rows.push([
@@ -116,7 +120,7 @@ function numberTable(result: Result): string[] {
 function numberRow([name, axes, horizontal, note]: Row): string {
   const values = [axes.east, axes.north, axes.up, horizontal];
   const {unit, perM, decimals} = rowScale(values.filter((value) => value !== null));
-  const signed = name === 'offset';
+  const signed = name === 'offset' || name.startsWith('minus') || name === 'other setup';
   const cells = values.map((valueM, i) => {
     if (valueM === null) return '-'.padStart(11);
     const text = fixed(valueM * perM, decimals);

@@ -143,12 +143,12 @@ export function ellipsoidOption(text: string | undefined): Ellipsoid {
 }
 
 /** What the parser hands over as lists by design. */
-const POSITIONAL = new Set(['log', '_']);
+const REPEATABLE = new Set(['log', '_', 'with']);
 
 /** An option that was given twice reaches us as a list; saying it twice is a mistake to name. */
 export function requireSingle(options: Readonly<Record<string, unknown>>): void {
   for (const [name, value] of Object.entries(options)) {
-    if (!POSITIONAL.has(name) && Array.isArray(value)) {
+    if (!REPEATABLE.has(name) && Array.isArray(value)) {
       throw new UsageError(`--${name} is given ${value.length} times; give it once`);
     }
   }

@@ -223,6 +223,25 @@ const COMPARISON = object({
   agreement: oneOf('agrees', 'disagrees', 'not tested'),
   assumptions: listOf(TEXT),
   frameChange: orNull(FRAME_CHANGE),
+  otherSetups: listOf(
+    object({
+      name: TEXT,
+      setUpId: orNull(TEXT),
+      startUtc: orNull(UTC),
+      endUtc: orNull(UTC),
+      hoursEarlier: NUMBER,
+      differenceM: object({...PER_AXIS_OR_NULL.properties, horizontal: orNull(LENGTH_M)}),
+      uncertainty95M: orNull(
+        object({...PER_AXIS_OR_NULL.properties, horizontalRadius: orNull(LENGTH_M)}),
+      ),
+      normalisedError: object({
+        ...perAxis(orNull(NUMBER)).properties,
+        horizontal: orNull(NUMBER),
+      }),
+      agreement: oneOf('agrees', 'disagrees', 'not tested'),
+      cancels: listOf(TEXT),
+    }),
+  ),
   candidates: listOf(
     object({
       code: TEXT,

@@ -5,10 +5,11 @@ import {withDiagnosis} from './diagnosis-of-check.ts';
 import {type Changed, inFrameOfMark} from './frame-change.ts';
 import type {LocalColumns} from './local-columns.ts';
 import type {MarkPlace} from './mark-place.ts';
+import {otherSetups, withOtherCoordinates} from './other-setups.ts';
 import {type OutOfReach, outOfReach} from './reach.ts';
 import {heightSystemOf, offsetFrom} from './reference.ts';
 import type {ReduceRequest} from './request.ts';
-import type {Comparison, EpochAccount, Position} from './result.ts';
+import type {BudgetRow, Comparison, EpochAccount, Position} from './result.ts';
 import type {Session} from './session.ts';
 import {statedOfGeoid} from './stated-contributions.ts';
 
@@ -54,6 +55,8 @@ export interface Compared {
   /** In the frame of the mark where both frames are known. */
   readonly measured: Position;
   readonly changed: Changed | undefined;
+  /** Every row that enters the comparison. */
+  readonly budget: readonly BudgetRow[];
 }
 
 /** The offset from the mark, what it means, and what it is consistent with. */
@@ -70,7 +73,9 @@ export function comparisonOf(compared: Compared): Comparison {
     assumptions: changed === undefined ? ['same frame and epoch as the mark'] : [],
     frameChange: changed?.change ?? null,
   });
-  if (covarianceM2 === null || antenna === undefined) return comparison;
+  const inHand = {request, place, position: measured, comparison, budget: compared.budget};
+  const besideOthers = {...comparison, otherSetups: otherSetups(inHand)};
+  if (covarianceM2 === null || antenna === undefined) return besideOthers;
   return withDiagnosis({
     request,
     account,
@@ -79,8 +84,9 @@ export function comparisonOf(compared: Compared): Comparison {
     session,
     place,
     measured,
-    comparison,
+    comparison: besideOthers,
     covarianceM2,
+    budget: compared.budget,
   });
 }
 
@@ -95,6 +101,11 @@ export function tolerancesOutOfReach(compared: Compared): OutOfReach[] {
     sessionM2: session.covarianceM2,
     totalM2: covarianceSum(covarianceM2, place.covarianceM2),
   });
+}
+
+/** Names of earlier results of this mark that compare with other coordinates of it. */
+export function setupsWithOtherCoordinates({request, place}: Compared): string[] {
+  return withOtherCoordinates(request.earlier, place);
 }
 
 /** Covariance of the measured position with what the comparison adds to it. */

@@ -45,6 +45,7 @@ export function compareWithMark(input: ComparisonInput): Comparison {
     agreement: agreement(normalisedError, input.markCovarianceM2),
     assumptions,
     frameChange: input.frameChange,
+    otherSetups: [],
     candidates: [],
     diagnosis: null,
   };
@@ -111,7 +112,8 @@ function probabilityWithin(
 
 const AXIS = {east: 0, north: 1, up: 2} as const;
 
-function normalisedErrors(
+/** Each axis and the plan in terms of its own 95 % uncertainty; null where that is not known. */
+export function normalisedErrors(
   offsetM: PerAxis<number | null>,
   covarianceM2: CovarianceM2 | null,
 ): Comparison['normalisedError'] {

@@ -8,9 +8,17 @@ import {antennaFacts, nearbyMarks, offsetPointFacts, separationFacts} from './di
 import type {DiagnosisInput} from './diagnosis/input.ts';
 import type {LocalColumns} from './local-columns.ts';
 import type {MarkPlace} from './mark-place.ts';
+import {otherMarkChecks, sameMarkChecks} from './other-setups.ts';
 import {eccentricityOf} from './reduce-to-mark.ts';
 import type {ReduceRequest} from './request.ts';
-import type {Candidate, Comparison, DiagnosisFound, EpochAccount, Position} from './result.ts';
+import type {
+  BudgetRow,
+  Candidate,
+  Comparison,
+  DiagnosisFound,
+  EpochAccount,
+  Position,
+} from './result.ts';
 import {meanSeparationM, undulationAt} from './separation.ts';
 import type {Session} from './session.ts';
 
@@ -26,6 +34,7 @@ export interface ComparedRecord {
   readonly comparison: Comparison;
   /** Of the measured position with the transformation, if there was one. */
   readonly covarianceM2: CovarianceM2;
+  readonly budget: readonly BudgetRow[];
 }
 
 /** Adds to a comparison which everyday mistakes would leave just this offset. */
@@ -71,6 +80,7 @@ function inputOf(compared: ComparedRecord): DiagnosisInput {
       ? null
       : projection.factors(place.plan).convergenceDeg;
   const declinationDeg = sheet.eccentricity?.declinationDeg ?? null;
+  const inHand = {request, place, position: measured, comparison, budget: compared.budget};
   const observed = (session.fromGpsSeconds + session.toGpsSeconds) / 2;
   return {
     offsetM: comparison.offsetM,
@@ -102,8 +112,8 @@ function inputOf(compared: ComparedRecord): DiagnosisInput {
       mark === null
         ? []
         : nearbyMarks(mark, request.marks, {ellipsoid, convergenceDeg, declinationDeg}),
-    otherMarkChecks: [],
-    sameMarkChecks: [],
+    otherMarkChecks: otherMarkChecks(inHand),
+    sameMarkChecks: sameMarkChecks(inHand),
   };
 }
 

@@ -224,6 +224,7 @@ export function noticeComparison(
   {comparison, segments, reference, command}: Result,
   {asked: allAsked}: ReduceRequest,
   outOfReach: readonly OutOfReach[],
+  coordinatesDiffer: readonly string[],
   notices: NoticeList,
 ): void {
   if (command !== 'check') return;
@@ -254,6 +255,10 @@ export function noticeComparison(
     });
   }
   noticeAgreement(comparison, notices);
+  noticeOtherSetups(comparison, notices);
+  for (const name of coordinatesDiffer) {
+    notices.add('caution', 'setup-with-other-coordinates', [], {name, mark: comparison.mark});
+  }
 }
 
 /** What the decision and the agreement say together: one of six sentences, or why only one says. */
@@ -281,6 +286,29 @@ const DECISION_CODES: Readonly<Record<Decision, string>> = {
   reject: 'reject',
   'cannot tell': 'cannot-tell',
 };
+
+/** Whether other occupations of the mark, when they were named, say the same. */
+function noticeOtherSetups({otherSetups}: Comparison, notices: NoticeList): void {
+  otherSetups.forEach(({agreement, differenceM, hoursEarlier, name}, i) => {
+    const severity = agreement === 'agrees' ? 'note' : 'concern';
+    const code = {
+      agrees: 'setups-agree',
+      disagrees: 'setups-disagree',
+      'not tested': 'setups-not-tested',
+    }[agreement];
+    notices.add(
+      agreement === 'not tested' ? 'caution' : severity,
+      code,
+      [`comparison.otherSetups[${i}]`],
+      {
+        name,
+        horizontalM: differenceM.horizontal,
+        upM: differenceM.up,
+        hoursEarlier,
+      },
+    );
+  });
+}
 
 function decisionOfAll(requirements: readonly Requirement[]): Decision {
   const all = requirements.map(({decision}) => decision);

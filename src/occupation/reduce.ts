@@ -5,6 +5,7 @@ import {
   comparisonOf,
   heightsAboveGeoid,
   measuredForMark,
+  setupsWithOtherCoordinates,
   tolerancesOutOfReach,
 } from './against-mark.ts';
 import {type AntennaReduction, reduceAntenna} from './antenna.ts';
@@ -141,25 +142,26 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   const {measured, changed} = measuredForMark(mean, request);
   const reference = referenceOf(measured, place, request.at, request.ellipsoid);
   const offsetM = offsetFrom(targetOf(reference, place), measured, request.ellipsoid);
+  const budget = [
+    ...budgetOf(whole, record, outcome, columns),
+    ...comparisonRows({
+      mark: place,
+      transformation: changed?.contribution ?? null,
+      heightsAboveGeoid: heightsAboveGeoid(place, measured),
+      geoid: statedOfGeoid(request.sheet),
+    }),
+  ];
   const compared =
     place === null || single === null
       ? null
-      : {...record, columns, session: whole, place, measured, changed};
+      : {...record, columns, session: whole, place, measured, changed, budget};
   const comparison = compared === null ? null : comparisonOf(compared);
   const result: Result = {
     ...common({...record, account: accountOf(request, outcome)}),
     reference,
     position: single?.position ?? null,
     segments,
-    budget: [
-      ...budgetOf(whole, record, outcome, columns),
-      ...comparisonRows({
-        mark: place,
-        transformation: changed?.contribution ?? null,
-        heightsAboveGeoid: heightsAboveGeoid(place, measured),
-        geoid: statedOfGeoid(request.sheet),
-      }),
-    ],
+    budget,
     scatter: {
       aboutMean: scatterAbout(usedPositions(columns, whole), whole.meanM),
       aboutReference: scatterAbout(usedPositions(columns, whole), centreOf(whole.meanM, offsetM)),
@@ -179,7 +181,8 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   noticeReceiver(result, typicalStepM(columns, whole), notices);
   noticeStability(result, notices);
   const unreachable = compared === null ? [] : tolerancesOutOfReach(compared);
-  noticeComparison(result, request, unreachable, notices);
+  const otherCoordinates = compared === null ? [] : setupsWithOtherCoordinates(compared);
+  noticeComparison(result, request, unreachable, otherCoordinates, notices);
   noticeTime(single === null ? null : whole, request, notices);
   return {
     result: finished(result, notices),

@@ -7,6 +7,7 @@ import type {Geodetic} from '../geodesy/types.ts';
 import type {Asked} from './compare.ts';
 import type {CauseValues} from './diagnosis/hypothesis.ts';
 import type {Say} from './notices.ts';
+import type {EarlierCheck} from './other-setups.ts';
 import type {InputAccount, Position, Result, Setting, Severity} from './result.ts';
 import type {ScreenRules} from './screen.ts';
 import type {GeoidRequest} from './separation.ts';
@@ -60,6 +61,8 @@ export interface ReduceRequest {
   /** Wished 95 % horizontal radius. */
   readonly wantM: number | null;
   readonly settings: Readonly<Record<string, Setting>>;
+  /** Results of other checks that this one is set beside. */
+  readonly earlier: readonly EarlierCheck[];
   /** All marks of the marks file: one of them may have been occupied by mistake. */
   readonly marks: readonly Mark[];
   readonly say: Say;

@@ -307,6 +307,26 @@ export interface DiagnosisFound {
   readonly notTested: readonly {readonly code: string; readonly because: string}[];
 }
 
+/** Another occupation of the same mark: this one minus that one. */
+export interface OtherSetup {
+  /** File name of its result. */
+  readonly name: string;
+  readonly setUpId: string | null;
+  readonly startUtc: string | null;
+  readonly endUtc: string | null;
+  /** From the middle of that record to the middle of this one. */
+  readonly hoursEarlier: number;
+  readonly differenceM: PerAxis<number | null> & {readonly horizontal: number | null};
+  /** Of the difference, without what both share. */
+  readonly uncertainty95M:
+    | (PerAxis<number | null> & {readonly horizontalRadius: number | null})
+    | null;
+  readonly normalisedError: PerAxis<number | null> & {readonly horizontal: number | null};
+  readonly agreement: 'agrees' | 'disagrees' | 'not tested';
+  /** Rows of the budget that both share, so that they fall out of the difference. */
+  readonly cancels: readonly string[];
+}
+
 export interface Comparison {
   readonly mark: string;
   readonly offsetM: PerAxis<number | null> & {readonly horizontal: number | null};
@@ -317,6 +337,8 @@ export interface Comparison {
   readonly assumptions: readonly string[];
   /** null when a frame or epoch was not stated, so that nothing could be transformed. */
   readonly frameChange: FrameChange | null;
+  /** Other occupations of the mark that were named, each set beside this one. */
+  readonly otherSetups: readonly OtherSetup[];
   readonly candidates: readonly Candidate[];
   /** null when there is nothing to explain. */
   readonly diagnosis: DiagnosisFound | null;

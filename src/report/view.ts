@@ -16,6 +16,7 @@ import {accidentalNote, causesTable} from './view/causes.ts';
 import {checks} from './view/checks.ts';
 import {type DrawnFigure, figurePainter} from './view/drawn-figure.ts';
 import {frameChangeTable} from './view/frame-change.ts';
+import {otherSetupsTable} from './view/other-setups.ts';
 import {coordinateTable, offsetTable, positionNotes, segmentTable} from './view/position.ts';
 import {
   budgetTable,
@@ -57,6 +58,7 @@ export async function pageView(context: ReportContext, renderer: Renderer, css: 
     positionNotes: positionNotes(context),
     checks: checked,
     notices: noticeViews(context),
+    otherSetups: otherSetupsTable(context),
     causes,
     accidental: accidentalNote(context),
     scatter: scatterTable(context),

@@ -57,6 +57,14 @@ export const RECORD_SENTENCES: Readonly<Record<string, Sentence>> = {
   'centring-not-included': () => 'The uncertainty of centring over the mark is not included.',
   'service-included': (v) =>
     `The 95 % figures include what the positioning service itself leaves uncertain (${textIn(v, 'from')}): a record of autonomous fixes repeats its own errors and cannot see them.`,
+  'setups-agree': (v) =>
+    `This setup and ${textIn(v, 'name')}, ${apartWords(v)}, agree within what both are worth: they differ by ${differenceWords(v)}.`,
+  'setups-disagree': (v) =>
+    `This setup and ${textIn(v, 'name')}, ${apartWords(v)}, differ by ${differenceWords(v)}: more than both uncertainties explain. One of the two setups, or the base between them, is wrong; a third setup tells which.`,
+  'setups-not-tested': (v) =>
+    `This setup and ${textIn(v, 'name')} differ by ${differenceWords(v)}; whether that is much cannot be told, because one of them has no uncertainty.`,
+  'setup-with-other-coordinates': (v) =>
+    `The result ${textIn(v, 'name')} compares with other coordinates of ${textIn(v, 'mark')} and was not used. Check both logs with the same marks file.`,
   'geoid-outside': (v) =>
     `The geoid grid ${textIn(v, 'model')} says nothing at this position: it reaches from ${degreesIn(v, 'southDeg')} to ${degreesIn(v, 'northDeg')} in latitude and from ${degreesIn(v, 'westDeg')} to ${degreesIn(v, 'eastDeg')} in longitude. No height above the geoid is given; name a grid that covers the place.`,
   'geoid-not-applied': () =>
@@ -149,6 +157,20 @@ function reachWords(values: NoticeValues): string {
     default:
       return '; how long a record would have to be cannot be told from this one.';
   }
+}
+
+function differenceWords(values: NoticeValues): string {
+  const {horizontalM, upM} = values;
+  const parts = [
+    typeof horizontalM === 'number' ? `${formatLength(horizontalM)} in plan` : '',
+    typeof upM === 'number' ? `${formatLength(upM, true)} in height` : '',
+  ].filter((part) => part !== '');
+  return parts.join(' and ');
+}
+
+function apartWords(values: NoticeValues): string {
+  const hours = numberIn(values, 'hoursEarlier');
+  return `${formatDuration(Math.abs(hours) * 3600)} ${hours < 0 ? 'later' : 'earlier'}`;
 }
 
 function degreesIn(values: NoticeValues, name: string): string {

@@ -97,6 +97,7 @@ export function reducedSample({name, mark, frame, maxLines}: SampleAsked): {
     frame: frame === undefined ? null : {name: frame, from: 'option'},
     motion: null,
     geoid: {grid: null, stated: null},
+    earlier: [],
     grid: null,
     coordinateEpoch: frame === undefined ? null : 2025,
     movementLimitM: null,

@@ -3,6 +3,7 @@ import {emptySheet} from '../../src/fieldbook/sheet.ts';
 import type {
   Candidate,
   Notice,
+  OtherSetup,
   PerAxis,
   Position,
   Requirement,
@@ -473,6 +474,7 @@ function resultOf(spec: SampleSpec, columns: Columns, series: ChartSeries): Resu
           assumptions: ['the mark has the frame and the epoch of the log'],
           frameChange: null,
           diagnosis: null,
+          otherSetups: [otherSetup(spec.heights)],
           candidates: spec.candidates,
         }
       : null,
@@ -670,4 +672,24 @@ function noticesOf(spec: SampleSpec, position: Position | null): Notice[] {
     });
   }
   return notices;
+}
+
+function otherSetup(heights: boolean): OtherSetup {
+  return {
+    name: 'opening.json',
+    setUpId: null,
+    startUtc: iso(-9000),
+    endUtc: iso(-7200),
+    hoursEarlier: 2.75,
+    differenceM: {east: 0.0021, north: -0.0034, up: heights ? 0.0042 : null, horizontal: 0.004},
+    uncertainty95M: {
+      east: 0.006,
+      north: 0.006,
+      up: heights ? 0.011 : null,
+      horizontalRadius: 0.0075,
+    },
+    normalisedError: {east: 0.35, north: 0.57, up: heights ? 0.38 : null, horizontal: 0.53},
+    agreement: 'agrees',
+    cancels: ['base or network'],
+  };
 }

@@ -118,6 +118,7 @@ function causesOf(
     frame: null,
     motion: null,
     geoid: {grid: null, stated: null},
+    earlier: [],
     grid: null,
     coordinateEpoch: null,
     movementLimitM: null,
