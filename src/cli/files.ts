@@ -54,17 +54,25 @@ export async function readInput(
 ): Promise<ReadFile> {
   const hash = createHash('sha256');
   let bytes = 0;
+  const see = (block: Uint8Array) => {
+    hash.update(block);
+    bytes += block.length;
+    progress(bytes);
+  };
+  for await (const block of inputBlocks(path, see)) take(block);
+  return {name: inputName(path), bytes, sha256: hash.digest('hex')};
+}
+
+/** The bytes of a file, unpacked when it is gzip; `see` gets them as they lie on the disk. */
+export async function* inputBlocks(
+  path: string,
+  see: (block: Uint8Array) => void,
+): AsyncGenerator<Uint8Array> {
   try {
-    const blocks = counted(openBytes(path), (block) => {
-      hash.update(block);
-      bytes += block.length;
-      progress(bytes);
-    });
-    for await (const block of unpacked(blocks)) take(block);
+    yield* unpacked(counted(openBytes(path), see));
   } catch (error) {
     throw readingError(path, error);
   }
-  return {name: inputName(path), bytes, sha256: hash.digest('hex')};
 }
 
 /** The whole of a small input, such as a field sheet. */
@@ -133,7 +141,7 @@ function readingError(path: string, error: unknown): unknown {
 
 export interface Output {
   readonly path: string;
-  readonly text: Iterable<string>;
+  readonly text: Iterable<string> | AsyncIterable<string>;
 }
 
 /** Refuses, before any work, outputs that could not be written or would overwrite an input. */

@@ -7,6 +7,8 @@ import {
   checkOptions,
   contentsExamples,
   contentsOptions,
+  convertExamples,
+  convertOptions,
   inputOptions,
   outputOptions,
   reduceExamples,
@@ -17,30 +19,41 @@ import {VERSION} from './version.ts';
 
 const EXIT_STATUSES = [
   'Exit status: 0 done (check: holds)   1 check: does not hold   2 usage or unusable input',
-  '             3 cannot tell, or no position   70 a defect of stillmark',
+  '             3 cannot tell, no position, or rows refused   70 a defect of stillmark',
 ].join('\n');
 
-/** The parser drops a lone hyphen among the files; this stands for it on the way through. */
-const STANDARD_INPUT_WORD = '<standard input>';
+/**
+ * The parser drops a lone hyphen among the words and takes a southern position for options; this
+ * stands for the hyphen on the way through.
+ */
+const HYPHEN = '<hyphen>';
+
+function untied(words: readonly string[]): string[] {
+  return words.map((word) => (word.startsWith(HYPHEN) ? `-${word.slice(HYPHEN.length)}` : word));
+}
 
 function withStandardInput<T extends {readonly log: readonly string[]}>(argv: T): T {
-  return {...argv, log: argv.log.map((word) => (word === STANDARD_INPUT_WORD ? '-' : word))};
+  return {...argv, log: untied(argv.log)};
 }
 
 /**
  * Ties a value that begins with a hyphen to its option, or the parser takes it for an option: `-`
- * for a standard stream, and southern latitudes.
+ * for a standard stream, and southern latitudes. Behind a lone `--` no word is an option.
  */
 function tied(words: readonly string[]): string[] {
   const joined: string[] = [];
   for (let i = 0; i < words.length; i++) {
     const word = words[i] ?? '';
     const next = words[i + 1] ?? '';
+    if (word === '--') {
+      const rest = words.slice(i + 1);
+      return [...joined, ...rest.map((behind) => behind.replace(/^-/, HYPHEN))];
+    }
     if (/^--[a-z][a-z-]*$/.test(word) && /^-($|[\d.,])/.test(next)) {
       joined.push(`${word}=${next}`);
       i++;
     } else {
-      joined.push(word === '-' ? STANDARD_INPUT_WORD : word);
+      joined.push(/^-($|[\d.])/.test(word) ? `${HYPHEN}${word.slice(1)}` : word);
     }
   }
   return joined;
@@ -62,7 +75,7 @@ async function run(words: readonly string[]): Promise<number> {
     .strict()
     .recommendCommands()
     .completion('completion', 'Print a script for completion in bash or zsh')
-    .demandCommand(1, 'name a command: contents, reduce or check')
+    .demandCommand(1, 'name a command: contents, reduce, check, convert or sheet')
     .wrap(100)
     .epilogue(EXIT_STATUSES)
     .fail((message: string | null, error: Error | undefined) => {
@@ -94,6 +107,15 @@ function commands(parser: Argv, answer: (status: number) => void): Argv {
       (args) => checkExamples(outputOptions(checkOptions(reduceOptions(inputOptions(args))))),
       async (argv) =>
         answer(await (await import('./reduce.ts')).reduce(withStandardInput(argv), 'check')),
+    )
+    .command(
+      'convert [position..]',
+      'Positions and lists between geocentric, geodetic, local and grid, between frames and epochs',
+      (args) => convertExamples(convertOptions(args)),
+      async (argv) => {
+        const position = untied(argv.position);
+        answer(await (await import('./convert.ts')).convert({...argv, position}));
+      },
     )
     .command(
       'sheet',

@@ -1,4 +1,5 @@
 import type {Argv} from 'yargs';
+import {parseCoordinateEpoch} from '../geodesy/coordinate-epoch.ts';
 
 /*
  * The options of the commands, as yargs sees them: names, groups and help. They are plain strings
@@ -11,6 +12,9 @@ const SCREENING = 'Which epochs are used:';
 const REFERENCE = 'Reference, frame and height:';
 const DECISION = 'What is asked of the record:';
 const PRESENTATION = 'How the report looks:';
+const FORMS = 'Which coordinates:';
+const FRAMES = 'Frames and epochs:';
+const CONVERTED = 'How the result is written:';
 const OUTPUT = 'Outputs (nothing is written unasked; - is standard output):';
 
 /** Three real examples behind the options of a command, each on a line of its own. */
@@ -47,6 +51,106 @@ export function checkExamples<T>(args: Argv<T>): Argv<T> {
       'two files, fixed only',
     ],
   ]);
+}
+
+export function convertExamples<T>(args: Argv<T>): Argv<T> {
+  return withExamples(args, [
+    ['stillmark convert 50.1,9.2,210.5 --from geodetic --to UTM', 'one position, its zone found'],
+    [
+      'stillmark convert --list marks.csv --to geodetic --angles dms --output marks-dms.csv',
+      'a list whose header names x, y and z',
+    ],
+    [
+      'stillmark convert --list marks.csv --from-frame ITRF2020 --from-epoch 2026.4 ' +
+        '--to-frame ETRF2000 --to-epoch 2010.0 --motion "at rest in ETRF2000"',
+      'another frame and epoch',
+    ],
+  ]);
+}
+
+export function convertOptions<T>(args: Argv<T>) {
+  return args
+    .positional('position', {
+      type: 'string',
+      array: true,
+      default: [] as string[],
+      describe: 'positions, the numbers of each set apart by commas',
+    })
+    .options({
+      list: {type: 'string', group: FORMS, describe: 'list with a header line, plain or gzip'},
+      columns: {
+        type: 'string',
+        group: FORMS,
+        describe: 'names of the columns of a list without a header, comma separated',
+      },
+      from: {
+        type: 'string',
+        group: FORMS,
+        describe:
+          'geocentric, geodetic, local or a grid; a header of x, y, z or latitude … says it',
+      },
+      to: {
+        type: 'string',
+        group: FORMS,
+        describe: 'the same; a grid is UTM, "UTM 33N", EPSG:25833 or a PROJ string',
+      },
+      at: {
+        type: 'string',
+        group: FORMS,
+        describe: 'origin of local coordinates: latitude,longitude,ellipsoidal height',
+      },
+      ellipsoid: {
+        type: 'string',
+        group: FORMS,
+        describe:
+          'WGS84, GRS80, or semi-major axis and 1/f (default: that of the frame, else WGS84)',
+      },
+      'from-frame': {type: 'string', group: FRAMES, describe: 'frame of the given coordinates'},
+      'from-epoch': {
+        type: 'string',
+        coerce: parseCoordinateEpoch,
+        group: FRAMES,
+        describe: 'their coordinate epoch, decimal year',
+      },
+      'to-frame': {type: 'string', group: FRAMES, describe: 'frame that is wanted'},
+      'to-epoch': {
+        type: 'string',
+        coerce: parseCoordinateEpoch,
+        group: FRAMES,
+        describe: 'epoch that is wanted (default: of the frame, else of the given coordinates)',
+      },
+      motion: {
+        type: 'string',
+        group: FRAMES,
+        describe: 'how the points move between epochs: "at rest in ETRF2014", "plate EURA", …',
+      },
+      output: {
+        type: 'string',
+        default: '-',
+        group: CONVERTED,
+        describe: 'file to write; - is standard output',
+      },
+      decimals: {
+        type: 'number',
+        default: 5,
+        group: CONVERTED,
+        describe: 'decimals of a metre; degrees get as many as say the same',
+      },
+      angles: {
+        choices: ['deg', 'dms'] as const,
+        default: 'deg' as const,
+        group: CONVERTED,
+        describe: 'decimal degrees, or degrees, minutes and seconds',
+      },
+      factors: {
+        type: 'boolean',
+        default: false,
+        group: CONVERTED,
+        describe:
+          'convergence, point scale, elevation and combined factor in a list of grid positions',
+      },
+      quiet: {type: 'boolean', alias: 'q', default: false, describe: 'no summary and no progress'},
+    });
 }
 
 export function inputOptions<T>(args: Argv<T>) {
@@ -114,7 +218,8 @@ export function reduceOptions<T>(args: Argv<T>) {
     },
     frame: {type: 'string', group: REFERENCE, describe: 'frame of the positions in the log'},
     'coordinate-epoch': {
-      type: 'number',
+      type: 'string',
+      coerce: parseCoordinateEpoch,
       group: REFERENCE,
       describe: 'coordinate epoch of the positions, decimal year (that of the base or network)',
     },

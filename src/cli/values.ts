@@ -143,7 +143,7 @@ export function ellipsoidOption(text: string | undefined): Ellipsoid {
 }
 
 /** What the parser hands over as lists by design. */
-const REPEATABLE = new Set(['log', '_', 'with']);
+const REPEATABLE = new Set(['log', '_', 'with', 'position']);
 
 /** An option that was given twice reaches us as a list; saying it twice is a mistake to name. */
 export function requireSingle(options: Readonly<Record<string, unknown>>): void {

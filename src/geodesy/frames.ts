@@ -158,22 +158,34 @@ export function transformPosition({
   ...request
 }: TransformationRequest & {readonly ecef: Ecef}): Transformation {
   const plan = planToItself(request) ?? planAt(start, request);
+  const trace = traceByPlan(plan, start);
+  return {ecef: trace.at(-1)?.ecef ?? start, plan, trace};
+}
+
+/** Every step of a point along a plan whose frames are used where the point lies. */
+export function traceByPlan({steps}: TransformationPlan, start: Ecef): TracedStep[] {
   const trace: TracedStep[] = [];
   let at = start;
-  for (const step of plan.steps) {
+  for (const step of steps) {
     const velocity = step.kind === 'motion' ? velocityOf(at, step.motion) : null;
     at = afterStep(at, step);
     trace.push({step, ecef: at, velocity});
   }
-  return {ecef: at, plan, trace};
+  return trace;
+}
+
+/**
+ * Refuses a point where one of the frames named is not used, before anything else is asked.
+ *
+ * @throws UsageError that names the frame and its area
+ */
+export function requireUsedAt(point: Ecef, frameNames: readonly string[]): void {
+  const frames = frameNames.map(findFrame).filter((frame) => frame !== undefined);
+  requireInside(point, frames);
 }
 
 function planAt(start: Ecef, request: TransformationRequest): TransformationPlan {
-  const named = [findFrame(request.from.frame), findFrame(request.to.frame)];
-  requireInside(
-    start,
-    named.filter((frame) => frame !== undefined),
-  );
+  requireUsedAt(start, [request.from.frame, request.to.frame]);
   const plan = planTransformation(request);
   requireInside(start, plan.frames);
   return plan;

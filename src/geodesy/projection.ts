@@ -99,8 +99,8 @@ function within<T>(definition: GridDefinition, compute: () => T): T {
   try {
     return compute();
   } catch (error) {
-    // proj4js throws strings.
-    const reason = error instanceof Error ? error.message : String(error);
+    // proj4js throws strings; our own name the function first, which is no help here.
+    const reason = error instanceof Error ? error.message.replace(/^\w+: /, '') : String(error);
     throw new UsageError(`${definition.name} cannot hold this position: ${reason}`, {cause: error});
   }
 }

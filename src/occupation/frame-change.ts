@@ -62,7 +62,7 @@ function changeOf(
     fromEpoch: position.coordinateEpoch,
     toFrame: plan.frame,
     toEpoch: plan.epoch ?? mark.coordinateEpoch ?? null,
-    steps: trace.map(stepOf),
+    steps: trace.map(frameChangeStep),
     ecefM: {x: ecef.xM, y: ecef.yM, z: ecef.zM},
     standardUncertaintyM: plan.standardUncertaintyM,
   };
@@ -81,7 +81,7 @@ function contributionOf(
 }
 
 /** One line of the hand calculation: every parameter under the name and unit of its publication. */
-function stepOf({step, ecef, velocity}: TracedStep): FrameChangeStep {
+export function frameChangeStep({step, ecef, velocity}: TracedStep): FrameChangeStep {
   const after = {x: ecef.xM, y: ecef.yM, z: ecef.zM};
   switch (step.kind) {
     case 'helmert': {

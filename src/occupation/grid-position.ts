@@ -1,5 +1,5 @@
 import {type Ellipsoid, GRS80} from '../geodesy/ellipsoid.ts';
-import {parseGrid} from '../geodesy/grid-definition.ts';
+import {parseGrid, requireGridFits} from '../geodesy/grid-definition.ts';
 import {combinedFactor, elevationFactor} from '../geodesy/ground-factor.ts';
 import {projectionOf} from '../geodesy/projection.ts';
 import type {GeodeticPosition, GridPosition} from './result.ts';
@@ -7,15 +7,19 @@ import type {GeodeticPosition, GridPosition} from './result.ts';
 /**
  * A position in a map grid, with what the grid does to lengths and bearings there.
  *
- * @throws UsageError for a grid that is not known, or that cannot hold the place
+ * @param frame of the position; null: not stated
+ * @throws UsageError for a grid that is not known, made for another frame or ellipsoid, or that
+ *         cannot hold the place
  */
 export function gridPosition(
   text: string,
   {latitudeDeg, longitudeDeg, ellipsoidalHeightM}: GeodeticPosition,
-  ellipsoid: Ellipsoid,
+  {ellipsoid, frame}: {readonly ellipsoid: Ellipsoid; readonly frame: string | null},
 ): GridPosition {
   const place = {latitudeDeg, longitudeDeg};
-  const projection = projectionOf(parseGrid(text, {place, ellipsoid}));
+  const grid = parseGrid(text, {place, ellipsoid});
+  requireGridFits(grid, {ellipsoid, frame});
+  const projection = projectionOf(grid);
   const {eastingM, northingM} = projection.forward(place);
   const {convergenceDeg, pointScale} = projection.factors(place);
   const elevation =

@@ -65,7 +65,7 @@ export function positionOf(input: PositionInput): Position {
         : gridPosition(
             input.grid,
             {...geodetic, ellipsoidalHeightM: ellipsoidal ? geodetic.ellipsoidalHeightM : null},
-            columns.frame.ellipsoid,
+            {ellipsoid: columns.frame.ellipsoid, frame: input.frame},
           ),
     originEcefM: {x: originEcef.xM, y: originEcef.yM, z: originEcef.zM},
     ...uncertaintyOf(covarianceEnuM2),

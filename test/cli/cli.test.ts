@@ -57,6 +57,11 @@ describe('requests that cannot be met', () => {
       ['reduce', sample('mole-still.nmea'), '--settle', '1min', '--settle', '2min'],
       'given 2 times',
     ],
+    [
+      ['reduce', sample('mole-still.nmea'), '--grid', 'EPSG:25832', '--frame', 'ITRF2014'],
+      'is a grid of ETRF, ETRS89',
+    ],
+    [['reduce', sample('mole-still.nmea'), '--coordinate-epoch', 'May 2026'], 'decimal year'],
     [['check', sample('mole-still.nmea')], 'name of the mark'],
     [['check', sample('mole-still.nmea'), '--mark', 'MOLE'], '--marks'],
     [

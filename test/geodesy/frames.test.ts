@@ -15,6 +15,7 @@ import {ITRF2020_PMM, plateNamed} from '../../src/geodesy/plates.ts';
 import {atRestIn, type PointMotion} from '../../src/geodesy/point-motion.ts';
 import type {Ecef} from '../../src/geodesy/types.ts';
 import {readReference} from '../reference/read.ts';
+import {PLACES, WRONG_FRAMES} from './wrong-frames.ts';
 
 function ecefOf([xM, yM, zM]: readonly number[]): Ecef {
   return {xM: xM ?? Number.NaN, yM: yM ?? Number.NaN, zM: zM ?? Number.NaN};
@@ -284,10 +285,7 @@ describe('published examples', () => {
   });
 });
 
-const BERLIN = ecefFromGeodetic(
-  {latitudeDeg: 52.52, longitudeDeg: 13.4, ellipsoidalHeightM: 80},
-  GRS80,
-);
+const BERLIN = ecefFromGeodetic(PLACES.Berlin, GRS80);
 
 describe('what a reader can redo', () => {
   test('every step carries its parameters, and redoing them gives the result', () => {
@@ -436,65 +434,9 @@ describe('comparison with itself', () => {
   });
 });
 
-const SYDNEY = ecefFromGeodetic(
-  {latitudeDeg: -33.87, longitudeDeg: 151.21, ellipsoidalHeightM: 50},
-  GRS80,
-);
-const AUCKLAND = ecefFromGeodetic(
-  {latitudeDeg: -36.85, longitudeDeg: 174.76, ellipsoidalHeightM: 50},
-  GRS80,
-);
-
 describe('wrong or incomplete requests', () => {
-  test.each<[string, string, Ecef, RegExp]>([
-    ['WGS 84@2020', 'ITRF2020@2020', BERLIN, /write the one meant, such as WGS84\(G2296\)/],
-    ['WGS84@2020', 'WGS84@2020', BERLIN, /write the one meant, such as WGS84\(G2296\)/],
-    ['EPSG:4326@2020', 'ITRF2020@2020', BERLIN, /WGS84\(G2296\)/],
-    ['ITRF2020@2020', 'ETRS89@2020', BERLIN, /write ETRF2000, ETRF2014, ETRF2020/],
-    ['ITRF2020@2020', 'EPSG:4258@2020', BERLIN, /write ETRF2000/],
-    ['ITRF2020@2020', 'NAD83@2010', BERLIN, /write NAD83\(2011\), NAD83\(PA11\)/],
-    ['ITRF2020@2020', 'NAD83(CSRS)@2010', BERLIN, /write NAD83\(CSRS\)v2 to NAD83\(CSRS\)v8/],
-    ['ITRF@2020', 'ETRF2000@2020', BERLIN, /write the year, such as ITRF2020/],
-    ['ITRS@2020', 'ETRF2000@2020', BERLIN, /write the year, such as ITRF2020/],
-    ['ETRF@2020', 'ITRF2020@2020', BERLIN, /write the year, such as ETRF2000/],
-    ['IGS@2020', 'ITRF2020@2020', BERLIN, /write the year, such as IGS20/],
-    ['GDA@2020', 'ITRF2020@2020', SYDNEY, /write GDA94 or GDA2020/],
-    ['SIRGAS@2020', 'ITRF2020@2020', BERLIN, /write SIRGAS2000/],
-    ['ITRF14@2020', 'ITRF2020@2020', BERLIN, /did you mean ITRF2014\?/],
-    ['ITRF2015@2020', 'ITRF2020@2020', BERLIN, /did you mean ITRF2014/],
-    ['ETRF2002@2020', 'ITRF2020@2020', BERLIN, /did you mean .*ETRF2000/],
-    ['NAD83(2012)@2020', 'ITRF2020@2020', BERLIN, /did you mean NAD83\(2011\)/],
-    ['IGS2O@2020', 'ITRF2020@2020', BERLIN, /did you mean IGS20/],
-    ['Atlantis@2020', 'ITRF2020@2020', BERLIN, /write one of the ITRFs/],
-    ['@2020', 'ITRF2020@2020', BERLIN, /need a reference frame, such as ITRF2020/],
-    ['ED50@2020', 'ITRF2020@2020', BERLIN, /transform the mark with the national service/],
-    ['OSGB36@2020', 'ITRF2020@2020', BERLIN, /transform the mark with the national service/],
-    ['NAD27@2020', 'ITRF2020@2020', BERLIN, /transform the mark with the national service/],
-    ['UTM 32N@2020', 'ITRF2020@2020', BERLIN, /write the frame it belongs to/],
-    ['EPSG:25832@2020', 'ITRF2020@2020', BERLIN, /write the frame it belongs to/],
-    ['ITRF2020', 'ETRF2000@2020', BERLIN, /need the coordinate epoch of the coordinates/],
-    ['ITRF2020@2020', 'ETRF2000', BERLIN, /need the coordinate epoch of the result/],
-    ['ITRF2020', 'ITRF2020', BERLIN, /need the coordinate epoch/],
-    ['ITRF2020@2020', 'ITRF2014@1975', BERLIN, /between 1980 and 2040/],
-    ['ITRF2020@2055', 'ITRF2014@2020', BERLIN, /between 1980 and 2040/],
-    ['ITRF2020@NaN', 'ITRF2014@2020', BERLIN, /between 1980 and 2040/],
-    ['ITRF2020@2026.9', 'ETRF2000@2010', BERLIN, /write "at rest in ETRF2000"/],
-    ['ITRF2020@2026.9', 'ITRF2014@2010', BERLIN, /a plate such as "plate EURA"/],
-    ['ITRF2020@2026.9', 'NZGD2000', AUCKLAND, /transform the mark with the national service/],
-    ['NZGD2000', 'ITRF2020@2026.9', AUCKLAND, /transform the mark with the national service/],
-    ['ITRF2020@2026.9', 'NZGD2000@2026.9', AUCKLAND, /belong to epoch 2000, .* write 2000/],
-    [
-      'ITRF2020@2026.9',
-      'JGD2011@2026.9',
-      BERLIN,
-      /JGD2011 is used between .* a global one such as/,
-    ],
-    ['ITRF2020@2026.9', 'SIRGAS2000@2026.9', BERLIN, /SIRGAS2000 is used between/],
-    ['ITRF2020@2026.9', 'GDA2020@2020', BERLIN, /write the frame that is used there/],
-    ['ITRF2020@2020', 'NAD83(2011)@2020', SYDNEY, /write the frame that is used there/],
-    ['ITRF2020@2020', 'ETRF2000@2020', SYDNEY, /write the frame that is used there/],
-    ['ITRF2020@2020', 'CGCS2000', SYDNEY, /CGCS2000 is used between/],
-  ])('%s to %s gets no number but advice', (from, to, ecef, message) => {
+  test.each(WRONG_FRAMES)('%s to %s gets no number but advice', (from, to, place, message) => {
+    const ecef = ecefFromGeodetic(PLACES[place], GRS80);
     let thrown: unknown;
     try {
       transformPosition({ecef, from: sideOf(from), to: sideOf(to), motion: null});
