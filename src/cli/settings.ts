@@ -69,8 +69,9 @@ function remember(
 ): void {
   const value = options[name] as Setting['value'] | undefined;
   const option = name.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`);
+  // A switch that nobody turned has its default.
   settings[option] =
-    value === undefined
+    value === undefined || value === false
       ? {value: fallback, from: 'default'}
       : {value, from: fromSheet.has(name) ? 'field sheet' : 'command line'};
 }

@@ -188,6 +188,7 @@ const FRAME_CHANGE = object({
     }),
   ),
   ecefM: XYZ,
+  mismatchM: perAxis(LENGTH_M),
   standardUncertaintyM: perAxis(LENGTH_M),
 });
 

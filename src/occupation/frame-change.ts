@@ -1,8 +1,10 @@
 import type {Mark} from '../fieldbook/mark.ts';
-import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
+import {type Ellipsoid, GRS80} from '../geodesy/ellipsoid.ts';
 import {type TracedStep, type Transformation, transformPosition} from '../geodesy/frames.ts';
 import {geodeticFromEcef} from '../geodesy/geocentric.ts';
+import {enuFromEcef, localFrameAtEcef} from '../geodesy/local.ts';
 import type {PointMotion} from '../geodesy/point-motion.ts';
+import type {Ecef} from '../geodesy/types.ts';
 import type {StatedContribution} from './budget.ts';
 import type {FrameChange, FrameChangeStep, Position} from './result.ts';
 
@@ -30,14 +32,15 @@ export function inFrameOfMark(
 ): Changed | undefined {
   const {frame, ecefM} = position;
   if (frame === null || mark.frame === undefined || ecefM === null) return undefined;
+  const start = {xM: ecefM.x, yM: ecefM.y, zM: ecefM.z};
   const transformation = transformPosition({
-    ecef: {xM: ecefM.x, yM: ecefM.y, zM: ecefM.z},
+    ecef: start,
     from: {frame, epoch: position.coordinateEpoch},
     to: {frame: mark.frame, epoch: mark.coordinateEpoch ?? null},
     motion: motion ?? motionOf(mark),
   });
   const geodetic = geodeticFromEcef(transformation.ecef, ellipsoid);
-  const change = changeOf(position, mark, transformation);
+  const change = changeOf(position, mark, start, transformation);
   return {geodetic, change, contribution: contributionOf(change, transformation)};
 }
 
@@ -55,6 +58,7 @@ function motionOf({velocity, frame}: Mark): PointMotion | null {
 function changeOf(
   position: Position,
   mark: Mark,
+  start: Ecef,
   {plan, trace, ecef}: Transformation,
 ): FrameChange {
   return {
@@ -64,8 +68,14 @@ function changeOf(
     toEpoch: plan.epoch ?? mark.coordinateEpoch ?? null,
     steps: trace.map(frameChangeStep),
     ecefM: {x: ecef.xM, y: ecef.yM, z: ecef.zM},
+    mismatchM: mismatchOf(start, ecef),
     standardUncertaintyM: plan.standardUncertaintyM,
   };
+}
+
+function mismatchOf(before: Ecef, after: Ecef): FrameChange['mismatchM'] {
+  const {eastM, northM, upM} = enuFromEcef(before, localFrameAtEcef(after, GRS80));
+  return {east: eastM, north: northM, up: upM};
 }
 
 function contributionOf(

@@ -286,6 +286,8 @@ export interface FrameChange {
   /** Empty when both are the same. */
   readonly steps: readonly FrameChangeStep[];
   readonly ecefM: PerAxisXyz;
+  /** Coordinates before minus after: the offset that comparing without these steps would show. */
+  readonly mismatchM: PerAxis;
   readonly standardUncertaintyM: PerAxis;
 }
 

@@ -14,6 +14,7 @@ export const ROTATION_CONVENTION = "position vector convention: X' = X + T + D X
 /** The parameters of one step between frames, such as "Tx mm −1.400; …; D ppb 0.6700". */
 export function frameParametersText(parameters: Readonly<Record<string, number>>): string {
   return Object.entries(parameters)
+    .sort(([a], [b]) => rank(a) - rank(b))
     .map(([name, value]) => `${parameterName(name)} ${fixed(value, decimalsOf(name))}`)
     .join('; ');
 }
@@ -21,6 +22,16 @@ export function frameParametersText(parameters: Readonly<Record<string, number>>
 /** A frame with its epoch, such as "ITRF2014 at 2010.000". */
 export function framePlaceText(frame: string, epoch: number | null): string {
   return epoch === null ? frame : `${frame} at ${epoch.toFixed(3)}`;
+}
+
+/** Translations, scale, rotations, velocity: the order of the publications. */
+const ORDER = [
+  ...['translationX', 'translationY', 'translationZ', 'scale'],
+  ...['rotationX', 'rotationY', 'rotationZ', 'velocityX', 'velocityY', 'velocityZ'],
+];
+
+function rank(name: string): number {
+  return ORDER.findIndex((beginning) => name.startsWith(beginning));
 }
 
 function decimalsOf(name: string): number {

@@ -1,4 +1,4 @@
-import type {FrameChangeStep} from '../../occupation/result.ts';
+import type {FrameChange, FrameChangeStep} from '../../occupation/result.ts';
 import {
   frameParametersText,
   framePlaceText,
@@ -16,13 +16,17 @@ import {fixedTable, head, row, type Table} from './table.ts';
 export function frameChangeTable({result}: ReportContext): Table | null {
   const change = result.comparison?.frameChange ?? null;
   if (change === null || change.steps.length === 0) return null;
-  const {east, north, up} = change.standardUncertaintyM;
-  const sigma = [east, north, up].map((value) => fixed(value * 1000, 1)).join(', ');
+  const sigma = threeAxes(change.standardUncertaintyM, 1000, 1);
+  const mismatch = threeAxes(change.mismatchM, 1, 4);
   return fixedTable({
-    caption: `From ${framePlaceText(change.fromFrame, change.fromEpoch)} to ${framePlaceText(change.toFrame, change.toEpoch)}; standard uncertainty east, north, up ${sigma} mm. Rotations follow the ${ROTATION_CONVENTION}`,
+    caption: `From ${framePlaceText(change.fromFrame, change.fromEpoch)} to ${framePlaceText(change.toFrame, change.toEpoch)}; standard uncertainty east, north, up ${sigma} mm. Compared without these steps, the offset would be wrong by ${mismatch} m. Rotations follow the ${ROTATION_CONVENTION}`,
     heads: [head('Step'), head('Parameters'), head('X, Y, Z after it, m'), head('Source')],
     rows: change.steps.map(stepRow),
   });
+}
+
+function threeAxes({east, north, up}: FrameChange['mismatchM'], perM: number, decimals: number) {
+  return [east, north, up].map((value) => fixed(value * perM, decimals)).join(', ');
 }
 
 function stepRow(step: FrameChangeStep) {
