@@ -204,6 +204,8 @@ const DIAGNOSIS = object({
   notTested: listOf(object({code: TEXT, because: TEXT})),
 });
 
+const SHEET_ITEM = object({section: TEXT, item: TEXT, value: orNull(TEXT)});
+
 const COMPARISON = object({
   mark: TEXT,
   offsetM: object({...PER_AXIS_OR_NULL.properties, horizontal: orNull(LENGTH_M)}),
@@ -281,7 +283,8 @@ export const RESULT_SCHEMA: DocumentSchema = {
       antennaHeightM: orNull(LENGTH_M),
       heightUsed: oneOf('opening', 'mean', 'interpolated', null),
     }),
-    fieldSheet: listOf(object({section: TEXT, item: TEXT, value: orNull(TEXT)})),
+    fieldSheet: listOf(SHEET_ITEM),
+    markRecord: listOf(SHEET_ITEM),
     epochs: EPOCHS,
     reference: orNull(REFERENCE),
     position: orNull(POSITION),

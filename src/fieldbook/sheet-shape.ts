@@ -59,6 +59,16 @@ const projectFields = {
     text('two occupations'),
     'how the accuracy risk is managed',
   ),
+  deliverables: optional(
+    'deliverables',
+    text('report, raw log, result file'),
+    'what is handed over',
+  ),
+  conclusions: optional(
+    'conclusions',
+    text('pillar 4 may be used'),
+    'conclusions and recommendations of the one responsible',
+  ),
 };
 
 const occupationFields = {
@@ -69,6 +79,11 @@ const occupationFields = {
     'how the mark was identified: stamping, rubbing, photo, sketch',
   ),
   setUpId: optional('set-up', text('A'), 'name of this set-up, a new one after each re-levelling'),
+  repeat: optional(
+    'occupation of this mark',
+    text('2 of 2, the first on 3 May'),
+    'single, or which of several occupations of this mark',
+  ),
   observer: optional('observer', text('who stood there'), 'who observed'),
   date: optional('date', date(), 'day of the field work'),
   start: optional('start', moment(), 'start of the session, with Z or the offset from UTC'),

@@ -10,7 +10,7 @@ interface Rule {
 }
 
 const RULES: readonly Rule[] = [
-  {path: /^(occupation\.|fieldSheet)|setUpId$/, code: 'not-given', severity: 'absent'},
+  {path: /^(occupation\.|fieldSheet|markRecord)|setUpId$/, code: 'not-given', severity: 'absent'},
   {
     path: /^(comparison|verdict)$/,
     code: 'nothing-compared',

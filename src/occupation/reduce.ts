@@ -14,6 +14,7 @@ import {budgetRows, comparisonRows} from './budget.ts';
 import {explainNulls} from './explain-nulls.ts';
 import {noticeHeights} from './height-notices.ts';
 import {keptIndices, type LocalColumns, localColumns, taken} from './local-columns.ts';
+import {markItems} from './mark-items.ts';
 import {type MarkPlace, markPlace} from './mark-place.ts';
 import {isTravelling} from './motion.ts';
 import {type NoticeList, noticeList} from './notices.ts';
@@ -257,6 +258,7 @@ function common({request, account, notices, antenna}: Record) {
       heightUsed: antenna?.heightUsed ?? null,
     },
     fieldSheet: sheetItems(request.sheet),
+    markRecord: markItems(request.mark),
     epochs: account,
     settings: request.settings,
     notices: notices.notices,

@@ -14,6 +14,8 @@ export interface Result {
   readonly occupation: OccupationFacts;
   /** What the field sheet states, item by item in the sheet's order; null: not given. */
   readonly fieldSheet: readonly SheetItem[];
+  /** What the marks file states of the mark, in the same way; empty without one. */
+  readonly markRecord: readonly SheetItem[];
   readonly epochs: EpochAccount;
   readonly reference: Reference | null;
   readonly position: Position | null;

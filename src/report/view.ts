@@ -214,10 +214,10 @@ interface SheetSection {
   readonly open: string[];
 }
 
-/** The field sheet section by section, in its order. */
+/** The record of the mark and the field sheet, section by section, in their order. */
 function sheetSections({result}: ReportContext): SheetSection[] {
   const sections: SheetSection[] = [];
-  for (const {section, item, value} of result.fieldSheet) {
+  for (const {section, item, value} of [...result.markRecord, ...result.fieldSheet]) {
     let last = sections[sections.length - 1];
     if (last?.title !== section) {
       last = {title: section, given: [], open: []};

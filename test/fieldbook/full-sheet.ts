@@ -12,9 +12,12 @@ registration: 12345
 specification: "site specification, clause 4"
 departures: none
 accuracy risk: two occupations
+deliverables: "report, raw log"
+conclusions: the pillar may be used
 mark: PILLAR 4
 identification: stamping read, photo 12
 set-up: A
+occupation of this mark: 1 of 2
 observer: the second crew
 date: 2026-05-04
 start: 2026-05-04 10:00 +02:00

@@ -390,6 +390,7 @@ function resultOf(spec: SampleSpec, columns: Columns, series: ChartSeries): Resu
       ...item,
       value: item.item === 'mark' ? spec.names.mark : (STATED[item.item] ?? null),
     })),
+    markRecord: [],
     epochs: {
       read,
       used,

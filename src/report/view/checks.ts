@@ -50,13 +50,34 @@ export function checks(context: ReportContext): Check[] {
     digitsCheck(context),
     heightCheck(context.result),
     budgetCheck(context.result),
-    {
-      name: 'Repeat occupation',
-      tone: 'not tested' as const,
-      note: 'one occupation has no redundancy: a blunder in setup or height repeats perfectly',
-    },
+    repeatCheck(context.result),
   ];
   return drafts.map(finished).sort((a, b) => CONCERN[a.tone] - CONCERN[b.tone]);
+}
+
+/** Other set-ups on the same mark, named by the user; two in agreement are still no proof. */
+function repeatCheck({comparison}: Result): CheckDraft {
+  const name = 'Repeat occupation';
+  const tested = (comparison?.otherSetups ?? []).filter(
+    ({agreement}) => agreement !== 'not tested',
+  );
+  if (tested.length === 0) {
+    return {
+      name,
+      tone: 'not tested',
+      note: 'one occupation has no redundancy: a blunder in setup or height repeats perfectly',
+    };
+  }
+  const apart = tested.filter(({agreement}) => agreement === 'disagrees');
+  return {
+    name,
+    measured: String(apart.length),
+    limit: String(tested.length),
+    unit: 'set-ups',
+    tone: apart.length === 0 ? 'within' : 'outside',
+    outcome: apart.length === 0 ? 'all agree' : 'disagree',
+    note: 'other set-ups that differ from this one by more than both uncertainties explain',
+  };
 }
 
 function finished(draft: CheckDraft): Check {
