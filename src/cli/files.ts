@@ -123,7 +123,8 @@ async function* prefixed(
   yield* rest;
 }
 
-function readingError(path: string, error: unknown): unknown {
+/** The same failure as something that the user can act on, where it is one. */
+export function readingError(path: string, error: unknown): unknown {
   if (!(error instanceof Error) || !('code' in error)) return error;
   const code = String(error.code);
   if (code.startsWith('Z_')) {

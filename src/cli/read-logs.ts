@@ -6,6 +6,7 @@ import {createLogReader} from '../log/reader.ts';
 import {inputAccount} from '../occupation/account.ts';
 import type {RejectedExample} from '../occupation/contents-result.ts';
 import type {InputAccount} from '../occupation/result.ts';
+import {openDivisible, readDivided} from './decode-threads.ts';
 import {inputSize, type ReadFile, readInput, requireInputs} from './files.ts';
 import type {Progress} from './progress.ts';
 
@@ -51,8 +52,12 @@ async function readLog(
   progress: Progress,
 ): Promise<{contents: LogContents; file: ReadFile}> {
   const name = path === '-' ? 'standard input' : basename(path);
-  const reader = createLogReader({...options, name});
   progress.start(name, inputSize(path));
+  const divisible = openDivisible(path);
+  if (divisible !== undefined) {
+    return readDivided(divisible, {...options, name}, (bytes) => progress.at(bytes));
+  }
+  const reader = createLogReader({...options, name});
   const file = await readInput(
     path,
     (chunk) => reader.add(chunk),

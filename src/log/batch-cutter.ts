@@ -38,8 +38,9 @@ export class BatchCutter {
     }
   }
 
-  finish(): void {
-    this.#take(this.#buffer, this.#filled, true);
+  /** Hands out what is left; `endsLog` says whether the log ends with it. */
+  finish(endsLog: boolean): void {
+    this.#take(this.#buffer, this.#filled, endsLog);
     this.#filled = 0;
   }
 

@@ -21,7 +21,6 @@ import {
   clearSentenceColumns,
   createSentenceColumns,
   mostSentences,
-  packSentenceColumns,
   type SentenceColumns,
   SentenceKind,
 } from './sentence-columns.ts';
@@ -58,20 +57,6 @@ export interface NmeaBatch {
   readonly datums: readonly string[];
 }
 
-/** The same values in memory of its own, to keep or to send to another thread. */
-export function packBatch(batch: NmeaBatch): NmeaBatch {
-  return {...batch, columns: packSentenceColumns(batch.columns)};
-}
-
-/** The buffers of a packed batch, in the form in which threads hand them over. */
-export function buffersOfBatch(batch: NmeaBatch): ArrayBuffer[] {
-  return Object.values(batch.columns).flatMap((columns) =>
-    Object.values(columns as object).flatMap((column) =>
-      ArrayBuffer.isView(column) && column.buffer instanceof ArrayBuffer ? [column.buffer] : [],
-    ),
-  );
-}
-
 export interface DecodeOptions {
   /** Longest batch that will be given. */
   readonly batchBytes: number;
@@ -102,7 +87,8 @@ export interface DecodeOptions {
  */
 export class NmeaDecoder {
   readonly #trustAbsentChecksum: boolean;
-  readonly #columns: SentenceColumns;
+  readonly #ownColumns: SentenceColumns;
+  #columns: SentenceColumns;
   readonly #fields = new SentenceFields();
   readonly #addresses = new AddressCounts();
   /** Where the fields of each RMC and GLL row begin and end, for a second look. */
@@ -123,7 +109,8 @@ export class NmeaDecoder {
 
   constructor({batchBytes, trustAbsentChecksum}: DecodeOptions) {
     this.#trustAbsentChecksum = trustAbsentChecksum;
-    this.#columns = createSentenceColumns(batchBytes);
+    this.#ownColumns = createSentenceColumns(batchBytes);
+    this.#columns = this.#ownColumns;
     const rows = mostSentences(batchBytes);
     this.#rmcFrom = new Uint32Array(rows);
     this.#rmcEnd = new Uint32Array(rows);
@@ -132,16 +119,23 @@ export class NmeaDecoder {
   }
 
   /**
-   * Decodes `bytes[0]` to `bytes[length − 1]`; the columns are valid until the next call.
+   * Decodes `bytes[0]` to `bytes[length − 1]`; the columns are valid until they are filled again.
    *
    * @param bytes  at a multiple of four in its buffer, `BATCH_PADDING_BYTES` longer than `length`
    * @param length of the batch, which begins and ends at the start of a piece
    * @param isLast whether the log ends with the batch
+   * @param into   columns for a batch of this length; the decoder's own when not given
    */
-  decode(bytes: Uint8Array, length: number, isLast: boolean): NmeaBatch {
+  decode(
+    bytes: Uint8Array,
+    length: number,
+    isLast: boolean,
+    into: SentenceColumns = this.#ownColumns,
+  ): NmeaBatch {
     if (bytes.length < length + BATCH_PADDING_BYTES || bytes.byteOffset % WORD_BYTES !== 0) {
       throw new RangeError('decode: bytes must be padded and aligned to four');
     }
+    this.#columns = into;
     this.#bytes = bytes;
     this.#words = new Int32Array(bytes.buffer, bytes.byteOffset, bytes.length >> 2);
     this.#length = length;
@@ -152,7 +146,7 @@ export class NmeaDecoder {
     this.#positions = 0;
     this.#datums = [];
     this.#lastDtm = new Uint8Array(0);
-    clearSentenceColumns(this.#columns);
+    clearSentenceColumns(into);
     const behind = bytes.slice(length, length + BATCH_PADDING_BYTES);
     bytes.fill(0, length, length + BATCH_PADDING_BYTES);
     let at = 0;
@@ -163,7 +157,7 @@ export class NmeaDecoder {
     if (this.#positions === 0) this.#lookAgain();
     bytes.set(behind, length);
     this.#account.sentences = this.#addresses.take();
-    return {columns: this.#columns, account: this.#account, datums: this.#datums};
+    return {columns: into, account: this.#account, datums: this.#datums};
   }
 
   /**

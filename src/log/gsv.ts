@@ -8,19 +8,22 @@ import type {SentenceFields} from './sentence-fields.ts';
 const HEAD_FIELDS = 3;
 const FIELDS_PER_SATELLITE = 4;
 
-interface Seen {
-  readonly elevationDeg: number;
-  readonly azimuthDeg: number;
-  carrierToNoiseDbHz: number;
-}
+/** Satellites and their number in one key, so that keys sort by system first. */
+const NUMBERS_PER_SYSTEM = 65_536;
+const FIRST_ROOM = 64;
 
 /**
- * Gathers the satellites of one sample. A satellite that is listed with several signals stands once,
- * with the strongest.
+ * Gathers the satellites of one sample, sorted by system and number. A satellite that is listed
+ * with several signals stands once, with the strongest.
  */
 export class SatelliteSample {
-  readonly #seen = new Map<number, Seen>();
-  readonly #value = new Float64Array(1);
+  #count = 0;
+  #keys = new Int32Array(FIRST_ROOM);
+  #elevationDeg = new Float64Array(FIRST_ROOM);
+  #azimuthDeg = new Float64Array(FIRST_ROOM);
+  #carrierToNoiseDbHz = new Float64Array(FIRST_ROOM);
+  /** Elevation, azimuth and strength of the satellite in work. */
+  readonly #seen = new Float64Array(3);
 
   /** Takes a GSV sentence; a carrier-to-noise ratio of zero means "not tracked". */
   take(fields: SentenceFields, talker: number): Rejection {
@@ -29,42 +32,72 @@ export class SatelliteSample {
     for (let k = 0; k < satellites; k += 1) {
       const field = HEAD_FIELDS + k * FIELDS_PER_SATELLITE;
       const number = fields.whole(field);
-      const elevationDeg = this.#decimal(fields, field + 1);
-      const azimuthDeg = this.#decimal(fields, field + 2);
-      const ratio = this.#decimal(fields, field + 3);
+      for (let value = 0; value < 3; value += 1) {
+        fields.decimalTo(this.#seen, value, field + 1 + value);
+      }
       if (fields.fault !== Rejection.none) return fields.fault;
       if (number <= 0) continue;
       const system = ofTalker === SatelliteSystem.unknown ? systemOfNumber(number) : ofTalker;
-      const carrierToNoiseDbHz = ratio > 0 ? ratio : Number.NaN;
-      this.#keepStrongest(system * 65_536 + number, {elevationDeg, azimuthDeg, carrierToNoiseDbHz});
+      this.#keep(system * NUMBERS_PER_SYSTEM + number);
     }
     return Rejection.none;
   }
 
-  #decimal(fields: SentenceFields, field: number): number {
-    fields.decimalTo(this.#value, 0, field);
-    return this.#value[0] ?? Number.NaN;
+  #keep(key: number): void {
+    // Satellites mostly come in rising order: look from the end.
+    let place = this.#count;
+    while (place > 0 && (this.#keys[place - 1] ?? 0) > key) place -= 1;
+    const [elevationDeg = Number.NaN, azimuthDeg = Number.NaN, ratio = Number.NaN] = this.#seen;
+    const isKnown = place > 0 && this.#keys[place - 1] === key;
+    if (isKnown) {
+      const before = this.#carrierToNoiseDbHz[place - 1] ?? Number.NaN;
+      if (ratio > 0 && !(before >= ratio)) this.#carrierToNoiseDbHz[place - 1] = ratio;
+      return;
+    }
+    if (this.#count === this.#keys.length) this.#grow();
+    for (const column of this.#columns()) column.copyWithin(place + 1, place, this.#count);
+    this.#keys[place] = key;
+    this.#elevationDeg[place] = elevationDeg;
+    this.#azimuthDeg[place] = azimuthDeg;
+    this.#carrierToNoiseDbHz[place] = ratio > 0 ? ratio : Number.NaN;
+    this.#count += 1;
   }
 
-  #keepStrongest(key: number, one: Seen): void {
-    const before = this.#seen.get(key);
-    if (before === undefined) this.#seen.set(key, one);
-    else if (!(before.carrierToNoiseDbHz >= one.carrierToNoiseDbHz)) {
-      if (!Number.isNaN(one.carrierToNoiseDbHz)) {
-        before.carrierToNoiseDbHz = one.carrierToNoiseDbHz;
-      }
-    }
+  #columns() {
+    return [this.#keys, this.#elevationDeg, this.#azimuthDeg, this.#carrierToNoiseDbHz];
+  }
+
+  #grow(): void {
+    const [keys, elevationDeg, azimuthDeg, carrierToNoiseDbHz] = [
+      this.#keys,
+      this.#elevationDeg,
+      this.#azimuthDeg,
+      this.#carrierToNoiseDbHz,
+    ];
+    const room = 2 * keys.length;
+    this.#keys = new Int32Array(room);
+    this.#elevationDeg = new Float64Array(room);
+    this.#azimuthDeg = new Float64Array(room);
+    this.#carrierToNoiseDbHz = new Float64Array(room);
+    this.#keys.set(keys);
+    this.#elevationDeg.set(elevationDeg);
+    this.#azimuthDeg.set(azimuthDeg);
+    this.#carrierToNoiseDbHz.set(carrierToNoiseDbHz);
   }
 
   /** Adds what was gathered, in order of system and number, and starts anew. */
   moveTo(builder: SatellitesBuilder, gpsSeconds: number): void {
-    const keys = [...this.#seen.keys()].sort((a, b) => a - b);
-    for (const key of keys) {
-      const seen = this.#seen.get(key);
-      if (seen === undefined) continue;
-      const system = Math.trunc(key / 65_536);
-      builder.add({gpsSeconds, system, satelliteId: key % 65_536, ...seen});
+    for (let k = 0; k < this.#count; k += 1) {
+      const key = this.#keys[k] ?? 0;
+      builder.add({
+        gpsSeconds,
+        system: Math.trunc(key / NUMBERS_PER_SYSTEM),
+        satelliteId: key % NUMBERS_PER_SYSTEM,
+        elevationDeg: this.#elevationDeg[k] ?? Number.NaN,
+        azimuthDeg: this.#azimuthDeg[k] ?? Number.NaN,
+        carrierToNoiseDbHz: this.#carrierToNoiseDbHz[k] ?? Number.NaN,
+      });
     }
-    this.#seen.clear();
+    this.#count = 0;
   }
 }

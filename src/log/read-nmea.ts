@@ -1,7 +1,7 @@
 import {NmeaAssembler} from './assemble.ts';
 import {BatchCutter} from './batch-cutter.ts';
 import type {LogContents, LogReader, ReadOptions} from './contents.ts';
-import {NmeaDecoder} from './decode.ts';
+import {type NmeaBatch, NmeaDecoder} from './decode.ts';
 import {nmeaContents} from './nmea-contents.ts';
 
 /** Bytes decoded at a time: what is decoded stays in the cache until it is assembled. */
@@ -22,8 +22,23 @@ export function createNmeaReader(options: ReadOptions): LogReader {
       cutter.add(chunk);
     },
     finish(): LogContents {
-      cutter.finish();
+      cutter.finish(true);
       return nmeaContents(assembler.finish(), {...options, bytes});
     },
+  };
+}
+
+/** Takes batches that were decoded elsewhere, in the order of the log. */
+export interface BatchReader {
+  add(batch: NmeaBatch): void;
+  finish(bytes: number): LogContents;
+}
+
+/** The second half of `createNmeaReader`, for a log whose stretches several threads decode. */
+export function createBatchReader(options: ReadOptions): BatchReader {
+  const assembler = new NmeaAssembler();
+  return {
+    add: (batch) => assembler.add(batch),
+    finish: (bytes) => nmeaContents(assembler.finish(), {...options, bytes}),
   };
 }

@@ -2,8 +2,8 @@
  * What the sentences of one batch of bytes say, as columns per kind of sentence: `count` rows, NaN
  * where a field is empty. Every row is decoded from its own line alone.
  *
- * A decoder fills the same arrays again for each batch; `packBatch` makes a copy of exact length
- * that can travel between threads.
+ * A decoder fills the same arrays again and again. In memory that threads share, one thread fills
+ * them and another reads them; the counts travel apart from them.
  */
 interface Columns {
   count: number;
@@ -153,12 +153,16 @@ export function mostSentences(batchBytes: number): number {
  *
  * They are sized for the worst case; memory that is never written is not resident.
  */
-export function createSentenceColumns(batchBytes: number): SentenceColumns {
+export function createSentenceColumns(
+  batchBytes: number,
+  Memory: ArrayBufferConstructor | SharedArrayBufferConstructor = ArrayBuffer,
+): SentenceColumns {
   const rows = mostSentences(batchBytes);
-  const f64 = () => new Float64Array(rows);
-  const u32 = () => new Uint32Array(rows);
-  const u16 = () => new Uint16Array(rows);
-  const u8 = () => new Uint8Array(rows);
+  const f64 = () => new Float64Array(new Memory(8 * rows));
+  const i32 = () => new Int32Array(new Memory(4 * rows));
+  const u32 = () => new Uint32Array(new Memory(4 * rows));
+  const u16 = (count = rows) => new Uint16Array(new Memory(2 * count));
+  const u8 = (count = rows) => new Uint8Array(new Memory(count));
   return {
     order: {count: 0, kind: u8()},
     fixes: {
@@ -181,7 +185,7 @@ export function createSentenceColumns(batchBytes: number): SentenceColumns {
       timeOfDayS: f64(),
       latitudeDeg: f64(),
       longitudeDeg: f64(),
-      dateDays: new Int32Array(rows),
+      dateDays: i32(),
       status: u8(),
       fixClass: u8(),
       talker: u16(),
@@ -203,13 +207,45 @@ export function createSentenceColumns(batchBytes: number): SentenceColumns {
       sigmaLongitudeM: f64(),
       sigmaAltitudeM: f64(),
     },
-    zda: {count: 0, timeOfDayS: f64(), dateDays: new Int32Array(rows)},
+    zda: {count: 0, timeOfDayS: f64(), dateDays: i32()},
     gsa: {count: 0, pdop: f64(), hdop: f64(), vdop: f64(), ids: u8()},
-    gsaIds: {count: 0, id: new Uint16Array(batchBytes)},
+    gsaIds: {count: 0, id: u16(batchBytes)},
     gsv: {count: 0, bytes: u16(), lineFeedsBefore: u32()},
-    gsvText: {count: 0, byte: new Uint8Array(batchBytes)},
+    gsvText: {count: 0, byte: u8(batchBytes)},
     decimals: {fixes: noDecimals(), rmc: noDecimals(), gll: noDecimals()},
   };
+}
+
+/** How many rows each part has, in the order of `PARTS`, and the decimals: all but the arrays. */
+export interface ColumnCounts {
+  readonly counts: readonly number[];
+  readonly decimals: SentenceColumns['decimals'];
+}
+
+const PARTS = [
+  'order',
+  'fixes',
+  'rmc',
+  'gll',
+  'gst',
+  'zda',
+  'gsa',
+  'gsaIds',
+  'gsv',
+  'gsvText',
+] as const;
+
+/** What a thread has to be told, beside the memory it shares, to read the columns. */
+export function countsOf(columns: SentenceColumns): ColumnCounts {
+  return {counts: PARTS.map((part) => columns[part].count), decimals: columns.decimals};
+}
+
+/** Columns whose arrays another thread has filled, with the counts that it told. */
+export function takeCounts(columns: SentenceColumns, {counts, decimals}: ColumnCounts): void {
+  for (const [i, part] of PARTS.entries()) columns[part].count = counts[i] ?? 0;
+  for (const source of ['fixes', 'rmc', 'gll'] as const) {
+    Object.assign(columns.decimals[source], decimals[source]);
+  }
 }
 
 export function noDecimals(): PrintedDecimals {
@@ -217,47 +253,8 @@ export function noDecimals(): PrintedDecimals {
 }
 
 export function clearSentenceColumns(columns: SentenceColumns): void {
-  for (const part of [
-    columns.order,
-    columns.fixes,
-    columns.rmc,
-    columns.gll,
-    columns.gst,
-    columns.zda,
-    columns.gsa,
-    columns.gsaIds,
-    columns.gsv,
-    columns.gsvText,
-  ]) {
-    part.count = 0;
-  }
+  for (const part of PARTS) columns[part].count = 0;
   for (const decimals of [columns.decimals.fixes, columns.decimals.rmc, columns.decimals.gll]) {
     Object.assign(decimals, noDecimals());
   }
-}
-
-/** The same values in arrays that are no longer than they need be and share no memory. */
-export function packSentenceColumns(columns: SentenceColumns): SentenceColumns {
-  return {
-    order: packed(columns.order),
-    fixes: packed(columns.fixes),
-    rmc: packed(columns.rmc),
-    gll: packed(columns.gll),
-    gst: packed(columns.gst),
-    zda: packed(columns.zda),
-    gsa: packed(columns.gsa),
-    gsaIds: packed(columns.gsaIds),
-    gsv: packed(columns.gsv),
-    gsvText: packed(columns.gsvText),
-    decimals: structuredClone(columns.decimals),
-  };
-}
-
-type TypedArray = Float64Array | Int32Array | Uint32Array | Uint16Array | Uint8Array;
-
-function packed<T extends Columns>(columns: T): T {
-  const entries = Object.entries(columns).map(([name, value]: [string, TypedArray | number]) =>
-    typeof value === 'number' ? [name, value] : [name, value.slice(0, columns.count)],
-  );
-  return Object.fromEntries(entries) as T;
 }

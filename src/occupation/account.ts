@@ -1,6 +1,7 @@
 import {type Epochs, SatelliteSystem, type Satellites} from '../epochs/epochs.ts';
 import {DEGREES_PER_RADIAN} from '../geodesy/angle.ts';
 import {type Ellipsoid, meridianRadiusM, primeVerticalRadiusM} from '../geodesy/ellipsoid.ts';
+import {orderStatisticInPlace} from '../statistics/quantile.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import type {SystemSummary} from './contents-result.ts';
 import type {EpochAccount, InputAccount, PerAxis} from './result.ts';
@@ -96,9 +97,9 @@ export function medianIntervalS(epochs: Epochs): number | null {
     if (stepS > 0) steps[count++] = stepS;
   }
   if (count === 0) return null;
-  const sorted = steps.subarray(0, count).sort();
+  const medianS = orderStatisticInPlace(steps.subarray(0, count), count >> 1);
   // Times carry at most a few decimals; what is left of the subtraction is no information.
-  return Number(sorted[count >> 1]!.toFixed(4));
+  return Number(medianS.toFixed(4));
 }
 
 function gapsOf(epochs: Epochs, intervalS: number | null): EpochAccount['gaps'] {
@@ -139,8 +140,13 @@ function resolutionM(
 }
 
 function middleFinite(column: Float64Array): number {
-  const finite = column.filter(Number.isFinite);
-  return finite.length === 0 ? Number.NaN : finite[finite.length >> 1]!;
+  let finite = 0;
+  for (let i = 0; i < column.length; i++) if (Number.isFinite(column[i]!)) finite++;
+  let before = finite >> 1;
+  for (let i = 0; i < column.length; i++) {
+    if (Number.isFinite(column[i]!) && before-- === 0) return column[i]!;
+  }
+  return Number.NaN;
 }
 
 function finiteOrNull(value: number): number | null {
@@ -167,25 +173,35 @@ const SYSTEM_NAMES: Record<number, string> = {
   [SatelliteSystem.navic]: 'NavIC',
 };
 
+/** Numbers of satellites are below this. */
+const SATELLITE_NUMBERS = 65_536;
+
 /** Satellites seen and median signal strength, per system, in the order of their numbers. */
 export function satelliteSummary(satellites: Satellites): SystemSummary[] {
-  const seen = new Map<number, {ids: Set<number>; strengths: number[]}>();
+  const rows = new Uint32Array(256);
+  for (let i = 0; i < satellites.count; i++) rows[satellites.system[i]!]! += 1;
+  return [...rows.keys()]
+    .filter((system) => rows[system]! > 0)
+    .map((system) => systemSummary(satellites, system, rows[system]!));
+}
+
+function systemSummary(satellites: Satellites, system: number, rows: number): SystemSummary {
+  const seen = new Uint8Array(SATELLITE_NUMBERS);
+  const strengths = new Float64Array(rows);
+  let count = 0;
+  let known = 0;
   for (let i = 0; i < satellites.count; i++) {
-    const system = satellites.system[i]!;
-    const entry = seen.get(system) ?? {ids: new Set<number>(), strengths: []};
-    entry.ids.add(satellites.satelliteId[i]!);
+    if (satellites.system[i] !== system) continue;
+    const number = satellites.satelliteId[i]!;
+    if (seen[number] === 0) count++;
+    seen[number] = 1;
     const strength = satellites.carrierToNoiseDbHz[i]!;
-    if (!Number.isNaN(strength)) entry.strengths.push(strength);
-    seen.set(system, entry);
+    if (!Number.isNaN(strength)) strengths[known++] = strength;
   }
-  return [...seen.entries()]
-    .sort(([a], [b]) => a - b)
-    .map(([system, {ids, strengths}]) => ({
-      system: SYSTEM_NAMES[system] ?? 'system not stated',
-      satellites: ids.size,
-      medianCarrierToNoiseDbHz:
-        strengths.length === 0
-          ? null
-          : (strengths.sort((a, b) => a - b)[strengths.length >> 1] ?? null),
-    }));
+  return {
+    system: SYSTEM_NAMES[system] ?? 'system not stated',
+    satellites: count,
+    medianCarrierToNoiseDbHz:
+      known === 0 ? null : orderStatisticInPlace(strengths.subarray(0, known), known >> 1),
+  };
 }

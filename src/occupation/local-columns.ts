@@ -1,6 +1,7 @@
 import type {Epochs} from '../epochs/epochs.ts';
 import type {Ellipsoid} from '../geodesy/ellipsoid.ts';
 import {type EnuColumns, enuColumns, type LocalFrame, localFrame} from '../geodesy/local.ts';
+import {orderStatisticInPlace} from '../statistics/quantile.ts';
 import {mark} from './screen.ts';
 
 /** Which height the record gives, and so what `up` is a difference of. */
@@ -88,8 +89,7 @@ function heightColumn(epochs: Epochs, heightKind: HeightKind): Float64Array {
 }
 
 function medianOf(column: Float64Array, kept: Uint32Array): number {
-  const values = taken(column, kept).sort();
-  return values[values.length >> 1]!;
+  return orderStatisticInPlace(taken(column, kept), kept.length >> 1);
 }
 
 /** Longitudes on both sides of the antimeridian are brought to one side first. */
@@ -100,7 +100,6 @@ function medianLongitudeDeg(column: Float64Array, kept: Uint32Array): number {
     if (values[i]! - first > 180) values[i]! -= 360;
     if (values[i]! - first < -180) values[i]! += 360;
   }
-  values.sort();
-  const middle = values[values.length >> 1]!;
+  const middle = orderStatisticInPlace(values, values.length >> 1);
   return middle > 180 ? middle - 360 : middle < -180 ? middle + 360 : middle;
 }

@@ -1,3 +1,5 @@
+import {orderStatisticInPlace} from '../statistics/quantile.ts';
+
 /**
  * Was the receiver being carried about, and when did it stand?
  *
@@ -36,18 +38,29 @@ export interface StandingPeriod {
 
 /**
  * 1 for every epoch at which the mean position of the next seconds differs from that of the last
- * ones by more than walking at one knot would make it. Two passes with moving windows, O(n).
+ * ones by more than walking at one knot would make it: moving windows over running sums, O(n).
  */
 export function travelFlags(track: Track): Uint8Array {
-  const count = track.gpsSeconds.length;
+  const {gpsSeconds} = track;
+  const count = gpsSeconds.length;
   const moving = new Uint8Array(count);
-  const windowS = Math.max(AVERAGING_S, 2.5 * typicalStepS(track.gpsSeconds));
-  const before = windowMeans(track, -windowS);
-  const after = windowMeans(track, windowS);
+  const windowS = Math.max(AVERAGING_S, 2.5 * typicalStepS(gpsSeconds));
+  const timeS = runningSum(gpsSeconds);
+  const eastM = runningSum(track.eastM);
+  const northM = runningSum(track.northM);
+  // The windows of an epoch are from..i and i..to, itself included; both edges only move on.
+  let from = 0;
+  let to = 0;
   for (let i = 0; i < count; i++) {
-    const elapsedS = after.timeS[i]! - before.timeS[i]!;
-    const east = after.eastM[i]! - before.eastM[i]!;
-    const north = after.northM[i]! - before.northM[i]!;
+    while (gpsSeconds[from]! < gpsSeconds[i]! - windowS) from++;
+    if (to < i) to = i;
+    while (to + 1 < count && gpsSeconds[to + 1]! <= gpsSeconds[i]! + windowS) to++;
+    const before = i + 1 - from;
+    const after = to + 1 - i;
+    const elapsedS = (timeS[to + 1]! - timeS[i]!) / after - (timeS[i + 1]! - timeS[from]!) / before;
+    const east = (eastM[to + 1]! - eastM[i]!) / after - (eastM[i + 1]! - eastM[from]!) / before;
+    const north =
+      (northM[to + 1]! - northM[i]!) / after - (northM[i + 1]! - northM[from]!) / before;
     const distanceM = Math.sqrt(east * east + north * north);
     if (elapsedS > 0 && distanceM > TRAVEL_SPEED_M_PER_S * elapsedS) moving[i] = 1;
   }
@@ -71,7 +84,7 @@ function reachM(track: Track): number {
   const at = centre(track, 0, count - 1);
   const distances = new Float64Array(count);
   for (let i = 0; i < count; i++) distances[i] = distanceM(track, i, at);
-  return distances.sort()[Math.floor(0.95 * (count - 1))]!;
+  return orderStatisticInPlace(distances, Math.floor(0.95 * (count - 1)));
 }
 
 /** The periods during which the receiver stood, in time order. */
@@ -87,49 +100,7 @@ export function standingPeriods(track: Track): StandingPeriod[] {
   return whole ? runs : lasting;
 }
 
-interface WindowMeans {
-  readonly timeS: Float64Array;
-  readonly eastM: Float64Array;
-  readonly northM: Float64Array;
-}
-
-/**
- * Means over the epochs from each one on to `spanS` later, itself included (earlier when `spanS` is
- * negative), by running sums about the first epoch, so that large coordinates cost no digits.
- */
-function windowMeans(track: Track, spanS: number): WindowMeans {
-  const {gpsSeconds, eastM, northM} = track;
-  const count = gpsSeconds.length;
-  const sums = {
-    timeS: runningSum(gpsSeconds),
-    eastM: runningSum(eastM),
-    northM: runningSum(northM),
-  };
-  const means = {
-    timeS: new Float64Array(count),
-    eastM: new Float64Array(count),
-    northM: new Float64Array(count),
-  };
-  let edge = 0;
-  for (let i = 0; i < count; i++) {
-    let from = i;
-    let to = i + 1;
-    if (spanS > 0) {
-      if (edge <= i) edge = i + 1;
-      while (edge < count && gpsSeconds[edge]! <= gpsSeconds[i]! + spanS) edge++;
-      to = edge;
-    } else {
-      while (gpsSeconds[edge]! < gpsSeconds[i]! + spanS) edge++;
-      from = edge;
-    }
-    const epochs = to - from;
-    means.timeS[i] = (sums.timeS[to]! - sums.timeS[from]!) / epochs;
-    means.eastM[i] = (sums.eastM[to]! - sums.eastM[from]!) / epochs;
-    means.northM[i] = (sums.northM[to]! - sums.northM[from]!) / epochs;
-  }
-  return means;
-}
-
+/** Sums of what comes before each element, about the first, so that large times cost no digits. */
 function runningSum(values: Float64Array): Float64Array {
   const origin = values.length > 0 ? values[0]! : 0;
   const sums = new Float64Array(values.length + 1);
@@ -141,8 +112,7 @@ function typicalStepS(gpsSeconds: Float64Array): number {
   if (gpsSeconds.length < 2) return 0;
   const steps = new Float64Array(gpsSeconds.length - 1);
   for (let i = 0; i < steps.length; i++) steps[i] = gpsSeconds[i + 1]! - gpsSeconds[i]!;
-  steps.sort();
-  return steps[steps.length >> 1]!;
+  return orderStatisticInPlace(steps, steps.length >> 1);
 }
 
 function endsApartM(track: Track): number {
@@ -162,8 +132,7 @@ function centre(track: Track, first: number, last: number): {eastM: number; nort
 }
 
 function middle(values: Float64Array): number {
-  values.sort();
-  return values[values.length >> 1]!;
+  return orderStatisticInPlace(values, values.length >> 1);
 }
 
 function runsOf(flags: Uint8Array, wanted: number): StandingPeriod[] {

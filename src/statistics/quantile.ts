@@ -33,6 +33,15 @@ export function medianInPlace(buffer: Float64Array, count: number): number {
   return quantileInPlace(buffer.subarray(0, count), 0.5);
 }
 
+/**
+ * The value that a full sort would put at an index, without sorting: `values.sort()[rank]` in O(n).
+ * The values, none of them NaN, are left partly sorted.
+ */
+export function orderStatisticInPlace(values: Float64Array, rank: number): number {
+  select(values, rank, 0, values.length - 1);
+  return values[rank]!;
+}
+
 function refuse(values: Float64Array): void {
   if (values.length === 0) throw new RangeError('quantile: need at least one value');
   for (let i = 0; i < values.length; i++) {

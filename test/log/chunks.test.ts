@@ -2,11 +2,25 @@ import {isDeepStrictEqual} from 'node:util';
 import {describe, expect, test} from 'vitest';
 import {NmeaAssembler} from '../../src/log/assemble.ts';
 import type {LogContents} from '../../src/log/contents.ts';
-import {BATCH_PADDING_BYTES, NmeaDecoder, packBatch} from '../../src/log/decode.ts';
+import {BATCH_PADDING_BYTES, NmeaDecoder} from '../../src/log/decode.ts';
 import {nmeaContents} from '../../src/log/nmea-contents.ts';
 import {BATCH_BYTES, createNmeaReader} from '../../src/log/read-nmea.ts';
+import {
+  countsOf,
+  createSentenceColumns,
+  noDecimals,
+  type SentenceColumns,
+  takeCounts,
+} from '../../src/log/sentence-columns.ts';
 import {accountOf, OPTIONS, readBytes, realLog} from './nmea-text.ts';
 import {uglyLog} from './ugly.ts';
+
+/** The same memory as another thread has it: the arrays, and neither counts nor decimals. */
+function seenByAnother(columns: SentenceColumns): SentenceColumns {
+  const parts = Object.entries(columns).map(([name, part]) => [name, {...part, count: 0}]);
+  const decimals = {fixes: noDecimals(), rmc: noDecimals(), gll: noDecimals()};
+  return {...Object.fromEntries(parts), decimals};
+}
 
 /** Decodes the stretches between the cuts by one decoder each, as workers would. */
 function readInBatches(bytes: Uint8Array, cuts: readonly number[]): LogContents {
@@ -17,9 +31,12 @@ function readInBatches(bytes: Uint8Array, cuts: readonly number[]): LogContents 
     const part = bytes.subarray(edges[k], edges[k + 1]);
     const padded = new Uint8Array(part.length + BATCH_PADDING_BYTES);
     padded.set(part);
-    const batch = decoder.decode(padded, part.length, k + 2 === edges.length);
-    // Packed batches have travelled between threads.
-    assembler.add(structuredClone(packBatch(batch)));
+    const filled = createSentenceColumns(part.length, SharedArrayBuffer);
+    const {account, datums} = decoder.decode(padded, part.length, k + 2 === edges.length, filled);
+    // The arrays are shared memory; all else has travelled between threads.
+    const columns = seenByAnother(filled);
+    takeCounts(columns, structuredClone(countsOf(filled)));
+    assembler.add({columns, account: structuredClone(account), datums});
   }
   return nmeaContents(assembler.finish(), {...OPTIONS, bytes: bytes.length});
 }

@@ -1,26 +1,32 @@
 import {describe, expect, test} from 'vitest';
 import {BatchCutter} from '../../src/log/batch-cutter.ts';
-import {buffersOfBatch, NmeaDecoder, packBatch} from '../../src/log/decode.ts';
+import {BATCH_PADDING_BYTES, NmeaDecoder} from '../../src/log/decode.ts';
+import {countsOf, createSentenceColumns, takeCounts} from '../../src/log/sentence-columns.ts';
 import {decoded} from './decoded.ts';
 import {bytesOf, gga, lines} from './nmea-text.ts';
 
-describe('batches between threads', () => {
-  const batch = decoded(bytesOf(lines(gga('120000.00'), gga('120001.00'))));
-
-  test('a packed batch is no longer than its rows', () => {
-    const {fixes, gst, order} = packBatch(batch).columns;
-    expect(fixes.latitudeDeg).toHaveLength(2);
-    expect(fixes.latitudeDeg.buffer.byteLength).toBe(16);
-    expect(order.kind).toHaveLength(2);
-    expect(gst.timeOfDayS).toHaveLength(0);
+describe('columns between threads', () => {
+  test('a decoder fills the columns that it is given, and its own when none are', () => {
+    const bytes = bytesOf(lines(gga('120000.00'), gga('120001.00')));
+    const padded = new Uint8Array(bytes.length + BATCH_PADDING_BYTES);
+    padded.set(bytes);
+    const decoder = new NmeaDecoder({batchBytes: bytes.length, trustAbsentChecksum: false});
+    const shared = createSentenceColumns(bytes.length, SharedArrayBuffer);
+    expect(decoder.decode(padded, bytes.length, true, shared).columns).toBe(shared);
+    expect(shared.fixes.count).toBe(2);
+    expect(shared.fixes.timeOfDayS.buffer).toBeInstanceOf(SharedArrayBuffer);
+    const own = decoder.decode(padded, bytes.length, true).columns;
+    expect(own).not.toBe(shared);
+    expect(own.fixes.latitudeDeg[1]).toBe(shared.fixes.latitudeDeg[1]);
   });
 
-  test('its buffers can be handed over and arrive unchanged', () => {
-    const packed = packBatch(batch);
-    const expected = structuredClone(packed);
-    const arrived = structuredClone(packed, {transfer: buffersOfBatch(packed)});
-    expect(arrived).toEqual(expected);
-    expect(packed.columns.fixes.latitudeDeg).toHaveLength(0);
+  test('the counts and decimals that travel make another view of the same memory equal', () => {
+    const {columns} = decoded(bytesOf(lines(gga('120000.00'), gga('120001.00'))));
+    const other = createSentenceColumns(1);
+    takeCounts(other, structuredClone(countsOf(columns)));
+    expect(countsOf(other)).toEqual(countsOf(columns));
+    expect(other.fixes.count).toBe(2);
+    expect(other.decimals.fixes.latitude).toBeGreaterThan(0);
   });
 });
 
