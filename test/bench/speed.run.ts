@@ -1,82 +1,201 @@
-import {mkdtempSync, rmSync, statSync} from 'node:fs';
+import {spawnSync} from 'node:child_process';
+import {mkdtempSync, rmSync, statSync, writeFileSync} from 'node:fs';
 import {tmpdir} from 'node:os';
 import {join, resolve} from 'node:path';
 import {afterAll, beforeAll, describe, test} from 'vitest';
+import {analyseSession} from '../../src/statistics/analyse-session.ts';
+import {blockMedianScreen} from '../../src/statistics/robust.ts';
+import {scenarioNamed} from '../simulate/scenarios.ts';
+import {simulate} from '../simulate/simulate.ts';
 import {writeDays} from './logs.ts';
-import {type Cost, costOf, medianCost} from './whole-command.ts';
+import {BenchTable} from './table.ts';
+import {type Cost, costOf, medianCost, wallOf} from './whole-command.ts';
 
 /*
- * Speed and memory as ratios within one run. Nothing is asserted: machines differ, and a slow
- * neighbour is no defect. Read the table.
+ * Speed and memory as ratios within one run, beside what a user would do otherwise. Nothing is
+ * asserted: machines differ, and a slow neighbour is no defect. Read the table.
  */
 
-const RUNS = Number(process.env.BENCH_RUNS ?? 3);
+const RUNS = Number(process.env.BENCH_RUNS ?? 5);
+/** Days at 1 Hz in the long log and the longest: 53 MB each. */
+const LONG_DAYS = Number(process.env.BENCH_LONG_DAYS ?? 6);
+const LONGEST_DAYS = Number(process.env.BENCH_LONGEST_DAYS ?? 19);
 const HERE = import.meta.dirname;
 const STILLMARK = resolve(HERE, '../../dist/cli/main.js');
-const rows: string[] = [];
+const RESULTS = resolve(HERE, '../../bench-results/speed.json');
+const AWK_FIELDS = '$1 ~ /GGA$/ {print $2, $3, $5, $10}';
+const table = new BenchTable();
 let folder = '';
 let day = '';
+let long = '';
 
 function script(name: string): string {
   return join(HERE, name);
 }
 
-function row(what: string, cost: Cost, versus?: {name: string; cost: Cost}): void {
-  const ratio =
-    versus === undefined ? '' : `  ${(cost.wallS / versus.cost.wallS).toFixed(2)} × ${versus.name}`;
-  rows.push(
-    `${what.padEnd(44)} ${cost.wallS.toFixed(2).padStart(7)} s wall ${cost.cpuS.toFixed(2).padStart(7)} s cpu ${cost.peakMb.toFixed(0).padStart(5)} MB${ratio}`,
+function contents(log: string): Cost {
+  return costOf(STILLMARK, ['contents', log, '--quiet']);
+}
+
+function megabytes(path: string): number {
+  return statSync(path).size / 1e6;
+}
+
+/** A Python that has what the script needs; undefined when there is none. */
+function python(): string | undefined {
+  const modules = 'import numpy, pynmea2, pyproj';
+  return ['python3', '/usr/bin/python3'].find(
+    (command) => wallOf(command, ['-c', modules]) !== undefined,
   );
 }
 
 beforeAll(() => {
   folder = mkdtempSync(join(tmpdir(), 'stillmark-bench-'));
   day = join(folder, 'day.nmea');
+  long = join(folder, 'long.nmea');
   writeDays(day, 1);
-  rows.push(`a day at 1 Hz: ${(statSync(day).size / 1e6).toFixed(0)} MB, medians of ${RUNS} runs`);
+  writeDays(long, LONG_DAYS);
+  table.remark(`medians of ${RUNS} runs`);
 });
 
 afterAll(() => {
   rmSync(folder, {recursive: true});
-  process.stdout.write(`\n${rows.join('\n')}\n`);
+  table.print();
+  table.save(RESULTS);
+  process.stdout.write('also in bench-results/speed.json\n');
 });
 
 describe('whole commands', () => {
   test('cold start', () => {
     const floor = medianCost(RUNS, () => costOf(script('one-command.mjs'), []));
-    row('the smallest yargs program, --help', floor);
+    table.row('the smallest yargs program, --help', floor);
     const help = medianCost(RUNS, () => costOf(STILLMARK, ['--help']));
-    row('stillmark --help', help, {name: 'the smallest', cost: floor});
+    table.row('stillmark --help', help, {'the smallest': floor});
   });
 
   test('a day at 1 Hz', () => {
+    table.remark(`a day at 1 Hz, seven sentences an epoch: ${megabytes(day).toFixed(0)} MB`);
     const parse = medianCost(RUNS, () => costOf(script('parse-line-by-line.mjs'), [day]));
-    row('nmea-simple, line by line', parse);
-    const versus = {name: 'nmea-simple', cost: parse};
-    const contents = medianCost(RUNS, () => costOf(STILLMARK, ['contents', day, '--quiet']));
-    row('stillmark contents', contents, versus);
+    table.row('nmea-simple, line by line', parse);
+    const command = python();
+    if (command === undefined) {
+      table.remark('no Python with numpy, pynmea2 and pyproj: left out');
+    }
+    const inPython =
+      command === undefined ? undefined : wallOf(command, [script('python-baseline.py'), day]);
+    if (inPython !== undefined) table.row('Python: parse, project, mean and spread', inPython);
+    const versus = {'nmea-simple': parse, Python: inPython};
+    const listed = table.row(
+      'stillmark contents',
+      medianCost(RUNS, () => contents(day)),
+      versus,
+    );
     const result = join(folder, 'result.json');
     const reduce = medianCost(RUNS, () =>
       costOf(STILLMARK, ['reduce', day, '--quiet', '--result', result]),
     );
-    row('stillmark reduce --result', reduce, versus);
+    table.row('stillmark reduce --result', reduce, {...versus, contents: listed});
     const report = join(folder, 'report.html');
     const full = medianCost(RUNS, () =>
       costOf(STILLMARK, ['reduce', day, '--quiet', '--report', report]),
     );
-    row('stillmark reduce --report', full, versus);
-    rows.push(`report: ${(statSync(report).size / 1000).toFixed(0)} kB`);
+    table.row('stillmark reduce --report', full, versus);
+    table.remark(`report: ${(statSync(report).size / 1000).toFixed(0)} kB`);
+  });
+
+  test('a long log', () => {
+    table.remark(`${LONG_DAYS} days at 1 Hz: ${megabytes(long).toFixed(0)} MB`);
+    const others = {
+      'wc -l': wallOf('wc', ['-l', long]) && medianCost(RUNS, () => wallOf('wc', ['-l', long])!),
+      awk:
+        wallOf('awk', ['-F,', AWK_FIELDS, long]) &&
+        medianCost(RUNS, () => wallOf('awk', ['-F,', AWK_FIELDS, long])!),
+      'nmea-simple': costOf(script('parse-line-by-line.mjs'), [long]),
+    };
+    for (const [name, cost] of Object.entries(others)) {
+      if (cost === undefined) table.remark(`${name}: not there`);
+      else table.row(name, cost);
+    }
+    const listed = medianCost(RUNS, () => contents(long));
+    table.row('stillmark contents', listed, others);
+    const result = join(folder, 'result.json');
+    const reduce = medianCost(RUNS, () =>
+      costOf(STILLMARK, ['reduce', long, '--quiet', '--result', result]),
+    );
+    table.row('stillmark reduce --result', reduce, {contents: listed});
+    // Standard input is read by one thread: the same work undivided.
+    const undivided = medianCost(RUNS, () => {
+      const cost = wallOf('sh', ['-c', `node ${STILLMARK} contents - --quiet < ${long}`]);
+      if (cost === undefined) throw new Error('contents of standard input failed');
+      return cost;
+    });
+    table.row('stillmark contents, one thread', undivided, {'several threads': listed});
   });
 
   test('growth with the size of the log', () => {
-    const week = join(folder, 'days.nmea');
-    writeDays(week, 4);
-    const small = costOf(STILLMARK, ['contents', day, '--quiet']);
-    const large = costOf(STILLMARK, ['contents', week, '--quiet']);
-    const [smallMb, largeMb] = [statSync(day).size / 1e6, statSync(week).size / 1e6];
-    row(`stillmark contents, ${largeMb.toFixed(0)} MB`, large);
-    rows.push(
-      `four times the bytes: ${(large.wallS / small.wallS).toFixed(2)} × the time, ${((large.peakMb - small.peakMb) / (largeMb - smallMb)).toFixed(2)} MB of memory a MB of log`,
+    const longest = join(folder, 'longest.nmea');
+    writeDays(longest, LONGEST_DAYS);
+    const empty = join(folder, 'one-line.nmea');
+    writeFileSync(empty, '$GPZDA,120000.00,04,05,2026,00,00*6D\r\n');
+    const [none, some, most] = [empty, long, longest].map((log) =>
+      medianCost(Math.min(RUNS, 3), () => contents(log)),
     );
+    table.row('stillmark contents, one line', none!);
+    table.row(`stillmark contents, ${megabytes(longest).toFixed(0)} MB`, most!);
+    const perByte = (most!.wallS - none!.wallS) / megabytes(longest);
+    const before = (some!.wallS - none!.wallS) / megabytes(long);
+    table.remark(
+      `time a megabyte, ${megabytes(longest).toFixed(0)} MB over ${megabytes(long).toFixed(0)} MB: ${(perByte / before).toFixed(2)} ×`,
+    );
+  });
+});
+
+describe('conversion', () => {
+  test('a million points, geocentric to geodetic', () => {
+    const {stdout} = spawnSync('node', [script('convert-points.mjs')], {encoding: 'utf8'});
+    const {oursS, proj4jsS} = JSON.parse(stdout) as {oursS: number; proj4jsS: number};
+    const cost = (wallS: number) => ({wallS, cpuS: Number.NaN, peakMb: Number.NaN});
+    const theirs = table.row('a million points by proj4js', cost(proj4jsS));
+    table.row('a million points by stillmark', cost(oursS), {proj4js: theirs});
+  });
+
+  test('a list of a million rows', () => {
+    const list = join(folder, 'million.csv');
+    const rows = Array.from({length: 1_000_000}, (_, i) => {
+      const latitude = 45 + ((i * 0.618_034) % 10);
+      const longitude = 6 + ((i * 0.414_214) % 6);
+      return `P${i},${latitude.toFixed(9)},${longitude.toFixed(9)},${(i % 500).toFixed(4)}`;
+    });
+    writeFileSync(list, `name,latitude,longitude,height\n${rows.join('\n')}\n`);
+    const output = join(folder, 'converted.csv');
+    for (const to of ['geocentric', 'UTM 32N']) {
+      const words = ['convert', '--list', list, '--to', to, '--output', output, '--quiet'];
+      table.row(
+        `stillmark convert, a million rows to ${to}`,
+        medianCost(RUNS, () => costOf(STILLMARK, words)),
+      );
+    }
+  });
+});
+
+describe('statistics', () => {
+  test.each([86_400, 1_000_000, 1_728_000])('of an occupation of %d epochs', (epochs) => {
+    const scenario = {...scenarioNamed('F'), durationS: 86_400, intervalS: 86_400 / epochs};
+    const {elapsedS, eastM, northM, upM} = simulate(scenario, 1);
+    const components = [eastM, northM, upM];
+    const resolutions = [0, 0, 0];
+    const times = Array.from({length: Math.min(RUNS, 3)}, () => {
+      const before = process.cpuUsage();
+      blockMedianScreen({elapsedS, components, resolutions});
+      analyseSession({elapsedS, components, resolutions});
+      const {user, system} = process.cpuUsage(before);
+      return (user + system) / 1e6;
+    }).sort((a, b) => a - b);
+    const cpuS = times[times.length >> 1]!;
+    table.row(`complete statistics, ${epochs} epochs`, {
+      wallS: Number.NaN,
+      cpuS,
+      peakMb: Number.NaN,
+    });
   });
 });

@@ -6,6 +6,7 @@ export default defineConfig({
   test: {
     include: ['test/bench/*.run.ts'],
     testTimeout: 24 * 3600 * 1000,
+    hookTimeout: 3600 * 1000,
     pool: 'forks',
     maxWorkers: 1,
     reporters: ['dot'],
