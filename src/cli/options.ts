@@ -342,6 +342,11 @@ export function outputOptions<T>(args: Argv<T>) {
       group: PRESENTATION,
       describe: 'angles in decimal degrees, or degrees, minutes and seconds',
     },
+    'time-zone': {
+      type: 'string',
+      group: PRESENTATION,
+      describe: 'show the clock of a place beside UTC, such as Europe/Berlin',
+    },
   });
 }
 
@@ -394,4 +399,5 @@ export interface CommandArguments {
   readonly remarks?: string | undefined;
   readonly units?: 'm' | 'ft' | 'us-ft' | undefined;
   readonly angles?: 'deg' | 'dms' | undefined;
+  readonly timeZone?: string | undefined;
 }

@@ -10,6 +10,7 @@ import {type Output, readWhole} from './files.ts';
 import {logoDataUrl} from './logo.ts';
 import type {CommandArguments} from './options.ts';
 import type {ReportThread} from './report-thread.ts';
+import {timeZoneOption} from './values.ts';
 
 const OUTPUT_NAMES = ['report', 'result', 'epochs', 'geojson', 'kml', 'sinex'] as const;
 
@@ -58,6 +59,7 @@ async function reportOf(
     satellites: log.satellites,
     intervalS: result.epochs.intervalS,
     resolutionM: result.epochs.resolutionM,
+    parts: result.segments,
     settlingHalfWidthM: reduced.halfWidths95After,
   });
   const look = {
@@ -68,6 +70,7 @@ async function reportOf(
       options.logo === undefined ? null : logoDataUrl(await readWhole(options.logo), options.logo),
     units: options.units ?? sheet.units ?? 'm',
     angles: options.angles ?? 'deg',
+    timeZone: timeZoneOption('time-zone', options.timeZone),
   };
   return thread.render({result, series, options: look});
 }

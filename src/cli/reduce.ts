@@ -10,6 +10,7 @@ import {type Reduced, reduceOccupation} from '../occupation/reduce.ts';
 import type {ReduceRequest} from '../occupation/request.ts';
 import type {Result} from '../occupation/result.ts';
 import type {ScreenRules} from '../occupation/screen.ts';
+import {timeBins} from '../occupation/series/time-bins.ts';
 import type {CivilDate} from '../time/calendar.ts';
 import {utcFromGpsSeconds} from '../time/gps-time.ts';
 import {causeAdvice, causeTitle, pairTitle} from '../wording/diagnosis.ts';
@@ -32,7 +33,8 @@ import {
   withSheet,
 } from './settings.ts';
 import {STATUS} from './status.ts';
-import {resultSummary, styleOf} from './terminal.ts';
+import {resultSummary, styleOf, type TerminalStyle} from './terminal.ts';
+import {plotColumns, timePlot} from './terminal-plot.ts';
 import {
   countOption,
   ellipsoidOption,
@@ -40,12 +42,14 @@ import {
   momentOption,
   placeOption,
   requireSingle,
+  timeZoneOption,
 } from './values.ts';
 import {VERSION} from './version.ts';
 
 /** `stillmark reduce` and `stillmark check`; returns the exit status. */
 export async function reduce(typed: CommandArguments, command: Result['command']): Promise<number> {
   requireSingle({...typed});
+  timeZoneOption('time-zone', typed.timeZone);
   const companions = [
     typed.sheet,
     typed.marks,
@@ -59,13 +63,39 @@ export async function reduce(typed: CommandArguments, command: Result['command']
   const inForce = withSheet(typed, sheet);
   const marks = await marksOf(inForce.options, command);
   const thread = typed.report === undefined ? null : startReportThread();
-  const reduced = await reducedAndWritten(typed, thread, () =>
+  const {asked, reduced} = await reducedAndWritten(typed, thread, () =>
     requestOf(command, inForce, sheet, marks),
   );
   if (!outputPaths(typed).includes('-')) {
-    process.stdout.write(resultSummary(reduced.result, styleOf(process.stdout, process.env)));
+    const style = styleOf(process.stdout, process.env);
+    const plot = style.plots ? plotOf(reduced, asked, style) : [];
+    process.stdout.write(resultSummary(reduced.result, style, plot));
   }
   return exitStatus(reduced);
+}
+
+/** East, north and up over time in a few lines, for a terminal that can show them. */
+function plotOf(
+  {result, reason, eastM, northM, upM}: Reduced,
+  {log}: ReduceRequest,
+  {columns}: TerminalStyle,
+): string[] {
+  const {count, gpsSeconds} = log.epochs;
+  const firstS = gpsSeconds[0];
+  if (firstS === undefined || result.epochs.used === 0) return [];
+  const spanS = gpsSeconds[count - 1]! - firstS;
+  const bins = timeBins({
+    gpsSeconds,
+    used: reason.map((code) => (code === 0 ? 1 : 0)),
+    eastM,
+    northM,
+    upM,
+    firstS,
+    spanS,
+    intervalS: result.epochs.intervalS ?? 1,
+    bins: plotColumns(columns),
+  });
+  return timePlot(bins, spanS);
 }
 
 /** Reads, computes and writes; the thread that draws the report is ended whatever happens. */
@@ -73,12 +103,12 @@ async function reducedAndWritten(
   typed: CommandArguments,
   thread: ReportThread | null,
   request: () => Promise<ReduceRequest>,
-): Promise<Reduced> {
+): Promise<{readonly asked: ReduceRequest; readonly reduced: Reduced}> {
   try {
     const asked = await request();
     const reduced = reduceOccupation(asked);
     await writeOutputs(await outputsOf(typed, reduced, asked, thread));
-    return reduced;
+    return {asked, reduced};
   } finally {
     await thread?.close();
   }

@@ -21,6 +21,8 @@ import {headline, type Tone} from '../wording/verdict.ts';
 export interface TerminalStyle {
   readonly colour: boolean;
   readonly unicode: boolean;
+  /** Small plots: only on a terminal, and only where it shows blocks. */
+  readonly plots: boolean;
   readonly columns: number;
 }
 
@@ -53,11 +55,23 @@ export function styleOf(
   environment: Readonly<Record<string, string | undefined>>,
 ): TerminalStyle {
   const terminal = stream.isTTY === true && environment.TERM !== 'dumb';
+  const showsUnicode = !terminal || speaksUtf8(environment);
   return {
     colour: terminal && (environment.NO_COLOR ?? '') === '',
-    unicode: true,
+    unicode: showsUnicode,
+    plots: terminal && showsUnicode,
     columns: Math.min(100, Math.max(60, stream.columns ?? 100)),
   };
+}
+
+/** By the locale, as POSIX has it; systems without one are taken to be of this century. */
+function speaksUtf8({
+  LC_ALL,
+  LC_CTYPE,
+  LANG,
+}: Readonly<Record<string, string | undefined>>): boolean {
+  const locale = [LC_ALL, LC_CTYPE, LANG].find((value) => (value ?? '') !== '');
+  return locale === undefined || /utf-?8/i.test(locale);
 }
 
 function painted(text: string, paint: Paint, style: TerminalStyle): string {
@@ -65,7 +79,11 @@ function painted(text: string, paint: Paint, style: TerminalStyle): string {
 }
 
 /** The answer on one screen: verdict first, then the numbers, then what to look at. */
-export function resultSummary(result: Result, style: TerminalStyle): string {
+export function resultSummary(
+  result: Result,
+  style: TerminalStyle,
+  plot: readonly string[] = [],
+): string {
   const {tone, status, sentence} = headline(headlineFacts(result));
   const shapes = style.unicode ? SHAPES : PLAIN_SHAPES;
   const title = [shapes[tone], status.toUpperCase(), result.occupation.mark ?? '']
@@ -74,6 +92,7 @@ export function resultSummary(result: Result, style: TerminalStyle): string {
   const blocks = [
     [painted(painted(title, TONE_PAINT[tone], style), 'bold', style), ...wrapped(sentence, style)],
     numberTable(result),
+    plot,
     facts(result),
     causeLines(result, style),
     noticeLines(result.notices, style),

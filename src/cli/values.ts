@@ -4,6 +4,7 @@ import {parseAngle} from '../geodesy/angle.ts';
 import {type Ellipsoid, parseEllipsoid, WGS84} from '../geodesy/ellipsoid.ts';
 import type {Geodetic} from '../geodesy/types.ts';
 import type {CivilDate} from '../time/calendar.ts';
+import {parseDurationS} from '../time/parse-duration.ts';
 import {
   joinDateAndTime,
   momentOf,
@@ -11,6 +12,7 @@ import {
   parseDateTime,
   parseTimeOfDay,
 } from '../time/parse-time.ts';
+import {isTimeZone} from '../wording/time-zone.ts';
 
 /*
  * What people write behind an option, as typed values. Each function names the option in what it
@@ -26,17 +28,15 @@ export function lengthOption(option: string, text: string | undefined): number |
   return read.lengthM;
 }
 
-const SECONDS_PER: Readonly<Record<string, number>> = {s: 1, min: 60, h: 3600, d: 86_400};
-
 export function durationOption(option: string, text: string | undefined): number | null {
   if (text === undefined) return null;
-  const parts = /^(\d+(?:\.\d+)?)\s*(s|min|h|d)$/.exec(text.trim());
-  if (parts === null) {
+  const seconds = parseDurationS(text);
+  if (seconds === undefined) {
     throw new UsageError(
       `--${option}: need a time with its unit (s, min, h or d), such as 90s or 5min, found "${text}"`,
     );
   }
-  return Number(parts[1]) * (SECONDS_PER[parts[2] ?? ''] ?? Number.NaN);
+  return seconds;
 }
 
 export function numberOption(option: string, value: number | undefined): number | null {
@@ -105,6 +105,15 @@ function utcMoment(text: string): number | null {
   if (read.kind === 'refused') return null;
   const moment = momentOf(read, 'utc');
   return moment.kind === 'refused' ? null : moment.gpsSeconds;
+}
+
+/** A zone of the IANA database, for display. */
+export function timeZoneOption(option: string, text: string | undefined): string | null {
+  if (text === undefined) return null;
+  if (isTimeZone(text)) return text;
+  throw new UsageError(
+    `--${option}: need a time zone such as Europe/Berlin or Australia/Sydney, found "${text}"`,
+  );
 }
 
 /** Latitude, longitude and ellipsoidal height, separated by commas. */

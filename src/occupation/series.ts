@@ -1,4 +1,5 @@
 import type {Epochs, Satellites} from '../epochs/epochs.ts';
+import {isoUtc} from '../time/gps-time.ts';
 import type {PerAxis} from './result.ts';
 import {type Autocorrelation, autocorrelationOf} from './series/autocorrelation.ts';
 import {type Histogram, histogramOf} from './series/histogram.ts';
@@ -7,7 +8,7 @@ import {type Settling, type SettlingHalfWidth, settlingOf} from './series/settli
 import {type SignalBins, signalBins} from './series/signal-bins.ts';
 import {type Sky, skyOf} from './series/sky.ts';
 import {type TimeBins, timeBins} from './series/time-bins.ts';
-import {usedColumns} from './series/used-columns.ts';
+import {type UsedColumns, usedColumns} from './series/used-columns.ts';
 
 /**
  * What the charts draw: a digest of the columns whose size does not follow the number of epochs.
@@ -16,8 +17,12 @@ import {usedColumns} from './series/used-columns.ts';
  * read, angles in degrees. A part is null where the record has no data for it.
  */
 export interface ChartSeries {
+  /** When the first epoch was, read or used; null when none was read. */
+  readonly startUtc: string | null;
   /** From the first to the last epoch read. */
   readonly spanS: number;
+  /** Means of the parts that movement split the record into; one part when it did not. */
+  readonly parts: readonly PartMean[];
   readonly plan: PlanCells | null;
   readonly overTime: {readonly wide: TimeBins; readonly narrow: TimeBins} | null;
   readonly histograms: PerAxis<Histogram | null>;
@@ -25,6 +30,13 @@ export interface ChartSeries {
   readonly autocorrelation: Autocorrelation | null;
   readonly sky: Sky | null;
   readonly signal: {readonly wide: SignalBins; readonly narrow: SignalBins} | null;
+}
+
+/** The mean of the epochs used from one time to another. */
+export interface PartMean {
+  readonly fromS: number;
+  readonly toS: number;
+  readonly meanM: PerAxis<number | null>;
 }
 
 export interface SeriesInput {
@@ -39,6 +51,8 @@ export interface SeriesInput {
   readonly intervalS: number | null;
   /** Steps that the digits of the log can express, so that cells and bins hold whole steps. */
   readonly resolutionM: PerAxis<number | null>;
+  /** First and last epoch of each part, UTC. */
+  readonly parts: readonly {readonly fromUtc: string; readonly toUtc: string}[];
   /** Half-width of the 95 % interval of the mean of a record of this length; null: not known. */
   readonly settlingHalfWidthM: SettlingHalfWidth | null;
 }
@@ -60,7 +74,9 @@ export function buildSeries(input: SeriesInput): ChartSeries {
   const signals = (bins: number) => signalBins({epochs, satellites, ...time, bins});
   const wideSignal = signals(WIDE_SIGNAL_BINS);
   return {
+    startUtc: epochs.count > 0 ? isoUtc(firstS, 3) : null,
     spanS,
+    parts: input.parts.map((part) => partMean(part, columns, firstS)),
     plan: planCells(columns, input.resolutionM),
     overTime: columns.count > 0 ? {wide: binned(WIDE_BINS), narrow: binned(NARROW_BINS)} : null,
     histograms: {
@@ -73,4 +89,35 @@ export function buildSeries(input: SeriesInput): ChartSeries {
     sky: skyOf(satellites, firstS, spanS),
     signal: wideSignal === null ? null : {wide: wideSignal, narrow: signals(NARROW_SIGNAL_BINS)!},
   };
+}
+
+/** UTC is printed to the millisecond. */
+const PRINTED_S = 0.0005;
+
+function partMean(
+  {fromUtc, toUtc}: {readonly fromUtc: string; readonly toUtc: string},
+  {count, gpsSeconds, hasUp, ...columns}: UsedColumns,
+  firstS: number,
+): PartMean {
+  const startMs = Date.parse(isoUtc(firstS, 3));
+  const fromS = (Date.parse(fromUtc) - startMs) / 1000;
+  const toS = (Date.parse(toUtc) - startMs) / 1000;
+  let epochs = 0;
+  let [east, north, up] = [0, 0, 0];
+  for (let i = 0; i < count; i++) {
+    const elapsedS = gpsSeconds[i]! - firstS;
+    if (elapsedS < fromS - PRINTED_S || elapsedS > toS + PRINTED_S) continue;
+    epochs++;
+    // Running means: large offsets cost no digits.
+    east += (columns.eastM[i]! - east) / epochs;
+    north += (columns.northM[i]! - north) / epochs;
+    up += (columns.upM[i]! - up) / epochs;
+  }
+  const known = epochs > 0;
+  const meanM = {
+    east: known ? east : null,
+    north: known ? north : null,
+    up: known && hasUp ? up : null,
+  };
+  return {fromS, toS, meanM};
 }

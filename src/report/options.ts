@@ -10,6 +10,8 @@ export interface ReportOptions {
   readonly logoDataUrl: string | null;
   readonly units: UnitChoice;
   readonly angles: 'dms' | 'deg';
+  /** Zone of the IANA database whose clock is printed beside UTC. */
+  readonly timeZone: string | null;
 }
 
 export const PLAIN_REPORT: ReportOptions = {
@@ -19,4 +21,5 @@ export const PLAIN_REPORT: ReportOptions = {
   logoDataUrl: null,
   units: 'm',
   angles: 'deg',
+  timeZone: null,
 };

@@ -1,6 +1,7 @@
 import type {Severity} from '../occupation/result.ts';
 import {epochsUsedOf} from '../wording/findings.ts';
 import {fixed, formatDuration, formatUtc} from '../wording/numbers.ts';
+import {spanBesideUtc} from '../wording/time-zone.ts';
 import {type ReportContext, referenceName} from './context.ts';
 import {causesFigure} from './figures/causes-figure.ts';
 import type {FigureOrReason} from './figures/figure.ts';
@@ -108,7 +109,7 @@ function headerFacts(context: ReportContext): Fact[] {
   const fix = screening.fixClassKept === null ? '' : `, ${screening.fixClassKept}`;
   const unit = largeUnit(options.units);
   return [
-    {label: 'Occupied', value: spanText(epochs.firstUtc, epochs.lastUtc)},
+    {label: 'Occupied', value: spanText(epochs.firstUtc, epochs.lastUtc, options.timeZone)},
     {label: 'Epochs used', value: `${epochsUsedOf(epochs.used, epochs.read)}${interval}${fix}`},
     {
       label: 'Offsets from',
@@ -130,11 +131,11 @@ function referenceWords(context: ReportContext): string {
   ];
 }
 
-function spanText(from: string | null, to: string | null): string {
+function spanText(from: string | null, to: string | null, zone: string | null): string {
   if (from === null || to === null) return 'no time in the log';
   const sameDay = from.slice(0, 10) === to.slice(0, 10);
   const end = sameDay ? formatUtc(to).slice(11) : formatUtc(to);
-  return `${formatUtc(from)} to ${end} UTC`;
+  return `${formatUtc(from)} to ${end} UTC${spanBesideUtc(from, to, zone)}`;
 }
 
 interface SectionHead {

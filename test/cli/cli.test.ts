@@ -109,6 +109,18 @@ describe('outputs', () => {
     expect(readdirSync(folder).sort()).toEqual([...outputs].sort());
   });
 
+  test('the time axis of the report counts from the first epoch read, used or not', () => {
+    const folder = emptyFolder();
+    const report = join(folder, 'settled.html');
+    const words = ['reduce', sample('mole-still.nmea'), '--settle', '10min', '--report', report];
+    expect(stillmark(words).status).toBe(0);
+    const page = readFileSync(report, 'utf8');
+    // The log begins at 09:12:00; the ten minutes left out stand on the axis as what they are.
+    expect(page).toContain('09:12:00 no epoch used');
+    expect(page).toMatch(/09:22:00 east /);
+    expect(page).toContain('2026-05-12 09:22:00 to 09:51:59 UTC');
+  });
+
   test('a failed run leaves an earlier output as it was', () => {
     const folder = emptyFolder();
     const kept = join(folder, 'kept.json');

@@ -28,6 +28,29 @@ describe('buildSeries', () => {
     }
   });
 
+  test('each part has the mean of its own epochs', () => {
+    const whole = seriesOf({});
+    expect(whole.parts).toHaveLength(1);
+    expect(whole.parts[0]!.meanM.east).toBeCloseTo(whole.histograms.east!.meanM, 9);
+    expect(whole.parts[0]!.meanM.up).toBeCloseTo(whole.histograms.up!.meanM, 9);
+    const [before, after] = seriesOf({stepM: 0.3, slowM: 0, whiteM: 0.001}).parts;
+    expect(before!.toS).toBeLessThan(after!.fromS);
+    const apart = Math.hypot(
+      after!.meanM.east! - before!.meanM.east!,
+      after!.meanM.north! - before!.meanM.north!,
+      after!.meanM.up! - before!.meanM.up!,
+    );
+    expect(apart).toBeGreaterThan(0.2);
+  });
+
+  test('times count from the first epoch read, whether it is used or not', () => {
+    const whole = seriesOf({});
+    const rest = seriesOf({leftOut: 2});
+    expect(whole.startUtc).toMatch(/^2026-.*Z$/);
+    expect(rest.startUtc).toBe(whole.startUtc);
+    expect(rest.spanS).toBe(whole.spanS);
+  });
+
   test('a record without heights has no up, anywhere', () => {
     const series = seriesOf({heights: false});
     expect(series.histograms.up).toBeNull();

@@ -150,6 +150,12 @@ function iso(elapsedS: number): string {
   return new Date(START_MS + elapsedS * 1000).toISOString().replace('.000Z', 'Z');
 }
 
+/** The parts on both sides of a planted step, or the whole. */
+function partsOf({seconds, stepM}: SampleSpec): {fromUtc: string; toUtc: string}[] {
+  const edges = stepM > 0 ? [0, Math.floor(0.62 * seconds), seconds] : [0, seconds];
+  return edges.slice(1).map((end, k) => ({fromUtc: iso(edges[k]!), toUtc: iso(end - 1)}));
+}
+
 export interface Sample {
   readonly result: Result;
   readonly series: ChartSeries;
@@ -175,6 +181,7 @@ export function sample(spec: SampleSpec): Sample {
       north: spec.resolutionM,
       up: spec.heights ? spec.resolutionM : null,
     },
+    parts: partsOf(spec),
     settlingHalfWidthM: (elapsedS) => ({
       east: halfWidthM(spec, elapsedS),
       north: halfWidthM(spec, elapsedS),
@@ -426,9 +433,8 @@ function resultOf(spec: SampleSpec, columns: Columns, series: ChartSeries): Resu
       used === 0
         ? []
         : jumped
-          ? [0, 0.62].map((from, k) => ({
-              fromUtc: iso(Math.floor(from * spec.seconds)),
-              toUtc: iso(Math.floor((k === 0 ? 0.62 : 1) * spec.seconds) - 1),
+          ? partsOf(spec).map((part, k) => ({
+              ...part,
               epochs: Math.round(used * (k === 0 ? 0.62 : 0.38)),
               position: positionOf(spec, series),
             }))

@@ -161,6 +161,18 @@ describe('the numbers', () => {
   });
 });
 
+describe('the clock of a place', () => {
+  test('stands beside UTC wherever a person reads a time, and nowhere without being asked', async () => {
+    const plain = await reportOf(DAY_WITH_JUMP);
+    expect(plain).not.toContain('Europe/Berlin');
+    const zoned = await reportOf(DAY_WITH_JUMP, {timeZone: 'Europe/Berlin'});
+    const spans = zoned.match(/\d\d:\d\d:\d\d UTC \([^)]* to [^)]* in Europe\/Berlin\)/g) ?? [];
+    expect(spans.length).toBeGreaterThan(0);
+    expect(zoned).toMatch(/the axis begins at \d\d:\d\d in Europe\/Berlin/);
+    expect(zoned).toMatch(/at \d\d:\d\d:\d\d UTC \(\d\d:\d\d:\d\d in Europe\/Berlin\)/);
+  });
+});
+
 describe('what comes from outside', () => {
   const hostile =
     '"><img src=x onerror=alert(1)></title></script>{{constructor}} $& \u0001\u202e\u0645\u0631\u062d\u0628\u0627 ';

@@ -1,6 +1,7 @@
 import type {PerAxis} from '../../occupation/result.ts';
 import type {FiveNumbers} from '../../occupation/series/order-statistics.ts';
 import type {TimeBins} from '../../occupation/series/time-bins.ts';
+import type {PartMean} from '../../occupation/series.ts';
 import {proseNumber} from '../../wording/numbers.ts';
 import {type LengthUnit, offsetDecimals, type UnitChoice, unitFor} from '../units.ts';
 import {type Chart, COLOUR, ONCE, panelName, type Spec} from './chart.ts';
@@ -13,6 +14,8 @@ export interface OverTimeInput {
   readonly startUtc: string;
   readonly referenceName: 'mark' | 'reference' | 'mean';
   readonly meanM: PerAxis<number | null>;
+  /** The parts between jumps that matter, each with its mean. */
+  readonly parts: readonly PartMean[];
   /** Only where the drift matters: a line through the mean at the middle of the record. */
   readonly driftMPerS: PerAxis<number | null>;
   readonly steps: readonly {readonly elapsedS: number; readonly label: string}[];
@@ -203,7 +206,7 @@ function panelSpec(
         ...(rows.length === 1 ? [loneEpoch(x, y)] : []),
       ],
     },
-    ...(meanM === null ? [] : meanLine(scaled, meanM, panel.axis, input, x, y)),
+    ...estimateLines(scaled, meanM, panel.axis, input, x, y),
     ...stepLayers(input, x, time, panel.axis === 'east'),
     panelName(panel.name),
   ];
@@ -253,23 +256,32 @@ function scaledNumbers({least, p5, median, p95, most}: FiveNumbers, scaled: (v: 
   };
 }
 
-/** The mean, or where movement matters the fitted line, dashed in the colour of estimates. */
-function meanLine(
+/**
+ * The mean, where drift matters the fitted line, and across jumps that matter the mean of each
+ * part: dashed, in the colour of estimates.
+ */
+function estimateLines(
   scaled: (valueM: number) => number,
-  meanM: number,
+  meanM: number | null,
   axis: Axis,
-  {driftMPerS, spanS, steps}: OverTimeInput,
+  {driftMPerS, spanS, steps, parts}: OverTimeInput,
   x: Spec,
   y: Spec,
 ): Spec[] {
   const rate = driftMPerS[axis];
-  // Across a jump that matters there is no mean to be drawn.
-  if (rate === null && steps.length > 0) return [];
-  const half = ((rate ?? 0) * spanS) / 2;
-  const values = [
-    {t: 0, v: scaled(meanM - half)},
-    {t: spanS, v: scaled(meanM + half)},
-  ];
+  const lines =
+    rate === null && steps.length > 0
+      ? parts.map((part) => ({from: part.fromS, to: part.toS, meanM: part.meanM[axis], rate: 0}))
+      : [{from: 0, to: spanS, meanM, rate: rate ?? 0}];
+  const values = lines.flatMap((line, k) => {
+    if (line.meanM === null) return [];
+    const half = (line.rate * (line.to - line.from)) / 2;
+    return [
+      {t: line.from, v: scaled(line.meanM - half), part: k},
+      {t: line.to, v: scaled(line.meanM + half), part: k},
+    ];
+  });
+  if (values.length === 0) return [];
   return [
     {
       data: {values},
@@ -280,7 +292,7 @@ function meanLine(
         strokeDash: [6, 4],
         clip: true,
       },
-      encoding: {x, y: {...y, field: 'v'}},
+      encoding: {x, y: {...y, field: 'v'}, detail: {field: 'part'}},
     },
   ];
 }

@@ -1,5 +1,6 @@
 import type {Setting} from '../../occupation/result.ts';
 import type {Sky} from '../../occupation/series/sky.ts';
+import {parseDurationS} from '../../time/parse-duration.ts';
 import {signalFinding, skyFinding} from '../../wording/findings.ts';
 import {formatDuration, joined} from '../../wording/numbers.ts';
 import {signalPanels} from '../charts/signal.ts';
@@ -68,7 +69,7 @@ function blockedToward(sky: Sky) {
 }
 
 export function signalFigure({series, result}: ReportContext): FigureOrReason {
-  const startUtc = result.epochs.firstUtc;
+  const {startUtc} = series;
   if (series.signal === null || startUtc === null) {
     return absent(SIGNAL, 'the record says nothing about satellites, signals or corrections');
   }
@@ -77,7 +78,7 @@ export function signalFigure({series, result}: ReportContext): FigureOrReason {
     spanS: series.spanS,
     startUtc,
     maxHdop: settingNumber(result.settings['max-hdop']),
-    maxCorrectionAgeS: settingNumber(result.settings['max-age']),
+    maxCorrectionAgeS: settingSeconds(result.settings['max-age']),
   };
   const of = (pick: (bin: (typeof wide.bins)[number]) => number | undefined) =>
     wide.bins.flatMap((bin) => pick(bin) ?? []);
@@ -112,4 +113,8 @@ export function signalFigure({series, result}: ReportContext): FigureOrReason {
 
 function settingNumber(setting: Setting | undefined): number | null {
   return typeof setting?.value === 'number' ? setting.value : null;
+}
+
+function settingSeconds(setting: Setting | undefined): number | null {
+  return typeof setting?.value === 'string' ? (parseDurationS(setting.value) ?? null) : null;
 }

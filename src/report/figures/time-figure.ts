@@ -2,6 +2,7 @@ import type {PerAxis, Result} from '../../occupation/result.ts';
 import type {TimeBins} from '../../occupation/series/time-bins.ts';
 import {driftPower, movementFinding} from '../../wording/findings.ts';
 import {counted, formatDuration, formatLength, proseNumber} from '../../wording/numbers.ts';
+import {formatLocal} from '../../wording/time-zone.ts';
 import {type OverTimeInput, overTime} from '../charts/over-time.ts';
 import {clockAfter, secondsBetween} from '../charts/ticks.ts';
 import {type ReportContext, referenceName} from '../context.ts';
@@ -12,7 +13,7 @@ const TITLE = 'East, north and up over time';
 
 export function timeFigure(context: ReportContext): FigureOrReason {
   const {result, series} = context;
-  const startUtc = result.epochs.firstUtc;
+  const {startUtc} = series;
   if (series.overTime === null || startUtc === null) {
     return absent(TITLE, 'no epoch passed the screening, so there is nothing to draw');
   }
@@ -32,9 +33,9 @@ export function timeFigure(context: ReportContext): FigureOrReason {
     ...(name === 'mean' ? [] : ([{shape: 'line-ink', text: name}] as const)),
     ...(wide.showsDrift
       ? ([{shape: 'dash-estimate', text: 'fitted drift'}] as const)
-      : input.steps.length === 0
-        ? ([{shape: 'dash-estimate', text: 'mean'}] as const)
-        : []),
+      : ([
+          {shape: 'dash-estimate', text: input.steps.length === 0 ? 'mean' : 'mean of each part'},
+        ] as const)),
     ...(input.steps.length > 0 ? ([{shape: 'dash-flagged', text: 'jump'}] as const) : []),
     ...(series.overTime.wide.leftOut.length > 0
       ? ([{shape: 'block-flagged', text: 'left out'}] as const)
@@ -57,12 +58,18 @@ export function timeFigure(context: ReportContext): FigureOrReason {
       })),
       driftM: largestDrift(result, series.spanS),
     }),
-    note: `${driftPower(detectable(result))}${capital(wide.unit.name)} are equally tall in all panels. ${bins} Times are UTC. Point at the chart to read it.`,
+    note: `${driftPower(detectable(result))}${capital(wide.unit.name)} are equally tall in all panels. ${bins} Times are UTC${zoneNote(startUtc, context.options.timeZone)}. Point at the chart to read it.`,
     wide: wide.chart,
     narrow: narrow.chart,
     legend,
     readout: readout(series.overTime.narrow, series.spanS, startUtc, wide.unit),
   };
+}
+
+/** What the clock of the place shows where the axis begins. */
+function zoneNote(startUtc: string, zone: string | null): string {
+  if (zone === null) return '';
+  return `; the axis begins at ${formatLocal(startUtc, zone).slice(11, 16)} in ${zone}`;
 }
 
 function capital(unit: string): string {
@@ -86,6 +93,7 @@ function chartInput(context: ReportContext, startUtc: string) {
       up: histograms.up?.meanM ?? null,
     },
     driftMPerS: {east: rate('east'), north: rate('north'), up: rate('up')},
+    parts: series.parts,
     steps: result.stability.steps
       .filter((step) => step.material)
       .map((step) => ({

@@ -43,6 +43,7 @@ export function checks(context: ReportContext): Check[] {
     ...requirementChecks(context),
     agreementCheck(context),
     ...movementChecks(context),
+    settlingCheck(context),
     screeningCheck(context),
     leftOutCheck(context.result),
     gapCheck(context.result),
@@ -101,6 +102,27 @@ const REQUIREMENT_NAMES: Readonly<Record<Requirement['of'], string>> = {
   north: 'North offset from the mark',
   up: 'Height difference from the mark',
 };
+
+/** A slow approach to the final place, as a tripod or an antenna that warms makes it. */
+function settlingCheck({result, options}: ReportContext): CheckDraft {
+  const name = 'Settling at the start';
+  const {settling, movementLimitM} = result.stability;
+  if (result.position === null && result.segments.length === 0) {
+    return {name, tone: 'not tested', note: 'no epoch was used'};
+  }
+  if (settling === null) return {name, tone: 'within', outcome: 'none found'};
+  const sizeM = Math.hypot(settling.eastM, settling.northM);
+  const limitM = movementLimitM.horizontal;
+  const column = lengthColumn([sizeM, limitM], options.units);
+  return {
+    name,
+    measured: column.cell(sizeM),
+    limit: column.cell(limitM),
+    unit: column.unit.name,
+    tone: settling.material ? 'outside' : 'within',
+    note: `in plan, with a time constant of ${formatDuration(settling.timeConstantS)}`,
+  };
+}
 
 function requirementChecks({result, options}: ReportContext): CheckDraft[] {
   const {comparison} = result;

@@ -10,6 +10,7 @@ import {
   formatLength,
   formatUtc,
 } from '../../wording/numbers.ts';
+import {spanBesideUtc} from '../../wording/time-zone.ts';
 import {hasMark, type ReportContext, referenceName} from '../context.ts';
 import {largeUnit} from '../units.ts';
 import {lengthColumn, numberCell, textCell} from './columns.ts';
@@ -204,7 +205,7 @@ function segmentRow(
   const height = geodetic.ellipsoidalHeightM;
   const sameDay = fromUtc.slice(0, 10) === toUtc.slice(0, 10);
   return row(
-    `${formatUtc(fromUtc)} to ${sameDay ? formatUtc(toUtc).slice(11) : formatUtc(toUtc)}`,
+    `${formatUtc(fromUtc)} to ${sameDay ? formatUtc(toUtc).slice(11) : formatUtc(toUtc)}${spanBesideUtc(fromUtc, toUtc, options.timeZone)}`,
     [
       numberCell(String(epochs)),
       numberCell(fixed(geodetic.latitudeDeg, degrees)),

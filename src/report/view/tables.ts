@@ -1,5 +1,6 @@
 import type {InputAccount, PerAxis, ScatterMeasures} from '../../occupation/result.ts';
 import {fixed, formatCount, formatUtc} from '../../wording/numbers.ts';
+import {besideUtc} from '../../wording/time-zone.ts';
 import type {ReportContext} from '../context.ts';
 import {lengthColumn, numberCell, textCell} from './columns.ts';
 import {fixedTable, head, numberHead, row, stacking, type Table} from './table.ts';
@@ -115,7 +116,7 @@ export function stepsTable({result, options}: ReportContext): Table | null {
       head('Beside it in the log'),
     ],
     rows: steps.map((step) =>
-      row(formatUtc(step.utc), [
+      row(`${formatUtc(step.utc)}${besideUtc(step.utc, options.timeZone)}`, [
         numberCell(column.cell(step.eastM)),
         numberCell(column.cell(step.northM)),
         numberCell(column.cell(step.upM)),

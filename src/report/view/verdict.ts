@@ -10,6 +10,7 @@ import {
   formatLength,
   proseNumber,
 } from '../../wording/numbers.ts';
+import {besideUtc} from '../../wording/time-zone.ts';
 import {headline} from '../../wording/verdict.ts';
 import type {ReportContext} from '../context.ts';
 import {offsetDecimals, type UnitChoice, unitFor} from '../units.ts';
@@ -100,7 +101,12 @@ function movementKeys({result, options}: ReportContext): KeyNumber[] {
   if (jump === undefined || segments.length < 2) return [];
   const r95M = scatter?.aboutMean.observed.r95M ?? null;
   return [
-    lengthKey('Largest jump', jump.sizeM, options.units, `at ${formatClock(jump.utc)} UTC`),
+    lengthKey(
+      'Largest jump',
+      jump.sizeM,
+      options.units,
+      `at ${formatClock(jump.utc)} UTC${besideUtc(jump.utc, options.timeZone)}`,
+    ),
     {
       label: 'Parts',
       value: String(segments.length),
