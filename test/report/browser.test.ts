@@ -1,3 +1,4 @@
+import {spawnSync} from 'node:child_process';
 import {mkdtempSync, readFileSync, rmSync, writeFileSync} from 'node:fs';
 import {createServer, type Server} from 'node:http';
 import {createRequire} from 'node:module';
@@ -215,6 +216,46 @@ describe('the page in a browser', () => {
     for (const picture of pictures) expect(picture).toEqual({role: 'img', named: 2, inside: 0});
   });
 
+  test.each([1280, 390])(
+    'long and right-to-left names hold their place at %i px',
+    async (width) => {
+      const long = `${'Very-long-name-without-a-blank-'.repeat(7)} \u0645\u0631\u062d\u0628\u0627 \u05e9\u05dc\u05d5\u05dd`;
+      const {result, series} = sample({...HEIGHT_BLUNDER, names: {mark: long, file: long}});
+      html.long = await renderReport(result, series, {
+        title: long,
+        preparedFor: long,
+        remarks: long,
+      });
+      writeFileSync(join(folder, 'long.html'), html.long);
+      await opened('long', {viewport: {width, height: 800}}, async ({page}) => {
+        expect(await page.evaluate<number>(SIDEWAYS)).toBeLessThanOrEqual(0);
+        expect(await shownText(page.locator('body'))).toContain('Very-long-name');
+      });
+    },
+  );
+
+  test.each(names)(
+    '%s: every tone has its shape and its word, every line its dash',
+    async (name) => {
+      await opened(name, LOOKS.desktop!, async ({page}) => {
+        const table = page.locator('#checks table').first();
+        const outcomes = await table.locator('tbody tr').allInnerTexts();
+        expect(outcomes.length).toBeGreaterThan(5);
+        // A filled square, triangle, disc or an empty ring, and the word behind it.
+        for (const outcome of outcomes) expect(outcome).toMatch(/[■▲●○]\s*[a-z]{2,}/);
+      });
+      const figures = html[name]!.match(/<figure\b.*?<\/figure>/gs) ?? [];
+      expect(figures.length).toBeGreaterThan(0);
+      for (const figure of figures) {
+        // Shape and dash are in the name of the key: no two of a figure differ by colour alone.
+        const keys = [...figure.matchAll(/class="key ([a-z]+)-/g)].map(([whole]) => whole);
+        const places = [...figure.matchAll(/class="key ([a-z0-9-]+)"/g)].map(([, key]) => key);
+        expect(places.length).toBe(keys.length);
+        expect(new Set(places).size).toBe(places.length);
+      }
+    },
+  );
+
   test('headings are nested without a leap', async () => {
     const levels = await opened('height-blunder', LOOKS.desktop!, ({page}) =>
       page.evaluate<number[]>(HEADING_LEVELS),
@@ -257,20 +298,31 @@ describe('text in the pictures', () => {
 });
 
 describe('print', () => {
-  /** Text of each page, by the marks that the PDF writer leaves in the margin. */
-  async function printed(name: string, format: 'A4' | 'Letter'): Promise<number> {
-    return opened(name, LOOKS.desktop!, async ({page}) => {
-      const pdf = await page.pdf({format});
-      return [...pdf.toString('latin1').matchAll(/\/Type\s*\/Page\b(?!s)/g)].length;
-    });
+  /** Text of each printed page, line by line as it stands on the paper. */
+  async function printed(name: string, format: 'A4' | 'Letter'): Promise<string[][]> {
+    const path = join(folder, `${name}-${format}.pdf`);
+    await opened(name, LOOKS.desktop!, ({page}) => page.pdf({format, path}));
+    const {status, stdout} = spawnSync('pdftotext', ['-layout', path, '-'], {encoding: 'utf8'});
+    if (status !== 0)
+      throw new Error('the tests of the printed report need pdftotext (poppler-utils)');
+    return stdout
+      .split('\f')
+      .slice(0, -1)
+      .map((page) => page.split('\n').filter((line) => line.trim() !== ''));
   }
 
   test.each(names.flatMap((name) => (['A4', 'Letter'] as const).map((f) => [name, f] as const)))(
-    '%s takes at most six pages of %s',
+    '%s on %s: at most six pages, each numbered, no heading last',
     async (name, format) => {
       const pages = await printed(name, format);
-      expect(pages).toBeGreaterThan(2);
-      expect(pages).toBeLessThanOrEqual(6);
+      expect(pages.length).toBeGreaterThan(2);
+      expect(pages.length).toBeLessThanOrEqual(6);
+      for (const [i, lines] of pages.entries()) {
+        expect(lines.join('\n')).toMatch(new RegExp(`\\b${i + 1}\\s*/\\s*${pages.length}$`, 'm'));
+        // The last line but the footer is no heading of a section or figure.
+        const body = lines.filter((line) => !/\b\d\s*\/\s*\d$/.test(line));
+        expect(body.at(-1)).not.toMatch(/^\s*(\d{1,2}\s+[A-Z][a-z]+|Figure \d)/);
+      }
     },
   );
 
