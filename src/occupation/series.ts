@@ -1,6 +1,7 @@
 import type {Epochs, Satellites} from '../epochs/epochs.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import type {PerAxis} from './result.ts';
+import {type AllanTable, allanTable} from './series/allan-table.ts';
 import {type Autocorrelation, autocorrelationOf} from './series/autocorrelation.ts';
 import {type Histogram, histogramOf} from './series/histogram.ts';
 import {type PlanCells, planCells} from './series/plan-cells.ts';
@@ -28,6 +29,7 @@ export interface ChartSeries {
   readonly histograms: PerAxis<Histogram | null>;
   readonly settling: Settling | null;
   readonly autocorrelation: Autocorrelation | null;
+  readonly allan: AllanTable | null;
   readonly sky: Sky | null;
   readonly signal: {readonly wide: SignalBins; readonly narrow: SignalBins} | null;
 }
@@ -86,6 +88,7 @@ export function buildSeries(input: SeriesInput): ChartSeries {
     },
     settling: settlingOf(columns, input.settlingHalfWidthM),
     autocorrelation: autocorrelationOf(columns, intervalS),
+    allan: allanTable(columns, intervalS),
     sky: skyOf(satellites, firstS, spanS),
     signal: wideSignal === null ? null : {wide: wideSignal, narrow: signals(NARROW_SIGNAL_BINS)!},
   };

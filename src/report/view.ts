@@ -13,10 +13,12 @@ import {timeFigure} from './figures/time-figure.ts';
 import type {Renderer} from './render.ts';
 import {cssString, fileStem, jsonForHtml, jsonUrl} from './text/embed.ts';
 import {largeUnit} from './units.ts';
+import {allanDeviationTable} from './view/allan.ts';
 import {accidentalNote, causesTable} from './view/causes.ts';
 import {checks} from './view/checks.ts';
 import {type DrawnFigure, figurePainter} from './view/drawn-figure.ts';
 import {frameChangeTable} from './view/frame-change.ts';
+import {intervalMeaning} from './view/interval.ts';
 import {otherSetupsTable} from './view/other-setups.ts';
 import {coordinateTable, offsetTable, positionNotes, segmentTable} from './view/position.ts';
 import {
@@ -66,6 +68,8 @@ export async function pageView(context: ReportContext, renderer: Renderer, css: 
     steps: stepsTable(context),
     budget: budgetTable(context),
     frameChange: frameChangeTable(context),
+    allan: allanDeviationTable(context),
+    intervalMeaning: intervalMeaning(context),
     screening: screeningTable(context),
     lines: lineTable(context),
     inputs: inputViews(context),

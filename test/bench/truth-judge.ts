@@ -35,7 +35,7 @@ export function judge(occupation: SimulatedOccupation, scenario: Scenario): Judg
   return {
     meanM,
     halfWidthM,
-    ellipseHolds: (eastM, northM) => insideEllipse(analysis, {meanM, halfWidthM}, eastM, northM),
+    ellipseHolds: truthInsideEllipse(analysis, {meanM, halfWidthM}),
     slow: analysis.slowProbability > SLOW,
     fewLooks: components.some(({independentLooks}) => (independentLooks ?? 0) < FEW_LOOKS),
     driftP: perAxis((c) => components[c]!.drift?.pValue ?? 1),
@@ -52,10 +52,15 @@ export function judge(occupation: SimulatedOccupation, scenario: Scenario): Judg
         scenario,
       ),
     verdict: verdictOf(analysis),
-    requiredS: (targetM) => {
-      const time = analysis.requiredTime(0, targetM);
-      return {median: time?.aboutS ?? Number.NaN, allow: time?.allowS ?? Number.NaN};
-    },
+    requiredS: requiredBy(analysis),
+  };
+}
+
+/** By itself, so that what is kept of a trial holds its fits and not its epochs. */
+function requiredBy({requiredTime}: SessionAnalysis): Judgement['requiredS'] {
+  return (targetM) => {
+    const time = requiredTime(0, targetM);
+    return {median: time?.aboutS ?? Number.NaN, allow: time?.allowS ?? Number.NaN};
   };
 }
 
@@ -74,14 +79,13 @@ function halfWidthOf({components}: SessionAnalysis, component: number): number {
   return (halfWidth95 ?? Number.NaN) + quantisation95;
 }
 
-function insideEllipse(
+/** Whether the 95 % ellipse about the mean holds the truth, which stands at zero. */
+function truthInsideEllipse(
   {planCorrelation: c}: SessionAnalysis,
   {meanM, halfWidthM}: Pick<Judgement, 'meanM' | 'halfWidthM'>,
-  eastM: number,
-  northM: number,
 ): boolean {
-  const e = (eastM - meanM.east) / halfWidthM.east;
-  const n = (northM - meanM.north) / halfWidthM.north;
+  const e = meanM.east / halfWidthM.east;
+  const n = meanM.north / halfWidthM.north;
   return e * e - 2 * c * e * n + n * n <= (1 - c * c) * (ELLIPSE_95 / NORMAL_95) ** 2;
 }
 

@@ -12,8 +12,8 @@ export interface Judgement {
   readonly meanM: Axes;
   /** 95 % half-width; NaN where no number is printed. */
   readonly halfWidthM: Axes;
-  /** Whether a point (offset from the mark) lies within the 95 % ellipse about the mean. */
-  readonly ellipseHolds: (eastM: number, northM: number) => boolean;
+  /** Whether the truth lies within the 95 % ellipse about the mean. */
+  readonly ellipseHolds: boolean;
   /** The warning that the record is not longer than its errors. */
   readonly slow: boolean;
   readonly fewLooks: boolean;

@@ -50,7 +50,7 @@ export function summariseMeans(all: readonly Trial[]): MeanSummary {
     holds: perAxis((axis) =>
       judgements.map(({meanM, halfWidthM}) => Math.abs(meanM[axis]) <= halfWidthM[axis]),
     ),
-    ellipseHolds: judgements.map(({ellipseHolds}) => ellipseHolds(0, 0)),
+    ellipseHolds: judgements.map(({ellipseHolds}) => ellipseHolds),
     oracleM,
     widthMedian: perAxis((axis) => quantileOf(widths[axis], 0.5)),
     widthP90: perAxis((axis) => quantileOf(widths[axis], 0.9)),
