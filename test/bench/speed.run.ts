@@ -37,16 +37,26 @@ function contents(log: string): Cost {
   return costOf(STILLMARK, ['contents', log, '--quiet']);
 }
 
+/** Seconds that a script measures in itself and prints. */
+function medianSeconds(...words: readonly string[]): Cost {
+  return medianCost(RUNS, () => {
+    const ran = spawnSync('node', [script('arrays-to-html.mjs'), ...words], {encoding: 'utf8'});
+    if (ran.status !== 0) throw new Error(ran.stderr);
+    return {wallS: Number(ran.stdout), cpuS: Number.NaN, peakMb: Number.NaN};
+  });
+}
+
 function megabytes(path: string): number {
   return statSync(path).size / 1e6;
 }
 
-/** A Python that has what the script needs; undefined when there is none. */
-function python(): string | undefined {
+/** The Python script over a log, once: it is slow. undefined where its modules are missing. */
+function inPython(log: string): Cost | undefined {
   const modules = 'import numpy, pynmea2, pyproj';
-  return ['python3', '/usr/bin/python3'].find(
-    (command) => wallOf(command, ['-c', modules]) !== undefined,
+  const command = ['python3', '/usr/bin/python3'].find(
+    (one) => wallOf(one, ['-c', modules]) !== undefined,
   );
+  return command === undefined ? undefined : wallOf(command, [script('python-baseline.py'), log]);
 }
 
 beforeAll(() => {
@@ -77,14 +87,13 @@ describe('whole commands', () => {
     table.remark(`a day at 1 Hz, seven sentences an epoch: ${megabytes(day).toFixed(0)} MB`);
     const parse = medianCost(RUNS, () => costOf(script('parse-line-by-line.mjs'), [day]));
     table.row('nmea-simple, line by line', parse);
-    const command = python();
-    if (command === undefined) {
+    const byPython = inPython(day);
+    if (byPython === undefined) {
       table.remark('no Python with numpy, pynmea2 and pyproj: left out');
+    } else {
+      table.row('Python: parse, project, mean and spread', byPython);
     }
-    const inPython =
-      command === undefined ? undefined : wallOf(command, [script('python-baseline.py'), day]);
-    if (inPython !== undefined) table.row('Python: parse, project, mean and spread', inPython);
-    const versus = {'nmea-simple': parse, Python: inPython};
+    const versus = {'nmea-simple': parse, Python: byPython};
     const listed = table.row(
       'stillmark contents',
       medianCost(RUNS, () => contents(day)),
@@ -101,6 +110,10 @@ describe('whole commands', () => {
     );
     table.row('stillmark reduce --report', full, versus);
     table.remark(`report: ${(statSync(report).size / 1000).toFixed(0)} kB`);
+    const vega = table.row('import of Vega and one chart', medianSeconds('chart'));
+    table.row('from the columns of the day to the page', medianSeconds('page', day, result), {
+      'one chart': vega,
+    });
   });
 
   test('a long log', () => {
@@ -111,6 +124,7 @@ describe('whole commands', () => {
         wallOf('awk', ['-F,', AWK_FIELDS, long]) &&
         medianCost(RUNS, () => wallOf('awk', ['-F,', AWK_FIELDS, long])!),
       'nmea-simple': costOf(script('parse-line-by-line.mjs'), [long]),
+      Python: inPython(long),
     };
     for (const [name, cost] of Object.entries(others)) {
       if (cost === undefined) table.remark(`${name}: not there`);
