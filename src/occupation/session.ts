@@ -1,11 +1,11 @@
 import {r95} from '../statistics/accuracy-measures.ts';
-import {
-  analyseSession,
-  type ComponentAnalysis,
-  type Movement,
-  type SessionAnalysis,
-  type TakenOut,
-} from '../statistics/analyse-session.ts';
+import {analyseSession} from '../statistics/analyse-session.ts';
+import type {
+  ComponentAnalysis,
+  Movement,
+  SessionAnalysis,
+  TakenOut,
+} from '../statistics/session-analysis.ts';
 import {type CovarianceM2, planeOf} from './covariance.ts';
 import {type LocalColumns, taken} from './local-columns.ts';
 import type {PerAxis} from './result.ts';

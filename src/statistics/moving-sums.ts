@@ -13,6 +13,9 @@ export interface MovingSumStep {
   readonly jump: readonly number[];
 }
 
+/** A jump is claimed below this p-value. */
+export const MOVING_SUM_P = 0.05;
+
 const MOST_BINS = 20_000;
 const SHORTEST_WINDOW_S = 4;
 const SHORTEST_WINDOW_BINS = 5;

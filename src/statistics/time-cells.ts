@@ -55,3 +55,8 @@ export function timeCells(
     expected,
   };
 }
+
+/** Plain mean of values of cells. */
+export function meanOfCells(values: Float64Array): number {
+  return values.reduce((sum, value) => sum + value, 0) / values.length;
+}
