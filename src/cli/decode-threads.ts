@@ -67,7 +67,7 @@ export async function readDivided(
   progress: (bytesRead: number) => void,
 ): Promise<{contents: LogContents; file: ReadFile}> {
   const {descriptor, sizeBytes, stretchBytes} = log;
-  const reader = createBatchReader(options);
+  const reader = createBatchReader({...options, sizeBytes});
   const decoders = Array.from({length: THREADS}, (_, first) =>
     startDecoder(log, first, options.trustAbsentChecksum),
   );

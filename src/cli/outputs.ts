@@ -36,7 +36,9 @@ export async function outputsOf(
     outputs.push({path: options.report, text});
   }
   add(options.result, () => [resultJson(result)]);
-  add(options.epochs, () => epochCsv({...reduced, epochs: request.log.epochs}));
+  add(options.epochs, () =>
+    epochCsv({...reduced, ...reduced.aboutReference(), epochs: request.log.epochs}),
+  );
   add(options.geojson, () => [resultGeoJson(result)]);
   add(options.kml, () => [resultKml(result)]);
   add(options.sinex, () => [resultSinex(result)]);
@@ -49,13 +51,11 @@ async function reportOf(
   options: CommandArguments,
   thread: ReportThread,
 ): Promise<string> {
-  const {result, reason, eastM, northM, upM} = reduced;
+  const {result, reason} = reduced;
   const series = buildSeries({
     epochs: log.epochs,
     used: reason.map((code) => (code === 0 ? 1 : 0)),
-    eastM,
-    northM,
-    upM,
+    ...reduced.aboutReference(),
     satellites: log.satellites,
     intervalS: result.epochs.intervalS,
     resolutionM: result.epochs.resolutionM,

@@ -57,7 +57,7 @@ async function readLog(
   if (divisible !== undefined) {
     return readDivided(divisible, {...options, name}, (bytes) => progress.at(bytes));
   }
-  const reader = createLogReader({...options, name});
+  const reader = createLogReader({...options, name, sizeBytes: inputSize(path)});
   const file = await readInput(
     path,
     (chunk) => reader.add(chunk),

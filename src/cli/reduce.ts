@@ -76,7 +76,7 @@ export async function reduce(typed: CommandArguments, command: Result['command']
 
 /** East, north and up over time in a few lines, for a terminal that can show them. */
 function plotOf(
-  {result, reason, eastM, northM, upM}: Reduced,
+  {result, reason, aboutReference}: Reduced,
   {log}: ReduceRequest,
   {columns}: TerminalStyle,
 ): string[] {
@@ -87,9 +87,7 @@ function plotOf(
   const bins = timeBins({
     gpsSeconds,
     used: reason.map((code) => (code === 0 ? 1 : 0)),
-    eastM,
-    northM,
-    upM,
+    ...aboutReference(),
     firstS,
     spanS,
     intervalS: result.epochs.intervalS ?? 1,

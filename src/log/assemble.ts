@@ -65,10 +65,10 @@ export interface AssembledLog {
  */
 export class NmeaAssembler {
   readonly #account = new LogAccount();
-  readonly #fixes = new EpochTrack();
+  readonly #fixes: EpochTrack;
   /** Plan positions, gathered as long as there is no position of GGA or GNS. */
-  readonly #rmc = new EpochTrack();
-  readonly #gll = new EpochTrack();
+  readonly #rmc: EpochTrack;
+  readonly #gll: EpochTrack;
   readonly #open: Burst[] = [];
   readonly #free: Burst[] = [];
   /** The last of the open bursts. */
@@ -96,6 +96,13 @@ export class NmeaAssembler {
   #repeatedByTalkers = 0;
   #countsBeyondTwelve = false;
   #leapSeconds = 0;
+
+  /** @param mostEpochs how many the log may hold, if its size is known */
+  constructor(mostEpochs?: number) {
+    this.#fixes = new EpochTrack(mostEpochs);
+    this.#rmc = new EpochTrack(mostEpochs);
+    this.#gll = new EpochTrack(mostEpochs);
+  }
 
   /** Takes the next batch; nothing of it is kept but what has been assembled. */
   add({columns, account, datums}: NmeaBatch): void {

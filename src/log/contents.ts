@@ -70,6 +70,8 @@ export interface ReadOptions {
   readonly date: {readonly year: number; readonly month: number; readonly day: number} | null;
   /** Whether sentences without a checksum are believed. */
   readonly trustAbsentChecksum: boolean;
+  /** Size of the log where it is known beforehand, so that its columns need not grow. */
+  readonly sizeBytes?: number | undefined;
   readonly table: TableOptions;
 }
 

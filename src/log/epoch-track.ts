@@ -12,8 +12,13 @@ const NO_SATELLITES = 255;
  * `gpsSeconds` holds the time of day.
  */
 export class EpochTrack {
-  readonly builder = new EpochsBuilder();
+  readonly builder: EpochsBuilder;
   readonly days = new DayTrack();
+
+  /** @param mostEpochs how many the log may hold, if its size is known */
+  constructor(mostEpochs: number | undefined) {
+    this.builder = new EpochsBuilder(mostEpochs);
+  }
 
   /** Adds the epoch of a burst with its best position; `group` holds the GSA sentences of it. */
   addFix(burst: Burst, group: GsaGroup): void {

@@ -11,7 +11,7 @@ export const BATCH_BYTES = 1 << 18;
 export function createNmeaReader(options: ReadOptions): LogReader {
   const {trustAbsentChecksum} = options;
   const decoder = new NmeaDecoder({batchBytes: BATCH_BYTES, trustAbsentChecksum});
-  const assembler = new NmeaAssembler();
+  const assembler = new NmeaAssembler(mostEpochsOf(options));
   const cutter = new BatchCutter(BATCH_BYTES, (bytes, length, isLast) =>
     assembler.add(decoder.decode(bytes, length, isLast)),
   );
@@ -28,6 +28,13 @@ export function createNmeaReader(options: ReadOptions): LogReader {
   };
 }
 
+/** No sentence with a time and a position is shorter: `$XXGLL,hhmmss,ddmm.m,N,dddmm.m,E*hh`. */
+const SHORTEST_EPOCH_BYTES = 40;
+
+function mostEpochsOf({sizeBytes}: ReadOptions): number | undefined {
+  return sizeBytes === undefined ? undefined : Math.ceil(sizeBytes / SHORTEST_EPOCH_BYTES);
+}
+
 /** Takes batches that were decoded elsewhere, in the order of the log. */
 export interface BatchReader {
   add(batch: NmeaBatch): void;
@@ -36,7 +43,7 @@ export interface BatchReader {
 
 /** The second half of `createNmeaReader`, for a log whose stretches several threads decode. */
 export function createBatchReader(options: ReadOptions): BatchReader {
-  const assembler = new NmeaAssembler();
+  const assembler = new NmeaAssembler(mostEpochsOf(options));
   return {
     add: (batch) => assembler.add(batch),
     finish: (bytes) => nmeaContents(assembler.finish(), {...options, bytes}),

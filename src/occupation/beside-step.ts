@@ -1,4 +1,5 @@
 import type {Epochs} from '../epochs/epochs.ts';
+import {orderStatisticInPlace} from '../statistics/quantile.ts';
 
 /** What the log itself shows around the time of a jump: something to look at, not its cause. */
 export type BesideStep =
@@ -84,9 +85,10 @@ function hasGap(gpsSeconds: Float64Array, first: number, end: number, intervalS:
 }
 
 function hasOldCorrections(ageS: Float32Array, first: number, end: number): boolean {
-  const ages = Float32Array.from(ageS.subarray(first, end)).filter(Number.isFinite);
-  const all = ageS.filter(Number.isFinite).sort();
-  if (ages.length === 0 || all.length === 0) return false;
-  const limitS = Math.max(OLD_AGE_S, OLD_AGE_FACTOR * all[all.length >> 1]!);
-  return ages.some((age) => age > limitS);
+  const old = ageS.subarray(first, end).filter((age) => age > OLD_AGE_S);
+  // The median of a long record is worth looking for only where something is old.
+  if (old.length === 0) return false;
+  const all = Float64Array.from(ageS).filter(Number.isFinite);
+  const medianS = orderStatisticInPlace(all, all.length >> 1);
+  return old.some((age) => age > OLD_AGE_FACTOR * medianS);
 }

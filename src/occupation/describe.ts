@@ -5,7 +5,7 @@ import {moments} from '../statistics/moments.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {epochAccount, type Resolution, satelliteSummary} from './account.ts';
 import type {ContentsResult, RejectedExample, Standing} from './contents-result.ts';
-import {keptIndices, type LocalColumns, localColumns, taken} from './local-columns.ts';
+import {keptIndices, type LocalColumns, localColumns, selected} from './local-columns.ts';
 import {standingPeriods} from './motion.ts';
 import type {InputAccount, Notice, PerAxis} from './result.ts';
 import {type ScreenRules, screenByRules} from './screen.ts';
@@ -57,9 +57,9 @@ export function standingOf(epochs: Epochs, ellipsoid: Ellipsoid): Standing[] {
   if (columns === undefined) return [];
   const kept = keptIndices(reason);
   const track = {
-    gpsSeconds: taken(epochs.gpsSeconds, kept),
-    eastM: taken(columns.eastM, kept),
-    northM: taken(columns.northM, kept),
+    gpsSeconds: selected(epochs.gpsSeconds, kept),
+    eastM: selected(columns.eastM, kept),
+    northM: selected(columns.northM, kept),
   };
   return standingPeriods(track).map(({first, last}, index) => {
     const during = kept.subarray(first, last + 1);
@@ -80,9 +80,9 @@ function meanAndScatter(
   columns: LocalColumns,
   during: Uint32Array,
 ): Pick<Standing, 'mean' | 'scatterM'> {
-  const east = moments(taken(columns.eastM, during));
-  const north = moments(taken(columns.northM, during));
-  const up = moments(taken(columns.upM, during));
+  const east = moments(selected(columns.eastM, during));
+  const north = moments(selected(columns.northM, during));
+  const up = moments(selected(columns.upM, during));
   const mean = geodeticFromEnu(
     {
       eastM: east?.mean ?? 0,

@@ -63,6 +63,14 @@ export function taken(column: Float64Array | Float32Array, indices: Uint32Array)
   return values;
 }
 
+/**
+ * The elements of a column at ascending indices, to be read only: the column itself where they are
+ * all of it, since a copy of a long record is worth saving.
+ */
+export function selected(column: Float64Array, indices: Uint32Array): Float64Array {
+  return indices.length === column.length ? column : taken(column, indices);
+}
+
 function commonHeightKind(epochs: Epochs, reason: Uint8Array): HeightKind {
   let kept = 0;
   let ellipsoidal = 0;

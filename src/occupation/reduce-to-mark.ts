@@ -16,6 +16,10 @@ export function reducedToMark(
   eccentricity: Enu,
 ): LocalColumns {
   const {eastM, northM, upM} = eccentricity;
+  // Nothing to take off: no copy of a long record.
+  const {opening, closing} = reduction;
+  const moves = [opening.verticalM, closing.verticalM, eastM, northM, upM].some((m) => m !== 0);
+  if (!moves) return columns;
   return {
     ...columns,
     eastM: eastM === 0 ? columns.eastM : columns.eastM.map((value) => value - eastM),

@@ -1,3 +1,4 @@
+import type {EnuColumns} from '../geodesy/local.ts';
 import {median as medianOf} from '../statistics/quantile.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {epochAccount} from './account.ts';
@@ -13,7 +14,7 @@ import {besideStep} from './beside-step.ts';
 import {budgetRows, comparisonRows} from './budget.ts';
 import {explainNulls} from './explain-nulls.ts';
 import {noticeHeights} from './height-notices.ts';
-import {keptIndices, type LocalColumns, localColumns, taken} from './local-columns.ts';
+import {keptIndices, type LocalColumns, localColumns, selected} from './local-columns.ts';
 import {markItems} from './mark-items.ts';
 import {type MarkPlace, markPlace} from './mark-place.ts';
 import {isTravelling} from './motion.ts';
@@ -42,7 +43,7 @@ import type {
   Segment,
   Stability,
 } from './result.ts';
-import {scatterAbout} from './scatter.ts';
+import {scatterAbout, type UsedPositions} from './scatter.ts';
 import {reasonCode, type ScreenOutcome, screenByRules} from './screen.ts';
 import {screenNeighbours} from './screen-neighbours.ts';
 import {screeningOf} from './screening-of-record.ts';
@@ -55,10 +56,8 @@ import {checkVerdict} from './verdict.ts';
 /** The result, and the epochs it rests on for charts and the epoch table. */
 export interface Reduced {
   readonly result: Result;
-  /** East, north and up of every epoch read, about the reference of the result. */
-  readonly eastM: Float64Array;
-  readonly northM: Float64Array;
-  readonly upM: Float64Array;
+  /** East, north and up of every epoch read, about the reference of the result; made anew. */
+  readonly aboutReference: () => EnuColumns;
   /** Screening codes, 0 for the epochs used. */
   readonly reason: Uint8Array;
   /** 95 % half-widths of the mean after a part of the record; null when there is no one mean. */
@@ -117,9 +116,9 @@ interface Record {
 
 function trackOf({log}: ReduceRequest, columns: LocalColumns, indices: Uint32Array) {
   return {
-    gpsSeconds: taken(log.epochs.gpsSeconds, indices),
-    eastM: taken(columns.eastM, indices),
-    northM: taken(columns.northM, indices),
+    gpsSeconds: selected(log.epochs.gpsSeconds, indices),
+    eastM: selected(columns.eastM, indices),
+    northM: selected(columns.northM, indices),
   };
 }
 
@@ -163,10 +162,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
     position: single?.position ?? null,
     segments,
     budget,
-    scatter: {
-      aboutMean: scatterAbout(usedPositions(columns, whole), whole.meanM),
-      aboutReference: scatterAbout(usedPositions(columns, whole), centreOf(whole.meanM, offsetM)),
-    },
+    scatter: scatterOf(usedPositions(columns, whole), whole.meanM, offsetM),
     screening: screeningOf(epochs, columns, outcome, whole),
     stability,
     comparison,
@@ -187,7 +183,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   noticeTime(single === null ? null : whole, request, notices);
   return {
     result: finished(result, notices),
-    ...aboutReference(columns, whole.meanM, offsetM),
+    aboutReference: () => aboutReference(columns, whole.meanM, offsetM),
     reason: outcome.reason,
     halfWidths95After: single === null ? null : whole.halfWidths95After,
   };
@@ -222,9 +218,7 @@ function withoutPosition(record: Record, outcome: ScreenOutcome): Reduced {
   const nowhere = new Float64Array(request.log.epochs.count).fill(Number.NaN);
   return {
     result: finished(result, notices),
-    eastM: nowhere,
-    northM: nowhere,
-    upM: nowhere,
+    aboutReference: () => ({eastM: nowhere, northM: nowhere, upM: nowhere}),
     reason: outcome.reason,
     halfWidths95After: null,
   };
@@ -362,20 +356,33 @@ function targetOf({geodetic}: Reference, place: MarkPlace | null) {
   };
 }
 
+function scatterOf(
+  used: UsedPositions,
+  meanM: PerAxis<number | null>,
+  offsetM: PerAxis<number | null>,
+): Result['scatter'] {
+  return {
+    aboutMean: scatterAbout(used, meanM),
+    aboutReference: scatterAbout(used, centreOf(meanM, offsetM)),
+  };
+}
+
 function usedPositions(columns: LocalColumns, {indices}: Session) {
   return {
-    eastM: taken(columns.eastM, indices),
-    northM: taken(columns.northM, indices),
-    upM: taken(columns.upM, indices),
+    eastM: selected(columns.eastM, indices),
+    northM: selected(columns.northM, indices),
+    upM: selected(columns.upM, indices),
   };
 }
 
 /** Median change of a coordinate from one epoch used to the next. */
 function typicalStepM(columns: LocalColumns, {indices}: Session): PerAxis<number | null> {
   const median = (column: Float64Array) => {
-    const values = taken(column, indices);
-    if (values.length < 2) return null;
-    const steps = values.subarray(1).map((value, i) => Math.abs(value - values[i]!));
+    if (indices.length < 2) return null;
+    const steps = new Float64Array(indices.length - 1);
+    for (let i = 0; i < steps.length; i++) {
+      steps[i] = Math.abs(column[indices[i + 1]!]! - column[indices[i]!]!);
+    }
     const middle = medianOf(steps);
     return Number.isNaN(middle) ? null : middle;
   };
@@ -402,7 +409,7 @@ function aboutReference(
   columns: LocalColumns,
   meanM: PerAxis<number | null>,
   offsetM: PerAxis<number | null>,
-): Pick<Reduced, 'eastM' | 'northM' | 'upM'> {
+): EnuColumns {
   const centre = centreOf(meanM, offsetM);
   const shifted = (column: Float64Array, by: number | null) =>
     column.map((value) => value - (by ?? 0));

@@ -1,5 +1,5 @@
 import {blockMedianScreen} from '../statistics/robust.ts';
-import {type LocalColumns, taken} from './local-columns.ts';
+import {type LocalColumns, selected, taken} from './local-columns.ts';
 import type {PerAxis} from './result.ts';
 import {reasonCode} from './screen.ts';
 
@@ -20,10 +20,10 @@ export function screenNeighbours(
   const elapsedS = taken(gpsSeconds, indices);
   const startS = elapsedS[0]!;
   for (let i = 0; i < elapsedS.length; i++) elapsedS[i]! -= startS;
-  const components = [taken(columns.eastM, indices), taken(columns.northM, indices)];
+  const components = [selected(columns.eastM, indices), selected(columns.northM, indices)];
   const resolutions = [resolutionM.east ?? 0, resolutionM.north ?? 0];
   if (columns.heightKind !== 'none') {
-    components.push(taken(columns.upM, indices));
+    components.push(selected(columns.upM, indices));
     resolutions.push(resolutionM.up ?? 0);
   }
   const rejected = blockMedianScreen({elapsedS, components, resolutions});

@@ -7,7 +7,7 @@ import type {
   TakenOut,
 } from '../statistics/session-analysis.ts';
 import {type CovarianceM2, planeOf} from './covariance.ts';
-import {type LocalColumns, taken} from './local-columns.ts';
+import {type LocalColumns, selected, taken} from './local-columns.ts';
 import type {PerAxis} from './result.ts';
 
 /** A step that the statistics find, before anybody asks whether it matters. */
@@ -80,12 +80,14 @@ export function sessionOf(
   indices: Uint32Array,
   resolutionM: PerAxis<number | null>,
 ): Session {
-  const times = taken(gpsSeconds, indices);
-  const firstS = times[0]!;
+  const firstS = gpsSeconds[indices[0]!]!;
+  const lastS = gpsSeconds[indices[indices.length - 1]!]!;
+  const elapsedS = taken(gpsSeconds, indices);
+  for (let i = 0; i < elapsedS.length; i++) elapsedS[i]! -= firstS;
   const axes = columns.heightKind === 'none' ? AXES.slice(0, 2) : AXES;
   const analysis = analyseSession({
-    elapsedS: times.map((time) => time - firstS),
-    components: axes.map((axis) => taken(columns[`${axis}M`], indices)),
+    elapsedS,
+    components: axes.map((axis) => selected(columns[`${axis}M`], indices)),
     resolutions: axes.map((axis) => resolutionM[axis] ?? 0),
   });
   const {components} = analysis;
@@ -93,7 +95,7 @@ export function sessionOf(
   return {
     indices,
     fromGpsSeconds: firstS,
-    toGpsSeconds: times[times.length - 1]!,
+    toGpsSeconds: lastS,
     meanM: perAxis(components, ({mean}) => mean),
     standardUncertaintyM: told ? perAxis(components, sigma) : null,
     halfWidths95Without: (movement) => {

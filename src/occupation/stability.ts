@@ -17,9 +17,12 @@ export interface MovementRule {
   readonly asked: readonly Asked[];
 }
 
+/** No mark is held to less, however long the record: common practice, no source. */
+const LEAST_MOVEMENT_M = 0.001;
+
 /**
  * How much movement matters: what the user says, else twice the 95 % uncertainty of the mean by the
- * session alone, or a third of the tolerance where that is smaller.
+ * session alone, a millimetre or more, or a third of the tolerance where that is smaller.
  *
  * @param halfWidths95M  of the record with the movement in question taken out: a jump would
  *                       otherwise enlarge the very limit that it is held against
@@ -31,7 +34,7 @@ function limitOf(
   if (statedM !== null) return {horizontal: statedM, up: statedM};
   const twice = (...values: readonly (number | null)[]) => {
     const known = values.filter((value) => value !== null);
-    return known.length === 0 ? null : 2 * Math.max(...known);
+    return known.length === 0 ? null : Math.max(LEAST_MOVEMENT_M, 2 * Math.max(...known));
   };
   const thirdOf = (axes: readonly Asked['of'][]) => {
     const limits = asked.filter(({of}) => axes.includes(of)).map(({toleranceM}) => toleranceM / 3);

@@ -91,9 +91,10 @@ export function formatDms(parts: DmsParts, decimals: number, hemispheres: 'NS' |
   return `${parts.degrees}°${NO_BREAK_SPACE}${minutes}′${NO_BREAK_SPACE}${seconds}″${NO_BREAK_SPACE}${letter}`;
 }
 
-/** A span of time in the two units that matter: "2 h 14 min", "3 min 20 s", "47 s", "1.5 s". */
+/** A span of time in the two units that matter: "2 h 14 min", "3 min 20 s", "1.5 s", "0.05 s". */
 export function formatDuration(durationS: number): string {
   const space = NO_BREAK_SPACE;
+  if (durationS < 0.95) return `${Number(durationS.toPrecision(2))}${space}s`;
   if (durationS < 9.95) return `${Number(durationS.toFixed(1))}${space}s`;
   const wholeS = Math.round(durationS);
   if (wholeS < 100) return `${wholeS}${space}s`;

@@ -6,7 +6,7 @@ import {isoUtc} from '../../src/time/gps-time.ts';
 import {reducedSample} from './samples.ts';
 
 const {reduced, log} = reducedSample({name: 'slip-jump.nmea', mark: 'SLIP', maxLines: 30_000});
-const chunks = [...epochCsv({...reduced, epochs: log.epochs})];
+const chunks = [...epochCsv({...reduced, ...reduced.aboutReference(), epochs: log.epochs})];
 const lines = chunks.join('').split('\n');
 const header = (lines[0] ?? '').split(',');
 const rows = lines.slice(1, -1).map((line) => line.split(','));
