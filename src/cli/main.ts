@@ -5,6 +5,8 @@ import {InputError, UsageError} from '../errors.ts';
 import {
   checkExamples,
   checkOptions,
+  combineExamples,
+  combineOptions,
   contentsExamples,
   contentsOptions,
   convertExamples,
@@ -18,7 +20,8 @@ import {STATUS} from './status.ts';
 import {VERSION} from './version.ts';
 
 const EXIT_STATUSES = [
-  'Exit status: 0 done (check: holds)   1 check: does not hold   2 usage or unusable input',
+  'Exit status: 0 done (check: holds)   1 check: does not hold, combine: disagree',
+  '             2 usage or unusable input',
   '             3 cannot tell, no position, or rows refused   70 a defect of stillmark',
 ].join('\n');
 
@@ -75,7 +78,7 @@ async function run(words: readonly string[]): Promise<number> {
     .strict()
     .recommendCommands()
     .completion('completion', 'Print a script for completion in bash or zsh')
-    .demandCommand(1, 'name a command: contents, reduce, check, convert or sheet')
+    .demandCommand(1, 'name a command: contents, reduce, check, combine, convert or sheet')
     .wrap(100)
     .epilogue(EXIT_STATUSES)
     .fail((message: string | null, error: Error | undefined) => {
@@ -107,6 +110,16 @@ function commands(parser: Argv, answer: (status: number) => void): Argv {
       (args) => checkExamples(outputOptions(checkOptions(reduceOptions(inputOptions(args))))),
       async (argv) =>
         answer(await (await import('./reduce.ts')).reduce(withStandardInput(argv), 'check')),
+    )
+    .command(
+      'combine <results..>',
+      'Several occupations: one position per mark, agreement, distances between marks',
+      (args) => combineExamples(combineOptions(args)),
+      async (argv) => {
+        const results = untied(argv.results);
+        const {result: output} = argv;
+        answer(await (await import('./combine.ts')).combine({results, output}));
+      },
     )
     .command(
       'convert [position..]',

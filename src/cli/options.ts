@@ -53,6 +53,27 @@ export function checkExamples<T>(args: Argv<T>): Argv<T> {
   ]);
 }
 
+export function combineExamples<T>(args: Argv<T>): Argv<T> {
+  return withExamples(args, [
+    ['stillmark combine am.json pm.json', 'two occupations of a mark as one position'],
+    ['stillmark combine day1/*.json day2/*.json --result network.json', 'all marks of a network'],
+    ['stillmark combine p7-a.json p7-b.json p9.json', 'with the distance between two marks'],
+  ]);
+}
+
+export function combineOptions<T>(args: Argv<T>) {
+  return args
+    .positional('results', {
+      type: 'string',
+      array: true,
+      demandOption: true,
+      describe: 'result files of reduce or check, in any order',
+    })
+    .options({
+      result: {type: 'string', group: OUTPUT, describe: 'write everything computed, as JSON'},
+    });
+}
+
 export function convertExamples<T>(args: Argv<T>): Argv<T> {
   return withExamples(args, [
     ['stillmark convert 50.1,9.2,210.5 --from geodetic --to UTM', 'one position, its zone found'],

@@ -1,11 +1,18 @@
+import type {Combination} from '../occupation/combination.ts';
 import type {ContentsResult} from '../occupation/contents-result.ts';
 import type {Result} from '../occupation/result.ts';
+import {COMBINATION_SCHEMA} from './combination-schema.ts';
 import {CONTENTS_SCHEMA, RESULT_SCHEMA} from './schema.ts';
 import type {Schema} from './schema-parts.ts';
 
 /** The result document as text. */
 export function resultJson(result: Result): string {
   return canonicalJson(result, RESULT_SCHEMA);
+}
+
+/** The combination of several results as text. */
+export function combinationJson(combination: Combination): string {
+  return canonicalJson(combination, COMBINATION_SCHEMA);
 }
 
 /** The document of `contents` as text. */

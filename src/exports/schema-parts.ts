@@ -65,3 +65,31 @@ export function oneOf(...values: readonly (string | null)[]): Schema {
 export function orNull(schema: Schema): Schema {
   return {anyOf: [schema, NULL]};
 }
+
+/** A document's schema as it is published. */
+export interface DocumentSchema extends ObjectSchema {
+  readonly $schema: string;
+  readonly title: string;
+}
+
+export const UTC: Schema = {type: 'string', description: 'UTC as ISO 8601, ending in Z'};
+export const LENGTH_M: Schema = {type: 'number', description: 'metres'};
+export const SCALAR: Schema = {
+  anyOf: [TEXT, NUMBER, FLAG, NULL],
+};
+
+/** The same for east, north and up. */
+export function perAxis(value: Schema): ObjectSchema {
+  return object({east: value, north: value, up: value});
+}
+
+export const XYZ = object({x: LENGTH_M, y: LENGTH_M, z: LENGTH_M});
+export const PROGRAM = object({name: {const: 'stillmark'}, version: TEXT});
+
+export const NOTICE = object({
+  code: TEXT,
+  severity: oneOf('concern', 'caution', 'note', 'absent'),
+  about: listOf(TEXT),
+  values: mapOf(SCALAR),
+  text: TEXT,
+});

@@ -1,40 +1,27 @@
 import {
   COUNT,
+  type DocumentSchema,
   FLAG,
+  LENGTH_M,
   listOf,
   mapOf,
-  NULL,
+  NOTICE,
   NUMBER,
-  type ObjectSchema,
   object,
   oneOf,
   orNull,
+  PROGRAM,
+  perAxis,
+  SCALAR,
   type Schema,
   TEXT,
+  UTC,
+  XYZ,
 } from './schema-parts.ts';
 
-/** A document's schema as it is published. */
-export interface DocumentSchema extends ObjectSchema {
-  readonly $schema: string;
-  readonly title: string;
-}
-
-const UTC: Schema = {type: 'string', description: 'UTC as ISO 8601, ending in Z'};
-const LENGTH_M: Schema = {type: 'number', description: 'metres'};
 const DEGREES: Schema = {type: 'number', description: 'degrees'};
-const SCALAR: Schema = {
-  anyOf: [TEXT, NUMBER, FLAG, NULL],
-};
-
-function perAxis(value: Schema): ObjectSchema {
-  return object({east: value, north: value, up: value});
-}
-
 const PER_AXIS_OR_NULL = perAxis(orNull(LENGTH_M));
-const XYZ = object({x: LENGTH_M, y: LENGTH_M, z: LENGTH_M});
 const COUNTS = mapOf(COUNT);
-const PROGRAM = object({name: {const: 'stillmark'}, version: TEXT});
-
 const INPUT = object({
   name: TEXT,
   bytes: COUNT,
@@ -256,14 +243,6 @@ const COMPARISON = object({
     }),
   ),
   diagnosis: orNull(DIAGNOSIS),
-});
-
-const NOTICE = object({
-  code: TEXT,
-  severity: oneOf('concern', 'caution', 'note', 'absent'),
-  about: listOf(TEXT),
-  values: mapOf(SCALAR),
-  text: TEXT,
 });
 
 /** `stillmark.result/1`: what `reduce` and `check` write with `--result`. */

@@ -1,5 +1,6 @@
 import {AGREEMENT_SENTENCES} from './agreement.ts';
 import {ANTENNA_SENTENCES} from './antenna-notices.ts';
+import {COMBINATION_SENTENCES} from './combination-notices.ts';
 import {LOG_SENTENCES} from './log-notices.ts';
 import {
   counted,
@@ -136,6 +137,7 @@ const SENTENCES: ReadonlyMap<string, Sentence> = new Map(
     ...LOG_SENTENCES,
     ...ANTENNA_SENTENCES,
     ...AGREEMENT_SENTENCES,
+    ...COMBINATION_SENTENCES,
     ...RECORD_SENTENCES,
     ...MISSING_SENTENCES,
   }),

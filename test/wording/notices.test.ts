@@ -2,11 +2,18 @@ import {readdirSync, readFileSync} from 'node:fs';
 import {join, resolve} from 'node:path';
 import {describe, expect, test} from 'vitest';
 import {ANTENNA_SENTENCES} from '../../src/wording/antenna-notices.ts';
+import {COMBINATION_SENTENCES} from '../../src/wording/combination-notices.ts';
 import {LOG_SENTENCES} from '../../src/wording/log-notices.ts';
 import {MISSING_SENTENCES, noticeText, RECORD_SENTENCES} from '../../src/wording/notices.ts';
 
 const SRC = resolve(import.meta.dirname, '../../src');
-const ALL = {...ANTENNA_SENTENCES, ...LOG_SENTENCES, ...RECORD_SENTENCES, ...MISSING_SENTENCES};
+const ALL = {
+  ...ANTENNA_SENTENCES,
+  ...COMBINATION_SENTENCES,
+  ...LOG_SENTENCES,
+  ...RECORD_SENTENCES,
+  ...MISSING_SENTENCES,
+};
 
 /** Every code that the sources raise, by the ways in which they are written. */
 function codesRaised(): string[] {
