@@ -1,5 +1,5 @@
+import {moments} from '../../statistics/moments.ts';
 import type {PerAxis} from '../result.ts';
-import {meanAndDeviation} from './order-statistics.ts';
 import type {UsedColumns} from './used-columns.ts';
 
 /** How alike two epochs are that lie so far apart: 1 at lag 0, 0 for independent epochs. */
@@ -32,7 +32,8 @@ export function autocorrelationOf(columns: UsedColumns, intervalS: number | null
   if (lags.length < 4) return null;
   const axis = (valuesM: Float64Array) => {
     const grid = new Float64Array(slots).fill(Number.NaN);
-    const {mean, deviation} = meanAndDeviation(valuesM);
+    const {mean, standardDeviation} = moments(valuesM)!;
+    const deviation = standardDeviation ?? 0;
     if (!(deviation > LEAST_DEVIATION_M)) return null;
     for (let i = 0; i < count; i++) {
       const slot = Math.round((gpsSeconds[i]! - gpsSeconds[0]!) / intervalS);

@@ -1,4 +1,4 @@
-import {meanAndDeviation} from './order-statistics.ts';
+import {moments} from '../../statistics/moments.ts';
 import {roundStepAbove, widthOfWholeSteps} from './round-steps.ts';
 
 export interface Histogram {
@@ -19,7 +19,8 @@ const LEAST_BIN_M = 0.0001;
 
 export function histogramOf(valuesM: Float64Array, resolutionM: number | null): Histogram | null {
   if (valuesM.length === 0) return null;
-  const {mean, deviation} = meanAndDeviation(valuesM);
+  const {mean, standardDeviation} = moments(valuesM)!;
+  const deviation = standardDeviation ?? 0;
   const wishedM = roundStepAbove(Math.max(deviation / BINS_PER_SIGMA, LEAST_BIN_M));
   const binM = widthOfWholeSteps(wishedM, resolutionM);
   const halfFrameM = Math.max(FRAME_SIGMAS * deviation, 4 * binM);

@@ -1,5 +1,5 @@
+import {moments} from '../../statistics/moments.ts';
 import type {PerAxis} from '../result.ts';
-import {meanAndDeviation} from './order-statistics.ts';
 import {roundStepAbove, widthOfWholeSteps} from './round-steps.ts';
 import type {UsedColumns} from './used-columns.ts';
 
@@ -60,7 +60,8 @@ export function planCells(columns: UsedColumns, resolution: PerAxis<number | nul
 function halfFrame({eastM, northM}: UsedColumns): number {
   let widestM = LEAST_HALF_FRAME_M;
   for (const valuesM of [eastM, northM]) {
-    const {mean, deviation} = meanAndDeviation(valuesM);
+    const {mean, standardDeviation} = moments(valuesM)!;
+    const deviation = standardDeviation ?? 0;
     let furthestM = 0;
     for (let i = 0; i < valuesM.length; i++) {
       furthestM = Math.max(furthestM, Math.abs(valuesM[i]! - mean));
@@ -83,7 +84,7 @@ function axisOfCells(
   halfFrameM: number,
 ): CellAxis {
   const cellM = widthOfWholeSteps(wishedM, resolutionM);
-  const {mean} = meanAndDeviation(valuesM);
+  const {mean} = moments(valuesM)!;
   // Values of a coarse log lie on a lattice: edges half a step beside it keep rounding out.
   const latticeM = cellM === wishedM ? 0 : valuesM[0]! - cellM / 2;
   const originM = latticeM + Math.floor((mean - halfFrameM - latticeM) / cellM) * cellM;

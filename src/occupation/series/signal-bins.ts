@@ -1,5 +1,5 @@
 import type {Epochs, Satellites} from '../../epochs/epochs.ts';
-import {type FiveNumbers, fiveNumbers} from './order-statistics.ts';
+import {type FiveNumbers, fiveNumbers} from './five-numbers.ts';
 import {roundBinS} from './round-steps.ts';
 import {levelAt} from './sky.ts';
 

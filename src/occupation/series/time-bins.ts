@@ -1,5 +1,5 @@
 import type {PerAxis} from '../result.ts';
-import {type FiveNumbers, fiveNumbers} from './order-statistics.ts';
+import {type FiveNumbers, fiveNumbers} from './five-numbers.ts';
 import {roundBinS} from './round-steps.ts';
 
 /** One bin that holds epochs used. */

@@ -1,5 +1,5 @@
 import type {PerAxis} from '../../occupation/result.ts';
-import type {FiveNumbers} from '../../occupation/series/order-statistics.ts';
+import type {FiveNumbers} from '../../occupation/series/five-numbers.ts';
 import type {TimeBins} from '../../occupation/series/time-bins.ts';
 import type {PartMean} from '../../occupation/series.ts';
 import {proseNumber} from '../../wording/numbers.ts';

@@ -1,5 +1,5 @@
 import {describe, expect, test} from 'vitest';
-import {fiveNumbers, meanAndDeviation} from '../../../src/occupation/series/order-statistics.ts';
+import {fiveNumbers} from '../../../src/occupation/series/five-numbers.ts';
 import {
   roundBinS,
   roundStepAbove,
@@ -96,15 +96,6 @@ describe('the helpers of bins', () => {
     expect(five).toMatchObject({least: 1, median: 5.5, most: 10});
     expect(five.p5).toBeCloseTo(1.45, 12);
     expect(five.p95).toBeCloseTo(9.55, 12);
-  });
-
-  test('mean and sample standard deviation; one value has none', () => {
-    expect(meanAndDeviation(Float64Array.from([2, 4, 4, 4, 5, 5, 7, 9])).mean).toBe(5);
-    expect(meanAndDeviation(Float64Array.from([2, 4, 4, 4, 5, 5, 7, 9])).deviation).toBeCloseTo(
-      Math.sqrt(32 / 7),
-      12,
-    );
-    expect(meanAndDeviation(Float64Array.from([3]))).toEqual({mean: 3, deviation: 0});
   });
 
   test('steps are 1, 2, 5 and not below what was asked', () => {
