@@ -1,5 +1,12 @@
 import {headlineFacts} from '../occupation/headline-facts.ts';
-import type {DiagnosisFound, Notice, PerAxis, Position, Result} from '../occupation/result.ts';
+import type {
+  DiagnosisFound,
+  Notice,
+  PerAxis,
+  Position,
+  Result,
+  Segment,
+} from '../occupation/result.ts';
 import {accidentalSentence, NOTHING_FITS} from '../wording/diagnosis.ts';
 import {geoidName} from '../wording/heights.ts';
 import {
@@ -10,6 +17,7 @@ import {
   formatAzimuth,
   formatDuration,
   formatLength,
+  formatRate,
   formatUtc,
   joined,
   type LengthScale,
@@ -164,15 +172,12 @@ function shownPosition(result: Result): Position | null {
 function facts(result: Result): string[] {
   const lines: [string, string][] = [];
   for (const segment of result.segments) {
-    const span =
-      result.segments.length > 1
-        ? `  ${formatUtc(segment.fromUtc).slice(11)} to ${formatUtc(segment.toUtc).slice(11)}`
-        : '';
+    const span = result.segments.length > 1 ? `  ${partText(segment, result)}` : '';
     const scatterM = result.scatter?.aboutMean.observed.r95M ?? null;
     lines.push(['position', `${positionText(segment.position, scatterM)}${span}`]);
   }
   const first = result.segments[0]?.position;
-  if (first?.separation != null) lines.push(['height', separationText(first)]);
+  if (first?.separation != null) lines.push(['height', separationText(first, result)]);
   if (first !== undefined) lines.push(['of', `${first.of}; ${frameText(first)}`]);
   const {epochs, occupation} = result;
   if (occupation.startUtc !== null && occupation.endUtc !== null) {
@@ -191,6 +196,13 @@ function facts(result: Result): string[] {
   ]);
   lines.push(['stillness', stillnessText(result)]);
   return lines.map(([name, text]) => `${name.padEnd(11)}${text}`);
+}
+
+/** From when to when a part of the record lasts, with the days where there are several. */
+function partText({fromUtc, toUtc}: Segment, {epochs}: Result): string {
+  const oneDay = epochs.firstUtc?.slice(0, 10) === epochs.lastUtc?.slice(0, 10);
+  const shown = (utc: string) => formatUtc(utc).slice(oneDay ? 11 : 0);
+  return `${shown(fromUtc)} to ${shown(toUtc)}`;
 }
 
 /** As many digits as the uncertainty deserves, or the scatter where there is none. */
@@ -213,9 +225,13 @@ function positionText(
 }
 
 /** The height above the geoid of a named model; the receiver's own is no height to hand on. */
-function separationText({orthometricHeightM, separation, uncertainty95M}: Position): string {
+function separationText(
+  {orthometricHeightM, separation, uncertainty95M}: Position,
+  {scatter}: Result,
+): string {
   if (separation === null || orthometricHeightM === null) return 'no height above the geoid';
-  const decimals = coordinateDecimals(uncertainty95M?.up ?? null);
+  const scatterM = scatter?.aboutMean.observed.r95M ?? null;
+  const decimals = coordinateDecimals(uncertainty95M?.up ?? scatterM);
   return `${fixed(orthometricHeightM, decimals)} m above ${geoidName(separation)}; separation ${fixed(separation.separationM, 3)} m (${separation.from})`;
 }
 
@@ -240,7 +256,7 @@ function stillnessText({stability}: Result): string {
   const power =
     rates.length === 0
       ? ''
-      : `; a steady drift of ${formatLength(Math.max(...rates))} per hour would have been seen`;
+      : `; a steady drift of ${formatRate(Math.max(...rates))} would have been seen`;
   const small = stability.steps.filter((step) => !step.material).length;
   const steps = small === 0 ? '' : `; ${counted(small, 'small step')} found, below what matters`;
   return `${stability.verdict}${power}${steps}`;

@@ -6,6 +6,7 @@ import {
   formatDuration,
   formatLength,
   formatPercent,
+  formatRate,
   joined,
   proseNumber,
 } from './numbers.ts';
@@ -48,7 +49,7 @@ export interface MovementFacts {
 export function driftPower(detectableMPerHour: number | null): string {
   return detectableMPerHour === null
     ? ''
-    : `A steady drift of ${formatLength(detectableMPerHour)} per hour would have been seen. `;
+    : `A steady drift of ${formatRate(detectableMPerHour)} would have been seen. `;
 }
 
 /** Under the figure over time. */

@@ -8,6 +8,7 @@ import {
   formatGivenLength,
   formatLength,
   formatPercent,
+  formatRate,
   formatUtc,
 } from './numbers.ts';
 import {type NoticeValues, numberIn, type Sentence, textIn} from './sentence.ts';
@@ -188,7 +189,7 @@ function axisRates(values: NoticeValues): string {
   return ['east', 'north', 'up']
     .flatMap((axis) => {
       const rate = values[`${axis}MPerHour`];
-      return typeof rate === 'number' ? [`${axis} ${formatLength(rate, true)} per hour`] : [];
+      return typeof rate === 'number' ? [`${axis} ${formatRate(rate, true)}`] : [];
     })
     .join(', ');
 }

@@ -47,6 +47,21 @@ export function formatLength(valueM: number, signed = false): string {
   return `${proseNumber(valueM * scale.perM, scale.decimals, signed)}${NO_BREAK_SPACE}${scale.unit}`;
 }
 
+const HOURS_PER: readonly (readonly [unit: string, hours: number])[] = [
+  ['hour', 1],
+  ['day', 24],
+];
+const HOURS_PER_YEAR = 8766;
+/** Half a millimetre still shows a digit that means something. */
+const LEAST_RATE_SHOWN_M = 0.0005;
+
+/** A rate by the shortest time in which it comes to something: "0.6 mm per day". */
+export function formatRate(mPerHour: number, signed = false): string {
+  const shown = HOURS_PER.find(([, hours]) => Math.abs(mPerHour) * hours >= LEAST_RATE_SHOWN_M);
+  const [unit, hours] = shown ?? ['year', HOURS_PER_YEAR];
+  return `${formatLength(mPerHour * hours, signed)} per ${unit}`;
+}
+
 /** A limit or setting that a person chose: no digits that were not given. */
 export function formatGivenLength(valueM: number): string {
   const inMm = Number((valueM * 1000).toPrecision(9));

@@ -11,6 +11,7 @@ import {
   formatGivenLength,
   formatLength,
   formatPercent,
+  formatRate,
   formatUtc,
   joined,
   proseNumber,
@@ -57,6 +58,18 @@ describe('numbers', () => {
   });
 
   test.each([
+    [0.0301, '30.1 mm per hour'],
+    [0.0006, '0.6 mm per hour'],
+    [0.0001, '2.4 mm per day'],
+    [0.000002, '17.5 mm per year'],
+    [0, '0.0 mm per year'],
+    [83.7, '83.70 m per hour'],
+  ])('a rate of %f m per hour reads "%s"', (mPerHour, text) => {
+    expect(plain(formatRate(mPerHour))).toBe(text);
+  });
+
+  test.each([
+    [0.05, '0.05 s'],
     [1.5, '1.5 s'],
     [47, '47 s'],
     [200, '3 min 20 s'],

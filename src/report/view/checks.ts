@@ -3,8 +3,8 @@ import {
   counted,
   fixed,
   formatDuration,
-  formatLength,
   formatPercent,
+  formatRate,
   joined,
 } from '../../wording/numbers.ts';
 import {secondsBetween} from '../charts/ticks.ts';
@@ -211,7 +211,7 @@ function movementChecks({result, series, options}: ReportContext): CheckDraft[] 
     };
   };
   const power = (drift: {detectableMPerHour: number} | null) =>
-    drift === null ? '' : `${formatLength(drift.detectableMPerHour)} per hour would have been seen`;
+    drift === null ? '' : `${formatRate(drift.detectableMPerHour)} would have been seen`;
   return [
     tested && stability.steps.length === 0
       ? {name: 'Jumps of the positions', tone: 'within' as const, outcome: 'none found'}
