@@ -1,10 +1,10 @@
 import {
   compassWord,
   counted,
-  formatClock,
   formatCount,
   formatDuration,
   formatLength,
+  formatMoment,
   formatPercent,
   formatRate,
   joined,
@@ -41,6 +41,7 @@ export interface MovementFacts {
     readonly sizeM: number;
     readonly material: boolean;
   }[];
+  readonly recordS: number;
   /** The largest total over the record that counts as movement, if any. */
   readonly driftM: number | null;
 }
@@ -61,7 +62,7 @@ export function movementFinding(facts: MovementFacts): string {
       const [first] = material;
       if (first === undefined) return 'The positions jumped.';
       const others = material.length > 1 ? ` and ${material.length - 1} more times` : '';
-      return `The positions jump by ${formatLength(first.sizeM)} at ${formatClock(first.utc)}${others}.`;
+      return `The positions jump by ${formatLength(first.sizeM)} at ${formatMoment(first.utc, facts.recordS)}${others}.`;
     }
     case 'drifting':
       return facts.driftM === null

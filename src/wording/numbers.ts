@@ -174,6 +174,13 @@ export function formatClock(iso: string): string {
   return iso.slice(11, 19);
 }
 
+const DAY_S = 86_400;
+
+/** The clock of a moment in UTC, with its date where the record lasts longer than a day. */
+export function formatMoment(iso: string, recordS: number): string {
+  return recordS > DAY_S ? formatUtc(iso) : formatClock(iso);
+}
+
 /** Words joined as in a sentence: "a", "a and b", "a, b and c". */
 export function joined(words: readonly string[], last = 'and'): string {
   if (words.length <= 1) return words.join('');

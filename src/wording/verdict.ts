@@ -3,7 +3,7 @@ import {
   formatDuration,
   formatGivenLength,
   formatLength,
-  formatUtc,
+  formatMoment,
 } from './numbers.ts';
 
 /** The numbers that the headline speaks of; lengths in metres, null where not computed. */
@@ -147,7 +147,7 @@ function movingSentence(facts: HeadlineFacts): string {
     const {sizeM, utc} = facts.materialStep;
     const parts =
       facts.segments > 1 ? `; each of the ${facts.segments} parts has its own mean` : '';
-    return `The positions jumped by ${formatLength(sizeM)} at ${formatUtc(utc).slice(11)} UTC, so no single mean stands for the whole record${parts}.`;
+    return `The positions jumped by ${formatLength(sizeM)} at ${formatMoment(utc, facts.durationS)} UTC, so no single mean stands for the whole record${parts}.`;
   }
   const how =
     facts.stability === 'settling'

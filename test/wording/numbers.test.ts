@@ -10,6 +10,7 @@ import {
   formatDuration,
   formatGivenLength,
   formatLength,
+  formatMoment,
   formatPercent,
   formatRate,
   formatUtc,
@@ -99,5 +100,12 @@ describe('numbers', () => {
     expect(joined(['a', 'b', 'c'])).toBe('a, b and c');
     const parts = {negative: true, degrees: 5, minutes: 4, seconds: 7.65432};
     expect(plain(formatDms(parts, 3, 'NS'))).toBe('5° 04′ 07.654″ S');
+  });
+});
+
+describe('formatMoment', () => {
+  test('the clock within a day, and the date as well beyond', () => {
+    expect(formatMoment('2026-05-12T10:38:09Z', 3600)).toBe('10:38:09');
+    expect(formatMoment('2026-05-12T10:38:09Z', 3 * 86_400)).toBe('2026-05-12 10:38:09');
   });
 });

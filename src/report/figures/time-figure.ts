@@ -56,6 +56,7 @@ export function timeFigure(context: ReportContext): FigureOrReason {
         sizeM: Math.hypot(step.eastM, step.northM, step.upM ?? 0),
         material: step.material,
       })),
+      recordS: series.spanS,
       driftM: largestDrift(result, series.spanS),
     }),
     note: `${driftPower(detectable(result))}${capital(wide.unit.name)} are equally tall in all panels. ${bins} Times are UTC${zoneNote(startUtc, context.options.timeZone)}. Point at the chart to read it.`,

@@ -4,10 +4,10 @@ import {offsetAgainstUncertainty} from '../../wording/findings.ts';
 import {
   counted,
   formatAzimuth,
-  formatClock,
   formatCount,
   formatGivenLength,
   formatLength,
+  formatMoment,
   proseNumber,
 } from '../../wording/numbers.ts';
 import {besideUtc} from '../../wording/time-zone.ts';
@@ -92,7 +92,7 @@ function keyNumbers(context: ReportContext): KeyNumber[] {
 }
 
 /** Where movement split the record: how far, into how many parts, and how far apart. */
-function movementKeys({result, options}: ReportContext): KeyNumber[] {
+function movementKeys({result, series, options}: ReportContext): KeyNumber[] {
   const {segments, stability, scatter} = result;
   const [jump] = stability.steps
     .filter((step) => step.material)
@@ -105,7 +105,7 @@ function movementKeys({result, options}: ReportContext): KeyNumber[] {
       'Largest jump',
       jump.sizeM,
       options.units,
-      `at ${formatClock(jump.utc)} UTC${besideUtc(jump.utc, options.timeZone)}`,
+      `at ${formatMoment(jump.utc, series.spanS)} UTC${besideUtc(jump.utc, options.timeZone)}`,
     ),
     {
       label: 'Parts',
