@@ -90,6 +90,14 @@ export function readLength(text: string): ReadLength | RefusedQuantity {
   return {kind: 'length', lengthM, stepM: stepOf(number) * scale, unit};
 }
 
+/** A reading as it was written, "5.715 ft", with metres behind any other unit. */
+export function lengthAsWritten({lengthM, stepM, unit}: ReadLength): string {
+  const scale = METRES_PER_UNIT[unit];
+  const decimals = Math.max(0, Math.round(-Math.log10(stepM / scale)));
+  const text = `${(lengthM / scale).toFixed(decimals)} ${unit}`;
+  return unit === 'm' ? text : `${text} (${lengthM.toFixed(4)} m)`;
+}
+
 /** A plain decimal number with a decimal point. */
 export function readNumber(text: string): ReadNumber | RefusedQuantity {
   const trimmed = text.trim();

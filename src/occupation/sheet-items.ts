@@ -1,3 +1,4 @@
+import {lengthAsWritten, type ReadLength} from '../fieldbook/quantity.ts';
 import {type Fields, isMapping} from '../fieldbook/shape.ts';
 import type {Sheet} from '../fieldbook/sheet.ts';
 import {sheetSections} from '../fieldbook/sheet-shape.ts';
@@ -37,7 +38,7 @@ function written(name: string, value: unknown): string {
   if (typeof value === 'number') return `${value}${unitOf(name)}`;
   if (typeof value !== 'object' || value === null) return String(value);
   if ('written' in value) return String(value.written);
-  if ('lengthM' in value) return `${value.lengthM} m`;
+  if ('lengthM' in value) return lengthAsWritten(value as ReadLength);
   return Object.entries(value)
     .filter(([, part]) => part !== undefined)
     .map(([part, of]) => `${partName(part)} ${written(part, of)}`)

@@ -162,7 +162,10 @@ function angleRow(
     return row(name, [textCell(text), textCell('')]);
   }
   const text = fixed(degrees, degreeDecimals(metreDecimals));
-  return row(name, [numberCell(text), textCell(hemispheres === 'NS' ? '° north' : '° east')]);
+  return row(name, [
+    numberCell(text),
+    textCell(hemispheres === 'NS' ? '°\u00a0north' : '°\u00a0east'),
+  ]);
 }
 
 /** The parts that movement split the record into, each with its own position. */
