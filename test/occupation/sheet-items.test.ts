@@ -11,6 +11,8 @@ describe('sheetItems', () => {
   test('readings stay as they were written, with metres behind other units', () => {
     const items = itemsOf(`
 antenna:
+  measured: vertical
+  measured to: antenna reference point
   before:
     readings: [1.740 m, 1742 mm]
     check readings: [5.715 ft]
