@@ -125,15 +125,16 @@ async function convertList(
   requireOutputs([options.output], [path]);
   const name = inputName(path);
   const progress = progressOn(process.stderr, options.quiet, () => performance.now());
+  const shownPath = path === '-' ? name : path;
   const converter = new ListConverter({
-    path,
+    path: shownPath,
     columns: options.columns?.split(',').map((column) => column.trim()) ?? null,
     plan: (header) => planned(options, header),
     style,
     factors: options.factors,
     refuse: (lineNumber, reason) => {
       progress.done();
-      process.stderr.write(`stillmark: ${path}, line ${lineNumber}: ${reason}\n`);
+      process.stderr.write(`stillmark: ${shownPath}, line ${lineNumber}: ${reason}\n`);
     },
   });
   progress.start(name, inputSize(path));

@@ -180,6 +180,9 @@ function rowText(
   {style, factors}: ListRequest,
 ): string {
   const cells = splitCells(line, separator);
+  if (line.includes('"') && line.split('"').length % 2 === 0) {
+    throw new UsageError('a quote opens in this row and is never closed; close it');
+  }
   if (cells.length !== layout.columnCount) {
     throw new UsageError(
       `need ${layout.columnCount} cells as in the header, found ${cells.length}; put text that ` +

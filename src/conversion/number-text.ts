@@ -9,8 +9,7 @@ const PLAIN = /^[-+]?(?:\d+\.?\d*|\.\d+)(?:[eE][-+]?\d+)?$/;
 export function readPlainNumber(text: string, what: string, unit: string): ReadNumber {
   if (PLAIN.test(text)) return Number(text);
   if (text === '') return `need ${what} in ${unit}, found nothing`;
-  const comma = /^[-+]?\d+,\d+$/.test(text) ? '; write a decimal point' : '';
-  return `need ${what} in ${unit}, found "${text}"${comma}`;
+  return `need ${what} in ${unit}, found "${text}"${commaHint(text)}`;
 }
 
 /** An angle in decimal degrees or in degrees, minutes and seconds. */
@@ -22,7 +21,11 @@ export function readAngle(text: string, kind: AngleKind): ReadNumber {
     if (degrees >= -limit && degrees <= limit) return degrees;
   }
   const read = parseAngle(text, kind);
-  return read.kind === 'refused' ? read.message : read.degrees;
+  return read.kind === 'refused' ? `${read.message}${commaHint(text)}` : read.degrees;
+}
+
+function commaHint(text: string): string {
+  return /^[-+]?\d+,\d+$/.test(text) ? '; write a decimal point' : '';
 }
 
 /** How the numbers of a converted position are written. */

@@ -89,6 +89,14 @@ describe('ListConverter', () => {
     expect(counts.refused).toBe(4);
   });
 
+  test('a quote that is never closed and a decimal comma are called so', () => {
+    const {refused} = convertedList('name;lat;lon\n"A;50;9\nB;50,5;9\n', {to: 'UTM 32N'});
+    expect(refused).toEqual([
+      expect.stringMatching(/^2: a quote opens in this row and is never closed/),
+      expect.stringMatching(/^3: need a latitude .* found "50,5"; write a decimal point/),
+    ]);
+  });
+
   test('units in the header count', () => {
     const {rows} = convertedList('east_mm,north_cm,up_ft\n1500,200,10\n', {
       from: 'local',
