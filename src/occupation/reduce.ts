@@ -1,6 +1,6 @@
 import type {EnuColumns} from '../geodesy/local.ts';
-import {median as medianOf} from '../statistics/quantile.ts';
 import {isoUtc} from '../time/gps-time.ts';
+import {aboutReference, scatterOf, typicalStepM, usedPositions} from './about-reference.ts';
 import {epochAccount} from './account.ts';
 import {
   comparisonOf,
@@ -19,6 +19,7 @@ import {markItems} from './mark-items.ts';
 import {type MarkPlace, markPlace} from './mark-place.ts';
 import {isTravelling} from './motion.ts';
 import {type NoticeList, noticeList} from './notices.ts';
+import {materialCuts, sessionAt, sessionsBetween} from './parts.ts';
 import {withoutNegativeZero} from './plain-numbers.ts';
 import {positionOf} from './position.ts';
 import {
@@ -34,20 +35,11 @@ import {
 import {eccentricityOf, reducedToMark} from './reduce-to-mark.ts';
 import {offsetFrom, referenceOf} from './reference.ts';
 import type {ReduceRequest} from './request.ts';
-import type {
-  BudgetRow,
-  EpochAccount,
-  PerAxis,
-  Reference,
-  Result,
-  Segment,
-  Stability,
-} from './result.ts';
-import {scatterAbout, type UsedPositions} from './scatter.ts';
-import {reasonCode, type ScreenOutcome, screenByRules} from './screen.ts';
+import type {BudgetRow, EpochAccount, Reference, Result, Segment, Stability} from './result.ts';
+import {type ScreenOutcome, screenByRules} from './screen.ts';
 import {screenNeighbours} from './screen-neighbours.ts';
 import {screeningOf} from './screening-of-record.ts';
-import {type Session, sessionOf} from './session.ts';
+import type {Session} from './session.ts';
 import {sheetItems} from './sheet-items.ts';
 import {stabilityOf} from './stability.ts';
 import {statedContributions, statedOfGeoid} from './stated-contributions.ts';
@@ -126,7 +118,8 @@ function trackOf({log}: ReduceRequest, columns: LocalColumns, indices: Uint32Arr
 function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns): Reduced {
   const {request, notices, account} = record;
   const {epochs} = request.log;
-  const whole = session(request, columns, keptIndices(outcome.reason), account);
+  const parted = {request, account, columns};
+  const whole = sessionAt(parted, keptIndices(outcome.reason));
   const place = request.mark === null ? null : markPlace(request.mark, request.ellipsoid);
   const stability = stabilityOf(
     whole,
@@ -134,8 +127,7 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
     ({interval95GpsSeconds: [from, to]}) => besideStep(epochs, from, to, account.intervalS ?? 1),
   );
   const cuts = materialCuts(whole, stability);
-  const sessions =
-    cuts.length === 0 ? [whole] : sessionsBetween(cuts, {record, outcome, columns, whole});
+  const sessions = cuts.length === 0 ? [whole] : sessionsBetween(cuts, parted, outcome);
   const segments = sessions.map((part) => segmentOf(part, record, columns, outcome));
   const single = segments.length === 1 ? segments[0]! : null;
   const mean = (single ?? segmentOf(whole, record, columns, outcome)).position;
@@ -259,50 +251,6 @@ function common({request, account, notices, antenna}: Record) {
   };
 }
 
-function session(
-  {log}: ReduceRequest,
-  columns: LocalColumns,
-  indices: Uint32Array,
-  account: EpochAccount,
-): Session {
-  return sessionOf(log.epochs.gpsSeconds, columns, indices, account.resolutionM);
-}
-
-/** Times of the material steps. */
-function materialCuts({steps: found}: Session, {steps}: Stability): number[] {
-  return found.filter((_, i) => steps[i]!.material).map(({gpsSeconds}) => gpsSeconds);
-}
-
-interface Splitting {
-  readonly record: Record;
-  readonly outcome: ScreenOutcome;
-  readonly columns: LocalColumns;
-  readonly whole: Session;
-}
-
-/**
- * The stretches between material steps, each screened again by itself: what was far from its
- * neighbours across a jump need not be so within its own part.
- */
-function sessionsBetween(
-  cuts: readonly number[],
-  {record, outcome, columns}: Splitting,
-): Session[] {
-  const {request, account} = record;
-  const {gpsSeconds} = request.log.epochs;
-  const {reason} = outcome;
-  const gross = reasonCode('far from its neighbours');
-  for (let i = 0; i < reason.length; i++) if (reason[i] === gross) reason[i] = 0;
-  const edges = [Number.NEGATIVE_INFINITY, ...cuts, Number.POSITIVE_INFINITY];
-  return edges.slice(1).flatMap((end, part) => {
-    const within = () =>
-      keptIndices(reason).filter((i) => gpsSeconds[i]! >= edges[part]! && gpsSeconds[i]! < end);
-    screenNeighbours(gpsSeconds, columns, within(), account.resolutionM, reason);
-    const indices = within();
-    return indices.length === 0 ? [] : [session(request, columns, indices, account)];
-  });
-}
-
 function segmentOf(
   part: Session,
   record: Record,
@@ -353,69 +301,5 @@ function targetOf({geodetic}: Reference, place: MarkPlace | null) {
     plan: {latitudeDeg: geodetic.latitudeDeg, longitudeDeg: geodetic.longitudeDeg},
     ellipsoidalHeightM: geodetic.ellipsoidalHeightM,
     orthometricHeightM: place?.orthometricHeightM ?? null,
-  };
-}
-
-function scatterOf(
-  used: UsedPositions,
-  meanM: PerAxis<number | null>,
-  offsetM: PerAxis<number | null>,
-): Result['scatter'] {
-  return {
-    aboutMean: scatterAbout(used, meanM),
-    aboutReference: scatterAbout(used, centreOf(meanM, offsetM)),
-  };
-}
-
-function usedPositions(columns: LocalColumns, {indices}: Session) {
-  return {
-    eastM: selected(columns.eastM, indices),
-    northM: selected(columns.northM, indices),
-    upM: selected(columns.upM, indices),
-  };
-}
-
-/** Median change of a coordinate from one epoch used to the next. */
-function typicalStepM(columns: LocalColumns, {indices}: Session): PerAxis<number | null> {
-  const median = (column: Float64Array) => {
-    if (indices.length < 2) return null;
-    const steps = new Float64Array(indices.length - 1);
-    for (let i = 0; i < steps.length; i++) {
-      steps[i] = Math.abs(column[indices[i + 1]!]! - column[indices[i]!]!);
-    }
-    const middle = medianOf(steps);
-    return Number.isNaN(middle) ? null : middle;
-  };
-  return {
-    east: median(columns.eastM),
-    north: median(columns.northM),
-    up: columns.heightKind === 'none' ? null : median(columns.upM),
-  };
-}
-
-/** Where the reference lies in the frame of the columns, from the mean and its offset. */
-function centreOf(
-  meanM: PerAxis<number | null>,
-  offsetM: PerAxis<number | null>,
-): PerAxis<number | null> {
-  const centre = (axis: keyof PerAxis) => {
-    const [mean, offset] = [meanM[axis], offsetM[axis]];
-    return mean === null || offset === null ? null : mean - offset;
-  };
-  return {east: centre('east'), north: centre('north'), up: centre('up')};
-}
-
-function aboutReference(
-  columns: LocalColumns,
-  meanM: PerAxis<number | null>,
-  offsetM: PerAxis<number | null>,
-): EnuColumns {
-  const centre = centreOf(meanM, offsetM);
-  const shifted = (column: Float64Array, by: number | null) =>
-    column.map((value) => value - (by ?? 0));
-  return {
-    eastM: shifted(columns.eastM, centre.east),
-    northM: shifted(columns.northM, centre.north),
-    upM: shifted(columns.upM, centre.up),
   };
 }
