@@ -63,9 +63,9 @@ function tied(words: readonly string[]): string[] {
 }
 
 async function run(words: readonly string[]): Promise<number> {
-  let status: number = STATUS.done;
-  const parser = commands(yargs(tied(words)), (answer) => {
-    status = answer;
+  let work: Work = async () => STATUS.done;
+  const parser = commands(yargs(tied(words)), (chosen) => {
+    work = chosen;
   })
     .scriptName('stillmark')
     .usage(
@@ -85,50 +85,56 @@ async function run(words: readonly string[]): Promise<number> {
       throw error ?? new UsageError(message ?? 'cannot understand these options');
     });
   await parser.parseAsync();
-  return status;
+  return work();
 }
 
-function commands(parser: Argv, answer: (status: number) => void): Argv {
+/** What a command does; returns the exit status. */
+type Work = () => Promise<number>;
+
+/**
+ * The commands, each of which chooses its work and leaves it to be done: for a handler that takes
+ * time the parser would lay out a help text that nobody asked for.
+ */
+function commands(parser: Argv, choose: (work: Work) => void): Argv {
   return parser
     .command(
       'contents <log..>',
       'What is in these logs, and what is wrong with them',
       (args) => contentsExamples(contentsOptions(inputOptions(args))),
-      async (argv) =>
-        answer(await (await import('./contents.ts')).contents(withStandardInput(argv))),
+      (argv) =>
+        choose(async () => (await import('./contents.ts')).contents(withStandardInput(argv))),
     )
     .command(
       'reduce <log..>',
       'One occupation: position, honest uncertainty, report',
       (args) => reduceExamples(outputOptions(reduceOptions(inputOptions(args)))),
-      async (argv) =>
-        answer(await (await import('./reduce.ts')).reduce(withStandardInput(argv), 'reduce')),
+      (argv) =>
+        choose(async () => (await import('./reduce.ts')).reduce(withStandardInput(argv), 'reduce')),
     )
     .command(
       'check <log..>',
       'The same against a known mark and a tolerance; the verdict sets the exit status',
       (args) => checkExamples(outputOptions(checkOptions(reduceOptions(inputOptions(args))))),
-      async (argv) =>
-        answer(await (await import('./reduce.ts')).reduce(withStandardInput(argv), 'check')),
+      (argv) =>
+        choose(async () => (await import('./reduce.ts')).reduce(withStandardInput(argv), 'check')),
     )
     .command(
       'combine <results..>',
       'Several occupations: one position per mark, agreement, distances between marks',
       (args) => combineExamples(combineOptions(args)),
-      async (argv) => {
-        const results = untied(argv.results);
-        const {result: output} = argv;
-        answer(await (await import('./combine.ts')).combine({results, output}));
-      },
+      ({results, result: output}) =>
+        choose(async () =>
+          (await import('./combine.ts')).combine({results: untied(results), output}),
+        ),
     )
     .command(
       'convert [position..]',
       'Positions and lists between geocentric, geodetic, local and grid, between frames and epochs',
       (args) => convertExamples(convertOptions(args)),
-      async (argv) => {
-        const position = untied(argv.position);
-        answer(await (await import('./convert.ts')).convert({...argv, position}));
-      },
+      (argv) =>
+        choose(async () =>
+          (await import('./convert.ts')).convert({...argv, position: untied(argv.position)}),
+        ),
     )
     .command(
       'sheet',
@@ -139,7 +145,7 @@ function commands(parser: Argv, answer: (status: number) => void): Argv {
           default: false,
           describe: 'print its JSON Schema instead, for an editor',
         }),
-      async (argv) => answer((await import('./sheet.ts')).printSheet(argv)),
+      (argv) => choose(async () => (await import('./sheet.ts')).printSheet(argv)),
     );
 }
 

@@ -1,6 +1,6 @@
 import type {Epochs} from '../epochs/epochs.ts';
 import {moments} from '../statistics/moments.ts';
-import {median as medianOf} from '../statistics/quantile.ts';
+import {medianInPlace} from '../statistics/quantile.ts';
 import {type LocalColumns, taken} from './local-columns.ts';
 import type {PerAxis, Screening} from './result.ts';
 import {reasonCode, type ScreenOutcome} from './screen.ts';
@@ -53,8 +53,12 @@ function withoutScreening(
 /** Medians of the receiver's own standard deviations; null when the log gives none. */
 export function receiverSigma(epochs: Epochs, indices: Uint32Array): PerAxis<number | null> | null {
   const median = (column: Float32Array) => {
-    const given = taken(column, indices).filter(Number.isFinite);
-    return given.length === 0 ? null : medianOf(given);
+    const given = taken(column, indices);
+    let count = 0;
+    for (let i = 0; i < given.length; i++) {
+      if (Number.isFinite(given[i]!)) given[count++] = given[i]!;
+    }
+    return count === 0 ? null : medianInPlace(given, count);
   };
   const sigma = {
     east: median(epochs.sigmaEastM),
