@@ -140,11 +140,21 @@ function occupationOf({name, result}: NamedResult): Occupation {
 
 /** What a row is shared by; null for a contribution of the occupation's own. */
 function keyOf({source, sharedBy, id}: BudgetRow): string | null {
-  return sharedBy === null ? null : `${source}\n${id ?? ''}`;
+  return sharedBy === null ? null : [source, sharedBy, id ?? ''].join('\n');
 }
 
 function sourceOf(key: string): string {
-  return key.slice(0, key.indexOf('\n'));
+  return key.split('\n')[0] ?? '';
+}
+
+/**
+ * Whether the error is the same at two marks. A rounded separation is another one at another site,
+ * and what a positioning service leaves uncertain is another one at another time. A base or tape
+ * that nobody named may be another one too.
+ */
+function cancelsBetweenMarks(key: string): boolean {
+  const [, sharedBy, id] = key.split('\n');
+  return sharedBy !== 'site' && sharedBy !== 'service' && id !== '';
 }
 
 function uncertaintyM(row: BudgetRow, axis: keyof PerAxis): number {
@@ -406,7 +416,9 @@ function distance(from: SolvedMark, to: SolvedMark): MarkDistance {
   const [east, north, up] = [variance('east'), variance('north'), variance('up')];
   const along = (eastM ** 2 * east + northM ** 2 * north + upM ** 2 * up) / spatialM ** 2;
   const azimuth = (Math.atan2(eastM, northM) * 180) / Math.PI;
-  const cancels = [...from.axes.up.sharedM.keys()].filter((key) => to.axes.up.sharedM.has(key));
+  const cancels = [...from.axes.up.sharedM.keys()].filter(
+    (key) => cancelsBetweenMarks(key) && to.axes.up.sharedM.has(key),
+  );
   return {
     from: from.mark.name,
     to: to.mark.name,
@@ -428,6 +440,9 @@ function distance(from: SolvedMark, to: SolvedMark): MarkDistance {
 function varianceOfDifference(a: SolvedAxis, b: SolvedAxis): number {
   const keys = new Set([...a.sharedM.keys(), ...b.sharedM.keys()]);
   let sum = a.ownVarianceM2 + b.ownVarianceM2;
-  for (const key of keys) sum += ((a.sharedM.get(key) ?? 0) - (b.sharedM.get(key) ?? 0)) ** 2;
+  for (const key of keys) {
+    const [here, there] = [a.sharedM.get(key) ?? 0, b.sharedM.get(key) ?? 0];
+    sum += cancelsBetweenMarks(key) ? (here - there) ** 2 : here ** 2 + there ** 2;
+  }
   return sum;
 }

@@ -201,6 +201,37 @@ describe('several marks', () => {
     expect(line!.heightDifferenceM).toBeLessThan(0.0197);
   });
 
+  test('what a service leaves uncertain is another error at another mark', () => {
+    const withService = (result: Result): Result => ({
+      ...result,
+      budget: [
+        ...result.budget,
+        row('positioning service', 3, {sharedBy: 'service', id: 'open service'}),
+      ],
+    });
+    const far = [
+      planted({name: 'a', mark: 'A', enuM: [0, 0, 0], change: withService}),
+      planted({name: 'b', mark: 'B', enuM: [300, 400, 0], day: 2, change: withService}),
+    ];
+    const [line] = combined(far).distances;
+    expect(line?.cancels).toEqual([]);
+    expect(line?.uncertainty95M.spatial).toBeCloseTo(1.959964 * 3 * Math.SQRT2, 3);
+    // At one mark it is one error that repeating does not make smaller.
+    const [mark] = combined([
+      planted({name: 'a', enuM: [0, 0, 0], change: withService}),
+      planted({name: 'b', enuM: [0, 0, 0], day: 2, change: withService}),
+    ]).marks;
+    expect(mark?.standardUncertaintyM.east).toBeCloseTo(3, 3);
+  });
+
+  test('a base without a name cancels nothing', () => {
+    const nameless = (name: string, mark: string, day: number) =>
+      planted({name, mark, enuM: [100 * day, 0, 0], base: ['', 0.02], day});
+    const [line] = combined([nameless('a', 'A', 1), nameless('b', 'B', 2)]).distances;
+    expect(line?.cancels).toEqual([]);
+    expect(line?.uncertainty95M.spatial).toBeGreaterThan(1.95 * 0.02 * Math.SQRT2);
+  });
+
   test('the order of the results does not matter, byte for byte', () => {
     const c = planted({name: 'c', mark: 'A', enuM: [0.002, 0, 0], base: ['B', 0.02], day: 3});
     const texts = [
