@@ -78,7 +78,7 @@ const C_NOISE = axes([white(3), gaussMarkov(4, 2 * MINUTE)]);
 const F_NOISE = axes([white(2), gaussMarkov(3, 2 * MINUTE), gaussMarkov(4, 36 * MINUTE)]);
 const I_NOISE = axes([white(3), gaussMarkov(3, 90)], [white(3), gaussMarkov(3, 270)]);
 
-/** Satellites rising and setting thirty times in a day: the jumps of issue and reality. */
+/** Satellites rising and setting thirty times in a day, each with a small jump. */
 export const THIRTY_JUMPS = {
   jumps: 30,
   smallestM: 0.001,
