@@ -20,6 +20,7 @@ import {
 import {
   AXE_VIOLATIONS,
   CAUTIONS_BOTTOM,
+  FOCUS_TOP,
   HEADING_LEVELS,
   IDS,
   type Ids,
@@ -255,6 +256,24 @@ describe('the page in a browser', () => {
       }
     },
   );
+
+  test('the tab key goes through the page in its order, and every stop can be seen', async () => {
+    await opened('height-blunder', LOOKS.desktop!, async ({page}) => {
+      expect(
+        await page.locator('[tabindex]:not([tabindex="0"]):not([tabindex="-1"])').count(),
+      ).toBe(0);
+      const stops: number[] = [];
+      for (let k = 0; k < 12; k++) {
+        await page.keyboard.press('Tab');
+        const top = await page.evaluate<number>(FOCUS_TOP);
+        stops.push(top);
+      }
+      // Down the page, contents first; a stop that cannot be seen has no place.
+      expect(stops.every((top) => Number.isFinite(top))).toBe(true);
+      expect(stops).toEqual([...stops].sort((a, b) => a - b));
+      expect(new Set(stops).size).toBeGreaterThan(8);
+    });
+  });
 
   test('headings are nested without a leap', async () => {
     const levels = await opened('height-blunder', LOOKS.desktop!, ({page}) =>

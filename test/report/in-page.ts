@@ -9,6 +9,12 @@ export const VERDICT_BOTTOM = "document.querySelector('.verdict').getBoundingCli
 
 export const CAUTIONS_BOTTOM = "document.querySelector('.care').getBoundingClientRect().bottom";
 
+/** How far down the page the element stands that has the focus; NaN for one that takes no room. */
+export const FOCUS_TOP = `(() => {
+  const box = document.activeElement.getBoundingClientRect();
+  return box.width > 0 && box.height > 0 ? Math.round(box.top + window.scrollY) : NaN;
+})()`;
+
 export const VERDICT_EDGE = "getComputedStyle(document.querySelector('.verdict')).borderLeftWidth";
 
 export const AXE_VIOLATIONS =
