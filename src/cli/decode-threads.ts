@@ -1,4 +1,5 @@
 import {accessSync, closeSync, constants, fstatSync, openSync, readSync, statSync} from 'node:fs';
+import {availableParallelism} from 'node:os';
 import {Worker} from 'node:worker_threads';
 import type {LogContents, ReadOptions} from '../log/contents.ts';
 import type {NmeaBatch} from '../log/decode.ts';
@@ -34,6 +35,8 @@ export interface DivisibleLog {
 export function openDivisible(path: string): DivisibleLog | undefined {
   const size = path === '-' ? undefined : statSync(path, {throwIfNoEntry: false})?.size;
   if (size === undefined || size < SMALLEST_BYTES || !isReadable(path)) return undefined;
+  // On one core the threads would only wait for one another.
+  if (availableParallelism() < THREADS) return undefined;
   const descriptor = openSync(path, 'r');
   const head = new Uint8Array(DETECT_BYTES);
   readSync(descriptor, head, 0, head.length, 0);
