@@ -15,6 +15,7 @@ import {
   degreeDecimals,
   fixed,
   formatAzimuth,
+  formatCount,
   formatDuration,
   formatLength,
   formatRate,
@@ -22,6 +23,7 @@ import {
   joined,
   type LengthScale,
   lengthScale,
+  shownUncertaintyM,
 } from '../wording/numbers.ts';
 import {headline, type Tone} from '../wording/verdict.ts';
 
@@ -127,12 +129,13 @@ function numberTable(result: Result): string[] {
     }
   }
   if (position?.uncertainty95M) {
-    rows.push([
-      '95 % of the mean',
-      position.uncertainty95M,
-      position.uncertainty95M.horizontalRadius,
-      'radius',
-    ]);
+    const {east, north, up, horizontalRadius} = position.uncertainty95M;
+    const axes = {
+      east: shownUncertaintyM(east),
+      north: shownUncertaintyM(north),
+      up: shownUncertaintyM(up),
+    };
+    rows.push(['95 % of the mean', axes, shownUncertaintyM(horizontalRadius), 'radius']);
   }
   if (result.scatter !== null) {
     const {standardDeviationM, r95M} = result.scatter.aboutMean.observed;
@@ -192,7 +195,7 @@ function facts(result: Result): string[] {
   const fix = result.screening.fixClassKept;
   lines.push([
     'epochs',
-    `${counted(epochs.read, 'epoch')} read, ${epochs.used} used${fix === null ? '' : ` (${fix})`}${screenedText(epochs.screened)}`,
+    `${counted(epochs.read, 'epoch')} read, ${formatCount(epochs.used)} used${fix === null ? '' : ` (${fix})`}${screenedText(epochs.screened)}`,
   ]);
   lines.push(['stillness', stillnessText(result)]);
   return lines.map(([name, text]) => `${name.padEnd(11)}${text}`);
@@ -245,7 +248,7 @@ function frameText({frame, frameFrom, coordinateEpoch}: Position): string {
 function screenedText(screened: Readonly<Record<string, number>>): string {
   const reasons = Object.entries(screened)
     .sort(([, a], [, b]) => b - a)
-    .map(([reason, count]) => `${count} ${reason}`);
+    .map(([reason, count]) => `${formatCount(count)} ${reason}`);
   return reasons.length === 0 ? '' : `; left out: ${joined(reasons)}`;
 }
 

@@ -104,7 +104,7 @@ export class EpochsBuilder {
     this.#rows = 0;
     this.#prepared = 0;
     this.#countBefore = 0;
-    return {count, ...mapColumns((name) => joined(name, blocks, count))};
+    return sharingAbsent({count, ...mapColumns((name) => joined(name, blocks, count))});
   }
 }
 
@@ -173,6 +173,22 @@ function joined(name: ColumnName, blocks: readonly Block[], count: number): Colu
     delete columns[name];
   }
   return to;
+}
+
+/** All columns of which nothing was given become one: most logs leave several empty. */
+function sharingAbsent(epochs: Epochs): Epochs {
+  const absent = COLUMN_NAMES.filter((name) => isAbsent(epochs[name]));
+  const [first] = absent;
+  if (first === undefined) return epochs;
+  return {...epochs, ...Object.fromEntries(absent.map((name) => [name, epochs[first]]))};
+}
+
+/** Columns of other types are small. */
+function isAbsent(column: Column): boolean {
+  if (!(column instanceof Float32Array)) return false;
+  let at = 0;
+  while (at < column.length && Number.isNaN(column[at]!)) at++;
+  return at === column.length;
 }
 
 function mapColumns(make: (name: ColumnName) => Column): EpochColumns {

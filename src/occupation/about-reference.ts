@@ -1,5 +1,5 @@
 import type {EnuColumns} from '../geodesy/local.ts';
-import {median} from '../statistics/quantile.ts';
+import {medianInPlace} from '../statistics/quantile.ts';
 import {type LocalColumns, selected} from './local-columns.ts';
 import type {PerAxis, Result} from './result.ts';
 import {scatterAbout, type UsedPositions} from './scatter.ts';
@@ -34,8 +34,7 @@ export function typicalStepM(columns: LocalColumns, {indices}: Session): PerAxis
     for (let i = 0; i < steps.length; i++) {
       steps[i] = Math.abs(column[indices[i + 1]!]! - column[indices[i]!]!);
     }
-    const middle = median(steps);
-    return Number.isNaN(middle) ? null : middle;
+    return medianInPlace(steps, steps.length);
   };
   return {
     east: typical(columns.eastM),

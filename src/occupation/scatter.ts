@@ -1,7 +1,7 @@
 import {cep, drms, r95} from '../statistics/accuracy-measures.ts';
 import {errorEllipse, type PlaneCovariance} from '../statistics/ellipse.ts';
 import {covariance, moments} from '../statistics/moments.ts';
-import {quantile} from '../statistics/quantile.ts';
+import {quantilesInPlace} from '../statistics/quantile.ts';
 import type {Ellipse, PerAxis, Scatter, ScatterMeasures} from './result.ts';
 
 /** East, north and up of the epochs used, n ≥ 1 each; up all NaN when the record has no height. */
@@ -27,13 +27,13 @@ export function scatterAbout(used: UsedPositions, centre: PerAxis<number | null>
     up: rootOrNull(up),
   };
   const ellipse = plane === null ? null : ellipseOf(plane);
-  const radii = radiiAbout(used, centre);
+  const [cepM, r95M] = quantilesInPlace(radiiAbout(used, centre), [0.5, 0.95]);
   return {
     observed: {
       standardDeviationM,
       drmsM: plane === null ? null : drms(plane),
-      cepM: quantile(radii, 0.5),
-      r95M: quantile(radii, 0.95),
+      cepM: cepM!,
+      r95M: r95M!,
       ellipse,
     },
     normalTheory: normalMeasures(standardDeviationM, plane, ellipse),

@@ -65,8 +65,13 @@ function untold(known: readonly Spread[], code: SessionLimit): SessionAnalysis {
   };
 }
 
+/**
+ * The questions that can be asked later are answered from the cells: nothing that is returned keeps
+ * the columns of a long record in memory.
+ */
 function analysed(record: Analysable): SessionAnalysis {
   const {known, varying, cells} = record;
+  const startS = record.input.elapsedS[0]!;
   const planVaries = varying[0] === 0 && varying[1] === 1;
   const pooling: Pooling = planVaries ? 'plan' : 'none';
   const fits = fitModels(cells);
@@ -75,7 +80,7 @@ function analysed(record: Analysable): SessionAnalysis {
   const slowProbability = Math.max(0, ...uncertainties.map((one) => one.slowProbability));
   const movement = movementOf(testablePart(record, fits));
   const components = known.map((one, c) =>
-    componentOf(one, c, {record, uncertainties, drifts: movement.drifts}),
+    componentOf(one, c, {cells, varying, uncertainties, drifts: movement.drifts}),
   );
   return {
     components,
@@ -85,7 +90,12 @@ function analysed(record: Analysable): SessionAnalysis {
     settling: movement.settling,
     limits: limitsOf(record, components, uncertainties, movement.testable),
     slowProbability,
-    halfWidthsWithout: (takenOut) => halfWidthsWithout(record, movement, takenOut, pooling),
+    halfWidthsWithout: (takenOut) => {
+      const quiet = without(takenOut, movement, {cells, varying, startS});
+      const means = quiet.means.map(meanOfCells);
+      const left = meanUncertainties(quiet, fitModels(quiet), means, pooling);
+      return known.map((_, c) => (varying.includes(c) ? left[varying.indexOf(c)]!.halfWidth95 : 0));
+    },
     halfWidth95After: (component, timeS) => {
       const at = varying.indexOf(component);
       if (at < 0) return undefined;
@@ -106,12 +116,13 @@ function componentOf(
   one: Spread,
   component: number,
   found: {
-    readonly record: Analysable;
+    readonly cells: TimeCells;
+    readonly varying: readonly number[];
     readonly uncertainties: readonly MeanUncertainty[];
     readonly drifts: ReadonlyMap<number, Slope>;
   },
 ): ComponentAnalysis {
-  const {cells, varying} = found.record;
+  const {cells, varying} = found;
   const at = varying.indexOf(component);
   const halfWidth95 = at < 0 ? 0 : found.uncertainties[at]!.halfWidth95;
   const sigma = halfWidth95 / NORMAL_95;
@@ -169,18 +180,21 @@ function limitsOf(
   return limits.filter(({components: concerned}) => concerned.length > 0);
 }
 
-function halfWidthsWithout(
-  {cells, varying, known, input}: Analysable,
-  {steps, drifts, settling}: FoundMovement,
+/** The cells as they would be had some of the movement not happened. */
+function without(
   takenOut: TakenOut,
-  pooling: Pooling,
-): (number | undefined)[] {
+  {steps, drifts, settling}: FoundMovement,
+  record: {
+    readonly cells: TimeCells;
+    readonly varying: readonly number[];
+    readonly startS: number;
+  },
+): TimeCells {
+  const {cells, varying, startS} = record;
   const gone = takenOut.steps.map((step) => steps[step]!);
-  let quiet = withoutSteps(cells, varying, input.elapsedS[0]!, gone);
-  if (takenOut.drift === true) quiet = withoutLines(quiet, varying, drifts);
-  if (takenOut.settling === true && settling !== undefined) {
-    quiet = withoutSettling(quiet, varying, settling);
-  }
-  const found = meanUncertainties(quiet, fitModels(quiet), quiet.means.map(meanOfCells), pooling);
-  return known.map((_, c) => (varying.includes(c) ? found[varying.indexOf(c)]!.halfWidth95 : 0));
+  const stepless = withoutSteps(cells, varying, startS, gone);
+  const level = takenOut.drift === true ? withoutLines(stepless, varying, drifts) : stepless;
+  return takenOut.settling === true && settling !== undefined
+    ? withoutSettling(level, varying, settling)
+    : level;
 }

@@ -17,12 +17,16 @@ export function median(values: Float64Array): number {
 
 /** Several quantiles of one column from one working copy; see `quantile`. */
 export function quantiles(values: Float64Array, ps: readonly number[]): number[] {
+  return quantilesInPlace(values.slice(), ps);
+}
+
+/** Several quantiles of a column that is left partly sorted; see `quantile`. */
+export function quantilesInPlace(values: Float64Array, ps: readonly number[]): number[] {
   refuse(values);
   for (const p of ps) {
     if (!(p >= 0 && p <= 1)) throw new RangeError(`quantile: p must be in 0..1, got ${p}`);
   }
-  const work = values.slice();
-  return ps.map((p) => quantileInPlace(work, p));
+  return ps.map((p) => quantileInPlace(values, p));
 }
 
 /**

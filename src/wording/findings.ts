@@ -7,6 +7,7 @@ import {
   formatMoment,
   formatPercent,
   formatRate,
+  formatUncertainty,
   joined,
   proseNumber,
 } from './numbers.ts';
@@ -161,10 +162,10 @@ export function candidatesFinding(count: number): string {
 export function offsetAgainstUncertainty(distanceM: number, radius95M: number): string {
   const ratio = distanceM / radius95M;
   if (ratio <= 1) {
-    return `The offset lies inside its own 95${'\u00a0'}% uncertainty of ${formatLength(radius95M)}: this record does not show it to differ from zero.`;
+    return `The offset lies inside its own 95${'\u00a0'}% uncertainty of ${formatUncertainty(radius95M)}: this record does not show it to differ from zero.`;
   }
   const times = ratio < 9.5 ? proseNumber(ratio, 1) : String(Math.round(ratio));
-  return `The offset is ${times} times its own 95${'\u00a0'}% uncertainty of ${formatLength(radius95M)}: a real difference, not noise.`;
+  return `The offset is ${times} times its own 95${'\u00a0'}% uncertainty of ${formatUncertainty(radius95M)}: a real difference, not noise.`;
 }
 
 /** How a single epoch count reads beside what was read. */

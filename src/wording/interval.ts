@@ -1,4 +1,4 @@
-import {counted, formatLength} from './numbers.ts';
+import {counted, formatUncertainty} from './numbers.ts';
 
 export interface IntervalFacts {
   readonly radius95M: number | null;
@@ -19,7 +19,7 @@ export function intervalSentences(facts: IntervalFacts): string | null {
     leftOut === 0 ? '' : `, as far as what is listed as left out below does not move it further`;
   const worth = looks < 9.95 ? looks.toFixed(1) : String(Math.round(looks));
   return (
-    `${leansOnModel ? 'If the errors are of the kind assumed, in' : 'In'} 19 of 20 such occupations the true point lies within ${formatLength(radius95M)} of these coordinates in plan${but}. ` +
+    `${leansOnModel ? 'If the errors are of the kind assumed, in' : 'In'} 19 of 20 such occupations the true point lies within ${formatUncertainty(radius95M)} of these coordinates in plan${but}. ` +
     `Neighbouring epochs repeat one another's errors, so ${counted(epochs, 'epoch')} tell no more than about ${worth} independent ones would; logging twice as fast would change nothing, logging longer or on another day does.`
   );
 }

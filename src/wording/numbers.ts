@@ -47,6 +47,19 @@ export function formatLength(valueM: number, signed = false): string {
   return `${proseNumber(valueM * scale.perM, scale.decimals, signed)}${NO_BREAK_SPACE}${scale.unit}`;
 }
 
+/** The finest length that is printed; rounded to less, an uncertainty would read as none. */
+const LEAST_UNCERTAINTY_M = 0.0001;
+
+/** An uncertainty as it is shown: rounded up to the finest length that is printed. */
+export function shownUncertaintyM<T extends number | null>(valueM: T): T | number {
+  return valueM !== null && valueM > 0 ? Math.max(valueM, LEAST_UNCERTAINTY_M) : valueM;
+}
+
+/** An uncertainty in prose; see `shownUncertaintyM`. */
+export function formatUncertainty(valueM: number): string {
+  return formatLength(shownUncertaintyM(valueM));
+}
+
 const HOURS_PER: readonly (readonly [unit: string, hours: number])[] = [
   ['hour', 1],
   ['day', 24],

@@ -4,6 +4,7 @@ import {
   formatGivenLength,
   formatLength,
   formatMoment,
+  formatUncertainty,
 } from './numbers.ts';
 
 /** The numbers that the headline speaks of; lengths in metres, null where not computed. */
@@ -82,7 +83,7 @@ function reduceHeadline(facts: HeadlineFacts): Headline {
       sentence: `${name} has a mean position from ${formatDuration(facts.durationS)} of record, but the record cannot tell how sure it is.`,
     };
   }
-  const height = facts.up95M === null ? '' : ` and ${formatLength(facts.up95M)} in height`;
+  const height = facts.up95M === null ? '' : ` and ${formatUncertainty(facts.up95M)} in height`;
   const still =
     facts.stability === 'still'
       ? 'and the setup sat still'
@@ -90,7 +91,7 @@ function reduceHeadline(facts: HeadlineFacts): Headline {
   return {
     tone: facts.stability === 'still' ? 'within' : 'look',
     status: facts.stability === 'still' ? 'Position found' : 'Position found, stillness open',
-    sentence: `${name} is known within ${formatLength(facts.radius95M)} in plan${height} (${levelWords(facts)}), ${still}.`,
+    sentence: `${name} is known within ${formatUncertainty(facts.radius95M)} in plan${height} (${levelWords(facts)}), ${still}.`,
   };
 }
 
@@ -174,5 +175,5 @@ function openSentence(facts: HeadlineFacts): string {
   const uncertainty = open[0]?.of === 'up' && facts.up95M !== null ? facts.up95M : facts.radius95M;
   const limits = open.map(({of, toleranceM}) => limitWords(of, toleranceM)).join(' and ');
   const service = facts.rests === 'service included' ? ', the positioning service included,' : '';
-  return `${offset}; with a 95 % uncertainty of ${formatLength(uncertainty)}${service} that is neither surely inside nor surely outside the ${limits} asked for.`;
+  return `${offset}; with a 95 % uncertainty of ${formatUncertainty(uncertainty)}${service} that is neither surely inside nor surely outside the ${limits} asked for.`;
 }

@@ -7,7 +7,7 @@ import {analyseSession} from '../../src/statistics/analyse-session.ts';
 import {blockMedianScreen} from '../../src/statistics/robust.ts';
 import {scenarioNamed} from '../simulate/scenarios.ts';
 import {simulate} from '../simulate/simulate.ts';
-import {writeDays} from './logs.ts';
+import {writeDays, writeTwentyHertz} from './logs.ts';
 import {BenchTable} from './table.ts';
 import {type Cost, costOf, medianCost, wallOf} from './whole-command.ts';
 
@@ -20,6 +20,8 @@ const RUNS = Number(process.env.BENCH_RUNS ?? 5);
 /** Days at 1 Hz in the long log and the longest: 53 MB each. */
 const LONG_DAYS = Number(process.env.BENCH_LONG_DAYS ?? 6);
 const LONGEST_DAYS = Number(process.env.BENCH_LONGEST_DAYS ?? 19);
+/** Days at 20 Hz in the log with the most epochs: 1.7 million and 240 MB each. */
+const FAST_DAYS = Number(process.env.BENCH_FAST_DAYS ?? 7);
 const HERE = import.meta.dirname;
 const STILLMARK = resolve(HERE, '../../dist/cli/main.js');
 const RESULTS = resolve(HERE, '../../bench-results/speed.json');
@@ -161,6 +163,18 @@ describe('whole commands', () => {
     table.remark(
       `time a megabyte, ${megabytes(longest).toFixed(0)} MB over ${megabytes(long).toFixed(0)} MB: ${(perByte / before).toFixed(2)} ×`,
     );
+  });
+
+  test('days at 20 Hz', () => {
+    const fast = join(folder, 'fast.nmea');
+    writeTwentyHertz(fast, FAST_DAYS);
+    const epochs = (FAST_DAYS * 1.728).toFixed(1);
+    table.remark(`${FAST_DAYS} days at 20 Hz, ${epochs} million epochs: once each`);
+    table.row('stillmark contents, 20 Hz', contents(fast));
+    const result = join(folder, 'result.json');
+    const words = ['reduce', fast, '--quiet', '--result', result];
+    table.row('stillmark reduce --result, 20 Hz', costOf(STILLMARK, words));
+    rmSync(fast);
   });
 });
 

@@ -51,6 +51,17 @@ describe('EpochsBuilder', () => {
     expect([...builder.finish().gpsSeconds]).toEqual([8]);
   });
 
+  test('columns of which nothing is given share their memory, the others do not', () => {
+    const builder = new EpochsBuilder();
+    for (let k = 0; k < 10; k++) builder.block.hdop[builder.add()] = k === 9 ? 0.7 : Number.NaN;
+    const {hdop, pdop, vdop, sigmaUpM, separationM} = builder.finish();
+    expect(pdop.every(Number.isNaN)).toBe(true);
+    expect(pdop).toHaveLength(10);
+    for (const other of [vdop, sigmaUpM, separationM]) expect(other).toBe(pdop);
+    expect(hdop).not.toBe(pdop);
+    expect(hdop[9]).toBeCloseTo(0.7, 6);
+  });
+
   test('an epoch takes at most 96 bytes', () => {
     const {count, ...columns} = filled(1).finish();
     const bytes = Object.values(columns).reduce((sum, column) => sum + column.BYTES_PER_ELEMENT, 0);

@@ -13,9 +13,11 @@ import {
   formatMoment,
   formatPercent,
   formatRate,
+  formatUncertainty,
   formatUtc,
   joined,
   proseNumber,
+  shownUncertaintyM,
 } from '../../src/wording/numbers.ts';
 
 const plain = (text: string) => text.replaceAll('\u00a0', ' ');
@@ -107,5 +109,16 @@ describe('formatMoment', () => {
   test('the clock within a day, and the date as well beyond', () => {
     expect(formatMoment('2026-05-12T10:38:09Z', 3600)).toBe('10:38:09');
     expect(formatMoment('2026-05-12T10:38:09Z', 3 * 86_400)).toBe('2026-05-12 10:38:09');
+  });
+});
+
+describe('uncertainties', () => {
+  test('none is ever shown as nothing; the others as any length', () => {
+    expect(plain(formatUncertainty(0.000_004))).toBe('0.1 mm');
+    expect(plain(formatUncertainty(0.000_16))).toBe('0.2 mm');
+    expect(plain(formatUncertainty(0.0123))).toBe('12.3 mm');
+    expect(shownUncertaintyM(null)).toBeNull();
+    // What does not vary at all is no uncertainty to be rounded up.
+    expect(shownUncertaintyM(0)).toBe(0);
   });
 });

@@ -1,4 +1,4 @@
-import {fixed} from '../../wording/numbers.ts';
+import {fixed, shownUncertaintyM} from '../../wording/numbers.ts';
 import {type LengthUnit, offsetDecimals, type UnitChoice, unitFor} from '../units.ts';
 
 /** Beside values this fine, a column stays in millimetres up to lengths that need metres alone. */
@@ -10,6 +10,8 @@ export interface LengthColumn {
   readonly unit: LengthUnit;
   /** null becomes the empty string: an empty cell, never a zero. */
   cell(valueM: number | null | undefined): string;
+  /** The same for an uncertainty, which is never written as none. */
+  uncertainty(valueM: number | null | undefined): string;
 }
 
 export function lengthColumn(
@@ -26,10 +28,12 @@ export function lengthColumn(
   const mixed = finestM < FINE_M && largestM < LARGEST_BESIDE_FINE_M;
   const unit = unitFor(mixed ? finestM : largestM, units);
   const decimals = offsetDecimals(mixed ? finestM : largestM, unit);
+  const cell = (valueM: number | null | undefined) =>
+    valueM === null || valueM === undefined ? '' : fixed(valueM * unit.perM, decimals);
   return {
     unit,
-    cell: (valueM) =>
-      valueM === null || valueM === undefined ? '' : fixed(valueM * unit.perM, decimals),
+    cell,
+    uncertainty: (valueM) => cell(typeof valueM === 'number' ? shownUncertaintyM(valueM) : valueM),
   };
 }
 

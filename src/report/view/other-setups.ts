@@ -33,7 +33,7 @@ export function otherSetupsTable({result, options}: ReportContext): Table | null
         numberCell(column.cell(setup.differenceM.north)),
         numberCell(column.cell(setup.differenceM.up)),
         numberCell(column.cell(setup.differenceM.horizontal)),
-        numberCell(column.cell(setup.uncertainty95M?.horizontalRadius)),
+        numberCell(column.uncertainty(setup.uncertainty95M?.horizontalRadius)),
         numberCell(fixed(setup.hoursEarlier, 1)),
         textCell(setup.agreement),
       ]),

@@ -13,7 +13,7 @@ import {
 import {spanBesideUtc} from '../../wording/time-zone.ts';
 import {hasMark, type ReportContext, referenceName} from '../context.ts';
 import {largeUnit} from '../units.ts';
-import {lengthColumn, numberCell, textCell} from './columns.ts';
+import {type LengthColumn, lengthColumn, numberCell, textCell} from './columns.ts';
 import {fixedTable, head, numberHead, type Row, row, stacking, type Table} from './table.ts';
 
 /** Offsets, uncertainty and scatter per axis; null where the record has no one position. */
@@ -37,7 +37,7 @@ export function offsetTable(context: ReportContext): Table | null {
     .map((axis) =>
       row(AXIS_NAMES[axis], [
         ...(offsets === null ? [] : [numberCell(column.cell(offsets[axis]))]),
-        numberCell(column.cell(u?.[axis])),
+        numberCell(column.uncertainty(u?.[axis])),
         numberCell(column.cell(deviations?.[axis])),
       ]),
     );
@@ -47,7 +47,7 @@ export function offsetTable(context: ReportContext): Table | null {
       'Plan',
       [
         ...(offsets === null ? [] : [numberCell(column.cell(horizontal ?? distance(offsets)))]),
-        numberCell(column.cell(u?.horizontalRadius)),
+        numberCell(column.uncertainty(u?.horizontalRadius)),
         numberCell(column.cell(scatter?.aboutMean.observed.drmsM)),
       ],
       true,
@@ -199,7 +199,7 @@ export function segmentTable(context: ReportContext): Table | null {
 
 function segmentRow(
   {fromUtc, toUtc, epochs, position}: Segment,
-  column: {cell(valueM: number | null | undefined): string},
+  column: LengthColumn,
   decimals: {readonly plan: number; readonly up: number},
   {options}: ReportContext,
 ): Row {
@@ -214,8 +214,8 @@ function segmentRow(
       numberCell(fixed(geodetic.latitudeDeg, degrees)),
       numberCell(fixed(geodetic.longitudeDeg, degrees)),
       numberCell(height === null ? '' : fixed(height * largeUnit(options.units).perM, decimals.up)),
-      numberCell(column.cell(uncertainty95M?.horizontalRadius)),
-      numberCell(column.cell(uncertainty95M?.up)),
+      numberCell(column.uncertainty(uncertainty95M?.horizontalRadius)),
+      numberCell(column.uncertainty(uncertainty95M?.up)),
     ],
   );
 }

@@ -8,7 +8,9 @@ import {
   formatGivenLength,
   formatLength,
   formatMoment,
+  formatUncertainty,
   proseNumber,
+  shownUncertaintyM,
 } from '../../wording/numbers.ts';
 import {besideUtc} from '../../wording/time-zone.ts';
 import {headline} from '../../wording/verdict.ts';
@@ -80,10 +82,22 @@ function keyNumbers(context: ReportContext): KeyNumber[] {
   if (keys.length > 0) return keys;
   if (result.comparison !== null) keys.push(...offsetKeys(context));
   keys.push(
-    lengthKey('95 % in plan', u?.horizontalRadius ?? null, options.units, 'radius, of the mean'),
+    lengthKey(
+      '95 % in plan',
+      shownUncertaintyM(u?.horizontalRadius ?? null),
+      options.units,
+      'radius, of the mean',
+    ),
   );
   if (result.comparison === null) {
-    keys.push(lengthKey('95 % in height', u?.up ?? null, options.units, 'half-width, of the mean'));
+    keys.push(
+      lengthKey(
+        '95 % in height',
+        shownUncertaintyM(u?.up ?? null),
+        options.units,
+        'half-width, of the mean',
+      ),
+    );
     const r95 = result.scatter?.aboutMean.observed.r95M ?? null;
     keys.push(lengthKey('One epoch', r95, options.units, 'radius that holds 95 %'));
   }
@@ -185,5 +199,5 @@ export function headlineNumber({result}: ReportContext): string {
   const distanceM = result.comparison?.offsetM.horizontal ?? null;
   if (distanceM !== null) return `${formatLength(distanceM)} from the mark`;
   const radiusM = result.position?.uncertainty95M?.horizontalRadius ?? null;
-  return radiusM === null ? 'position' : `known within ${formatLength(radiusM)}`;
+  return radiusM === null ? 'position' : `known within ${formatUncertainty(radiusM)}`;
 }
