@@ -55,17 +55,18 @@ function centreOf(
   return {east: centre('east'), north: centre('north'), up: centre('up')};
 }
 
-export function aboutReference(
-  columns: LocalColumns,
+/** Shifts the columns themselves, as a second set of them would be large; for when all is computed. */
+export function shiftToReference(
+  {eastM, northM, upM}: LocalColumns,
   meanM: PerAxis<number | null>,
   offsetM: PerAxis<number | null>,
 ): EnuColumns {
   const centre = centreOf(meanM, offsetM);
-  const shifted = (column: Float64Array, by: number | null) =>
-    column.map((value) => value - (by ?? 0));
-  return {
-    eastM: shifted(columns.eastM, centre.east),
-    northM: shifted(columns.northM, centre.north),
-    upM: shifted(columns.upM, centre.up),
+  const shift = (column: Float64Array, by: number | null) => {
+    for (let i = 0; i < column.length; i++) column[i]! -= by ?? 0;
   };
+  shift(eastM, centre.east);
+  shift(northM, centre.north);
+  shift(upM, centre.up);
+  return {eastM, northM, upM};
 }

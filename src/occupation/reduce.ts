@@ -1,6 +1,6 @@
 import type {EnuColumns} from '../geodesy/local.ts';
 import {isoUtc} from '../time/gps-time.ts';
-import {aboutReference, scatterOf, typicalStepM, usedPositions} from './about-reference.ts';
+import {scatterOf, shiftToReference, typicalStepM, usedPositions} from './about-reference.ts';
 import {epochAccount} from './account.ts';
 import {
   comparisonOf,
@@ -48,7 +48,7 @@ import {checkVerdict} from './verdict.ts';
 /** The result, and the epochs it rests on for charts and the epoch table. */
 export interface Reduced {
   readonly result: Result;
-  /** East, north and up of every epoch read, about the reference of the result; made anew. */
+  /** East, north and up of every epoch read, about the reference of the result. */
   readonly aboutReference: () => EnuColumns;
   /** Screening codes, 0 for the epochs used. */
   readonly reason: Uint8Array;
@@ -173,9 +173,13 @@ function averaged(record: Record, outcome: ScreenOutcome, columns: LocalColumns)
   const otherCoordinates = compared === null ? [] : setupsWithOtherCoordinates(compared);
   noticeComparison(result, request, unreachable, otherCoordinates, notices);
   noticeTime(single === null ? null : whole, request, notices);
+  let shifted: EnuColumns | undefined;
   return {
     result: finished(result, notices),
-    aboutReference: () => aboutReference(columns, whole.meanM, offsetM),
+    aboutReference: () => {
+      shifted ??= shiftToReference(columns, whole.meanM, offsetM);
+      return shifted;
+    },
     reason: outcome.reason,
     halfWidths95After: single === null ? null : whole.halfWidths95After,
   };
