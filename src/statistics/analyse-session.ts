@@ -1,7 +1,7 @@
 import type {Analysable} from './analysable.ts';
 import {testablePart} from './analysable.ts';
 import {errorCorrelation, type MeanUncertainty, meanUncertainties} from './mean-uncertainty.ts';
-import {fitModels, type Pooling} from './model-fits.ts';
+import {fitModels, type Pooling, withSwings} from './model-fits.ts';
 import {type FoundMovement, movementOf} from './movement.ts';
 import {deviationPart, requiredTime} from './required-time.ts';
 import {medianSpacing} from './robust.ts';
@@ -74,11 +74,13 @@ function analysed(record: Analysable): SessionAnalysis {
   const startS = record.input.elapsedS[0]!;
   const planVaries = varying[0] === 0 && varying[1] === 1;
   const pooling: Pooling = planVaries ? 'plan' : 'none';
-  const fits = fitModels(cells);
+  const plain = fitModels(cells);
+  const movement = movementOf(testablePart(record, plain));
+  // Movement looks like half of a slow swing; only what sat still may be believed to have swung.
+  const fits = movement.kind === 'none' ? withSwings(plain, cells) : plain;
   const means = varying.map((c) => known[c]!.mean);
   const uncertainties = meanUncertainties(cells, fits, means, pooling);
   const slowProbability = Math.max(0, ...uncertainties.map((one) => one.slowProbability));
-  const movement = movementOf(testablePart(record, fits));
   const components = known.map((one, c) =>
     componentOf(one, c, {cells, varying, uncertainties, drifts: movement.drifts}),
   );

@@ -1,5 +1,6 @@
-import {type NoiseModel, noiseModels} from './noise-models.ts';
+import {type NoiseModel, noiseModels, type Swing} from './noise-models.ts';
 import {type Factor, factorOf, whiten} from './semiseparable.ts';
+import {searchedSwings, swingModels} from './swing-models.ts';
 import type {TimeCells} from './time-cells.ts';
 
 /** One component fitted by one model with a constant: generalised least squares. */
@@ -25,8 +26,45 @@ export interface ModelFit {
 
 /** Every model of the grid fitted to the cells. A component that does not vary must not be given. */
 export function fitModels(cells: TimeCells): ModelFit[] {
+  return fitEach(noiseModels(cells.widthS, cells.spanS), cells);
+}
+
+/** How much more likely than all others a swing must be, as a logarithm, to be looked into. */
+const SWING_EVIDENCE = 3;
+
+/**
+ * The fits of the grid and, where a component swings, those of models with that swing: for a mean.
+ * A record that does not swing gets back what was given.
+ */
+export function withSwings(fits: readonly ModelFit[], cells: TimeCells): readonly ModelFit[] {
+  const searched = fitEach(searchedSwings(cells.widthS, cells.spanS), cells);
+  const found = new Map<string, Swing>();
+  for (let c = 0; c < cells.means.length; c++) {
+    const swinging = likeliest(searched, c);
+    const otherwise = likeliest(fits, c);
+    if (swinging?.model.swing === undefined || otherwise === undefined) continue;
+    const evidence = swinging.components[c]!.logLikelihood - otherwise.components[c]!.logLikelihood;
+    const {swing} = swinging.model;
+    if (evidence > SWING_EVIDENCE) found.set(`${swing.periodS} ${swing.dampingS}`, swing);
+  }
+  const models = [...found.values()].flatMap((swing) =>
+    swingModels(cells.widthS, cells.spanS, swing),
+  );
+  return models.length === 0 ? fits : [...fits, ...fitEach(models, cells)];
+}
+
+function likeliest(fits: readonly ModelFit[], component: number): ModelFit | undefined {
+  let best = fits[0];
+  for (const fit of fits) {
+    const [one, other] = [fit.components[component]!, best!.components[component]!];
+    if (one.logLikelihood > other.logLikelihood) best = fit;
+  }
+  return best;
+}
+
+function fitEach(models: readonly NoiseModel[], cells: TimeCells): ModelFit[] {
   const unit = new Float64Array(cells.index.length).fill(1);
-  return noiseModels(cells.widthS, cells.spanS).map((model) => {
+  return models.map((model) => {
     const factor = factorOf(model, cells);
     const ones = whiten(factor, unit);
     const onesSquared = dot(ones, ones);

@@ -1,6 +1,6 @@
 import {studentQuantile} from './distribution.ts';
 import type {ModelFit} from './model-fits.ts';
-import {flickerTimes, type NoiseModel} from './noise-models.ts';
+import {flickerTimes, type NoiseModel, type Swing} from './noise-models.ts';
 import type {TimeCells} from './time-cells.ts';
 
 /** How long a record would have to be for a wished half-width of 95 %. */
@@ -77,12 +77,14 @@ function timeFor(model: NoiseModel, cells: TimeCells, part: number): number {
 
 /** Variance of the mean over a time, up to the scale of the model. */
 function varianceOfMean(
-  {whiteShare, flickerShare, correlationTimeS}: NoiseModel,
+  {whiteShare, flickerShare, correlationTimeS, swing}: NoiseModel,
   widthS: number,
   timeS: number,
 ): number {
+  const swinging = (1 - whiteShare) * (swing?.share ?? 0);
   let variance = (whiteShare * widthS) / timeS;
-  const correlated = 1 - whiteShare;
+  if (swing !== undefined) variance += swinging * swingMean(swing, timeS);
+  const correlated = 1 - whiteShare - swinging;
   if (correlationTimeS !== undefined) {
     variance += correlated * (1 - flickerShare) * gaussMarkovMean(correlationTimeS, timeS);
   }
@@ -103,6 +105,17 @@ export function gaussMarkovMean(correlationTimeS: number, timeS: number): number
   // The closed form loses its digits for short times; the series is 1 − r/3 + r²/12.
   if (ratio < 1e-4) return 1 - ratio / 3;
   return (2 / ratio) * (1 + Math.expm1(-ratio) / ratio);
+}
+
+/** The same of a damped oscillation: the real part for the complex rate r = T (1/damping + iω). */
+export function swingMean({periodS, dampingS}: Swing, timeS: number): number {
+  const [a, b] = [timeS / dampingS, (2 * Math.PI * timeS) / periodS];
+  const size = a * a + b * b;
+  if (size < 1e-8) return 1 - a / 3;
+  // 2 (r + e^(−r) − 1) / r²
+  const decay = Math.exp(-a);
+  const [re, im] = [a + decay * Math.cos(b) - 1, b - decay * Math.sin(b)];
+  return (2 * (re * (a * a - b * b) + im * 2 * a * b)) / (size * size);
 }
 
 function weightedQuantile(

@@ -3,11 +3,11 @@ import {termsOf} from './noise-models.ts';
 import type {TimeCells} from './time-cells.ts';
 
 /**
- * The Cholesky factor of a covariance that is a diagonal plus a few exponentials, V = L D Lᵀ, for
- * cells at any spacing.
+ * The Cholesky factor of a covariance that is a diagonal plus a few exponentials, damped oscillations
+ * among them, V = L D Lᵀ, for cells at any spacing.
  *
- * Method: semiseparable factorisation, O(m J²) for m cells and J exponentials; exact, gaps and
- * unequal counts included.
+ * Method: semiseparable factorisation, O(m J²) for m cells and J exponentials, an oscillation counting
+ * as two; exact, gaps and unequal counts included.
  * Source: Foreman-Mackey, Agol, Ambikasaran & Angus (2017), AJ 154, 220, section 3,
  * doi:10.3847/1538-3881/aa9332.
  */
@@ -15,7 +15,9 @@ export interface Factor {
   readonly logDeterminant: number;
   /** m values 1/√d. */
   readonly inverseRoot: Float64Array;
-  /** m × J gains and decays from the cell before. */
+  /** J, the exponentials. */
+  readonly rank: number;
+  /** m × J gains, decays from the cell before, and weights. */
   readonly gain: Float64Array;
   readonly decay: Float64Array;
   readonly weights: Float64Array;
@@ -40,8 +42,16 @@ function factorOfTerms(
   index: Int32Array,
 ): Factor {
   const m = index.length;
-  const j = terms.length;
-  const weights = Float64Array.from(terms, ({beyond}) => beyond);
+  const columns = columnsOf(terms);
+  const j = columns.length;
+  const weights = new Float64Array(m * j);
+  const phases = new Float64Array(m * j);
+  columns.forEach(({weight, phase}, a) => {
+    for (let n = 0; n < m; n++) {
+      weights[n * j + a] = weight(index[n]!);
+      phases[n * j + a] = phase(index[n]!);
+    }
+  });
   const inverseRoot = new Float64Array(m);
   const gain = new Float64Array(m * j);
   const decay = new Float64Array(m * j);
@@ -52,7 +62,7 @@ function factorOfTerms(
     if (n > 0) {
       const steps = index[n]! - index[n - 1]!;
       const pivot = 1 / (inverseRoot[n - 1]! * inverseRoot[n - 1]!);
-      for (let a = 0; a < j; a++) decay[n * j + a] = terms[a]!.decay ** steps;
+      for (let a = 0; a < j; a++) decay[n * j + a] = columns[a]!.decay ** steps;
       for (let a = 0; a < j; a++) {
         const ga = gain[(n - 1) * j + a]! * pivot;
         const da = decay[n * j + a]!;
@@ -66,24 +76,43 @@ function factorOfTerms(
     let d = diagonalOf[n]!;
     for (let a = 0; a < j; a++) {
       let dot = 0;
-      for (let b = 0; b < j; b++) dot += s[a * j + b]! * weights[b]!;
+      for (let b = 0; b < j; b++) dot += s[a * j + b]! * weights[n * j + b]!;
       us[a] = dot;
-      d -= dot * weights[a]!;
+      d -= dot * weights[n * j + a]!;
     }
     logDeterminant += Math.log(d);
     inverseRoot[n] = 1 / Math.sqrt(d);
-    for (let a = 0; a < j; a++) gain[n * j + a] = (1 - us[a]!) / d;
+    for (let a = 0; a < j; a++) gain[n * j + a] = (phases[n * j + a]! - us[a]!) / d;
   }
-  return {logDeterminant, inverseRoot, gain, decay, weights};
+  return {logDeterminant, inverseRoot, rank: j, gain, decay, weights};
+}
+
+/** A product of functions of the two cells that, with a decay, makes a part of the covariance. */
+interface Column {
+  readonly decay: number;
+  /** Of the later and of the earlier cell. */
+  readonly weight: (cell: number) => number;
+  readonly phase: (cell: number) => number;
+}
+
+/** cos b(n − m) and sin b(n − m) as products of functions of n and m. */
+function columnsOf(terms: readonly Term[]): Column[] {
+  return terms.flatMap(({beyond, sine, turn, decay}): Column[] => {
+    if (turn === 0) return [{decay, weight: () => beyond, phase: () => 1}];
+    const [cos, sin] = [(n: number) => Math.cos(turn * n), (n: number) => Math.sin(turn * n)];
+    return [
+      {decay, weight: (n) => beyond * cos(n) + sine * sin(n), phase: cos},
+      {decay, weight: (n) => beyond * sin(n) - sine * cos(n), phase: sin},
+    ];
+  });
 }
 
 /**
  * L⁻¹ applied to a column and scaled to unit variance: what is left white if the model is right.
  */
 export function whiten(factor: Factor, values: Float64Array): Float64Array {
-  const {inverseRoot, gain, decay, weights} = factor;
+  const {inverseRoot, rank: j, gain, decay, weights} = factor;
   const m = values.length;
-  const j = weights.length;
   const out = new Float64Array(m);
   const f = new Float64Array(j);
   let previous = 0;
@@ -93,7 +122,7 @@ export function whiten(factor: Factor, values: Float64Array): Float64Array {
       for (let a = 0; a < j; a++) {
         const fa = decay[n * j + a]! * (f[a]! + gain[(n - 1) * j + a]! * previous);
         f[a] = fa;
-        z -= weights[a]! * fa;
+        z -= weights[n * j + a]! * fa;
       }
     }
     previous = z;

@@ -26,11 +26,10 @@ export function stepProducts(factor: Factor, columns: readonly Float64Array[]): 
 
 /** What is to come is p + q f. */
 function projectionsOfSteps(
-  {inverseRoot, gain, decay, weights}: Factor,
+  {inverseRoot, rank: j, gain, decay, weights}: Factor,
   column: Float64Array,
 ): Float64Array {
   const m = column.length;
-  const j = weights.length;
   const products = new Float64Array(m);
   const q = new Float64Array(j);
   let p = 0;
@@ -42,7 +41,7 @@ function projectionsOfSteps(
         ofZ += q[a]! * gain[n * j + a]!;
       }
     }
-    for (let a = 0; a < j; a++) q[a]! -= ofZ * weights[a]!;
+    for (let a = 0; a < j; a++) q[a]! -= ofZ * weights[n * j + a]!;
     p += ofZ;
     products[n] = p;
   }
@@ -50,20 +49,19 @@ function projectionsOfSteps(
 }
 
 /** What is to come is p + 2 q f + f C f. */
-function squaresOfSteps({inverseRoot, gain, decay, weights}: Factor): Float64Array {
+function squaresOfSteps({inverseRoot, rank: j, gain, decay, weights}: Factor): Float64Array {
   const m = inverseRoot.length;
-  const j = weights.length;
   const products = new Float64Array(m);
   const c = new Float64Array(j * j);
   const q = new Float64Array(j);
   const h = new Float64Array(j);
   let p = 0;
   for (let n = m - 1; n >= 0; n--) {
+    const now = n * j;
     let ofZ = 0;
     let ofZSquared = inverseRoot[n]! * inverseRoot[n]!;
     h.fill(0);
     if (n < m - 1) {
-      const now = n * j;
       const next = now + j;
       for (let a = 0; a < j; a++) {
         const decayA = decay[next + a]!;
@@ -79,9 +77,9 @@ function squaresOfSteps({inverseRoot, gain, decay, weights}: Factor): Float64Arr
       }
     }
     for (let a = 0; a < j; a++) {
-      const weightA = weights[a]!;
+      const weightA = weights[now + a]!;
       for (let b = 0; b < j; b++) {
-        const weightB = weights[b]!;
+        const weightB = weights[now + b]!;
         c[a * j + b]! += ofZSquared * weightA * weightB - weightA * h[b]! - weightB * h[a]!;
       }
       q[a]! += h[a]! - (ofZ + ofZSquared) * weightA;

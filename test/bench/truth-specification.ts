@@ -23,7 +23,8 @@ function aim(what: string, percent: number, scenarios: string): Bar {
 export const MEAN_BARS: readonly Bar[] = [
   ...['east', 'north', 'up'].flatMap((axis) => [
     atLeast(`coverage ${axis}`, 95, LONG_ENOUGH.join(' ')),
-    atLeast(`coverage ${axis}`, 95, 'F30'),
+    atLeast(`coverage ${axis}`, 95, 'F30 W'),
+    aim(`coverage ${axis}`, 95, 'GS WS'),
     atLeast(`coverage ${axis}`, 88, 'K'),
     atLeast(`coverage ${axis}`, 81, 'J'),
     atLeast(`coverage ${axis}`, 66, 'N'),
@@ -37,6 +38,7 @@ export const MEAN_BARS: readonly Bar[] = [
   atLeast('warning', 95, 'K'),
   atLeast('warning', 85, 'J'),
   atLeast('warning', 93, 'N'),
+  atLeast('warning', 85, 'GS'),
   atMost('warning', 10, 'A C D E G P Q7'),
   atMost('warning', 16, 'B'),
   atMost('warning', 38, 'F H I I2'),

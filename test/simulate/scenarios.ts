@@ -74,6 +74,13 @@ function troubles(flagged: boolean, floatTauS: number) {
   };
 }
 
+const SINUSOIDS: NoiseTerm = {
+  kind: 'chirps',
+  count: 4,
+  amplitudeM: 0.003,
+  shortestS: 4 * MINUTE,
+  longestS: 25 * MINUTE,
+};
 const C_NOISE = axes([white(3), gaussMarkov(4, 2 * MINUTE)]);
 const F_NOISE = axes([white(2), gaussMarkov(3, 2 * MINUTE), gaussMarkov(4, 36 * MINUTE)]);
 const I_NOISE = axes([white(3), gaussMarkov(3, 90)], [white(3), gaussMarkov(3, 270)]);
@@ -140,11 +147,7 @@ export const SCENARIOS: readonly Scenario[] = [
     about: 'reflections: four chirped sinusoids',
     durationS: 2 * HOUR,
     intervalS: 1,
-    noise: axes([
-      {kind: 'chirps', count: 4, amplitudeM: 0.003, shortestS: 4 * MINUTE, longestS: 25 * MINUTE},
-      gaussMarkov(2, MINUTE),
-      white(2),
-    ]),
+    noise: axes([SINUSOIDS, gaussMarkov(2, MINUTE), white(2)]),
   },
   {
     name: 'H',
@@ -298,6 +301,24 @@ export const HARDER_SCENARIOS: readonly Scenario[] = [
     intervalS: 1,
     noise: axes([
       {kind: 'oscillation', sdM: 0.004, periodS: 6 * MINUTE, dampingS: 10 * MINUTE},
+      white(2),
+    ]),
+  },
+  {
+    name: 'GS',
+    about: 'as G, over slow errors: 30 min of correlation beneath the sinusoids',
+    durationS: 2 * HOUR,
+    intervalS: 1,
+    noise: axes([SINUSOIDS, gaussMarkov(2, 30 * MINUTE), white(2)]),
+  },
+  {
+    name: 'WS',
+    about: 'swinging over slow errors of an hour, 6 h',
+    durationS: 6 * HOUR,
+    intervalS: 1,
+    noise: axes([
+      {kind: 'oscillation', sdM: 0.003, periodS: 10 * MINUTE, dampingS: 20 * MINUTE},
+      gaussMarkov(3, HOUR),
       white(2),
     ]),
   },

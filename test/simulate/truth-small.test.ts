@@ -23,6 +23,7 @@ describe('the interval of the mean holds the mark, in each direction', () => {
   test.each([
     ['A', 0.95],
     ['C', 0.95],
+    ['G', 0.95],
     ['H', 0.95],
     ['I2', 0.95],
     ['L', 0.95],
@@ -37,6 +38,20 @@ describe('the interval of the mean holds the mark, in each direction', () => {
     const {slow, holds} = summariseMeans(trials(scenarioNamed('N'), STILL, 20, FIRST_SEED));
     expect(tooFew(slow, 0.93)).toBe(false);
     expect(tooFew(holds.east, 0.66)).toBe(false);
+  });
+});
+
+describe('errors that swing', () => {
+  test('their mean is known better than that of errors which only forget: a width of 4 at most', () => {
+    const quiet = trials(scenarioNamed('G'), STILL, REPLICATES, FIRST_SEED);
+    const {widthMedian} = summariseMeans(quiet);
+    expect(widthMedian.east).toBeLessThan(4);
+    expect(widthMedian.north).toBeLessThan(4);
+  });
+
+  test('what they may hide beneath them is said: the warning of slow errors', () => {
+    const {slow} = summariseMeans(trials(scenarioNamed('GS'), STILL, 20, FIRST_SEED));
+    expect(tooFew(slow, 0.85)).toBe(false);
   });
 });
 

@@ -7,9 +7,12 @@ const WIDTH_S = 30;
  * Covariance of the averages of two cells `lag` apart, by double integration of exp(−|s − t|/τ):
  * one integral over the distance of the two times with its triangular weight, by Simpson's rule.
  */
-function integrated(lag: number, tauS: number): number {
-  const kernel = (u: number) =>
-    (1 - Math.abs(u) / WIDTH_S) * Math.exp(-Math.abs(lag * WIDTH_S + u) / tauS);
+function integrated(lag: number, tauS: number, periodS = Number.POSITIVE_INFINITY): number {
+  const kernel = (u: number) => {
+    const apartS = Math.abs(lag * WIDTH_S + u);
+    const covariance = Math.exp(-apartS / tauS) * Math.cos((2 * Math.PI * apartS) / periodS);
+    return (1 - Math.abs(u) / WIDTH_S) * covariance;
+  };
   // The kernel has a corner at zero, so each side is integrated by itself.
   return (simpson(kernel, -WIDTH_S, 0) + simpson(kernel, 0, WIDTH_S)) / WIDTH_S;
 }
@@ -31,6 +34,24 @@ describe('property: terms are covariances of cell averages, against numerical in
       const value = term!.beyond * term!.decay ** lag;
       expect(value / (0.7 * integrated(lag, tauS))).toBeCloseTo(1, 9);
     }
+  });
+
+  test.each([
+    [150, 100],
+    [600, 900],
+    [1500, 6000],
+  ])('oscillation of period %i s, damped in %i s', (periodS, dampingS) => {
+    const swing = {share: 0.9, periodS, dampingS};
+    const shares = {whiteShare: 0.3, flickerShare: 0, correlationTimeS: 1000};
+    const [term, below] = termsOf({...shares, swing, logPrior: 0}, WIDTH_S);
+    expect(term!.atZero / (0.63 * integrated(0, dampingS, periodS))).toBeCloseTo(1, 9);
+    for (const lag of [1, 2, 7]) {
+      const turned = term!.turn * lag;
+      const between = term!.beyond * Math.cos(turned) + term!.sine * Math.sin(turned);
+      const value = between * term!.decay ** lag;
+      expect(value).toBeCloseTo(0.63 * integrated(lag, dampingS, periodS), 9);
+    }
+    expect(below!.atZero / (0.07 * integrated(0, 1000))).toBeCloseTo(1, 9);
   });
 
   test('flicker noise is the average of processes in octaves', () => {

@@ -1,7 +1,8 @@
 import {describe, expect, test} from 'vitest';
 import {type NoiseModel, noiseModels, termsOf} from '../../src/statistics/noise-models.ts';
-import {gaussMarkovMean} from '../../src/statistics/required-time.ts';
+import {gaussMarkovMean, swingMean} from '../../src/statistics/required-time.ts';
 import {factorOf, whiten} from '../../src/statistics/semiseparable.ts';
+import {searchedSwings, swingModels} from '../../src/statistics/swing-models.ts';
 import type {TimeCells} from '../../src/statistics/time-cells.ts';
 
 /** Cells with gaps and unequal counts. */
@@ -27,7 +28,12 @@ function dense(model: NoiseModel, cells: TimeCells): number[][] {
         const white = (model.whiteShare * median) / cells.counts[i]!;
         return terms.reduce((sum, {atZero}) => sum + atZero, white);
       }
-      return terms.reduce((sum, {beyond, decay}) => sum + beyond * decay ** Math.abs(from - to), 0);
+      const lag = Math.abs(from - to);
+      return terms.reduce(
+        (sum, {beyond, sine, turn, decay}) =>
+          sum + decay ** lag * (beyond * Math.cos(turn * lag) + sine * Math.sin(turn * lag)),
+        0,
+      );
     }),
   );
 }
@@ -61,9 +67,14 @@ function byCholesky(v: number[][], a: Float64Array, b: Float64Array) {
 
 describe('the factor of a covariance of white noise and exponentials', () => {
   const cells = irregularCells();
-  const models = noiseModels(cells.widthS, cells.spanS);
+  const {widthS, spanS} = cells;
+  const swing = {share: 1, periodS: 8 * widthS, dampingS: 11 * widthS};
+  const swings = [...searchedSwings(widthS, spanS), ...swingModels(widthS, spanS, swing)];
 
-  test('property: agrees with the dense Cholesky factor to 1e-10 for every model, gaps included', () => {
+  test.each([
+    ['the grid', noiseModels(widthS, spanS)],
+    ['models with a swing', swings],
+  ])('property: agrees with the dense Cholesky factor to 1e-10, gaps included: %s', (_, models) => {
     expect(models.length).toBeGreaterThan(200);
     const ones = new Float64Array(cells.index.length).fill(1);
     let worst = 0;
@@ -99,6 +110,30 @@ describe('the factor of a covariance of white noise and exponentials', () => {
     expect(term!.atZero).toBeCloseTo(average(0), 5);
     expect(term!.beyond * term!.decay).toBeCloseTo(average(1), 6);
     expect(term!.beyond * term!.decay ** 3).toBeCloseTo(average(3), 6);
+  });
+});
+
+describe('the mean of a damped oscillation over a window', () => {
+  test.each([
+    [600, 900, 30],
+    [600, 900, 3600],
+    [300, 1200, 7200],
+  ])(
+    'period %i s, damping %i s, over %i s: the double sum of its covariance',
+    (periodS, dampingS, timeS) => {
+      const n = 40_000;
+      let sum = 0;
+      for (let k = 0; k < n; k++) {
+        const lagS = ((k + 0.5) * timeS) / n;
+        const covariance = Math.exp(-lagS / dampingS) * Math.cos((2 * Math.PI * lagS) / periodS);
+        sum += (2 * (1 - lagS / timeS) * covariance) / n;
+      }
+      expect(swingMean({share: 1, periodS, dampingS}, timeS)).toBeCloseTo(sum, 7);
+    },
+  );
+
+  test('a short window is one look', () => {
+    expect(swingMean({share: 1, periodS: 600, dampingS: 900}, 0.001)).toBeCloseTo(1, 5);
   });
 });
 

@@ -2,6 +2,7 @@ import {describe, expect, test} from 'vitest';
 import {noiseModels} from '../../src/statistics/noise-models.ts';
 import {factorOf, whiten} from '../../src/statistics/semiseparable.ts';
 import {stepProducts} from '../../src/statistics/step-products.ts';
+import {swingModels} from '../../src/statistics/swing-models.ts';
 import type {TimeCells} from '../../src/statistics/time-cells.ts';
 
 function cellsAt(index: readonly number[]): TimeCells {
@@ -29,7 +30,10 @@ describe('products of whitened steps are those of steps whitened one by one', ()
     const ones = new Float64Array(m).fill(1);
     const wave = Float64Array.from(cells.index, (cell) => Math.sin(cell / 3) + 0.02 * cell);
     let worst = 0;
-    for (const model of noiseModels(cells.widthS, cells.spanS)) {
+    const {widthS, spanS} = cells;
+    const swing = {share: 1, periodS: 9 * widthS, dampingS: 14 * widthS};
+    const swings = swingModels(widthS, spanS, swing);
+    for (const model of [...noiseModels(widthS, spanS), ...swings]) {
       const factor = factorOf(model, cells);
       const columns = [whiten(factor, ones), whiten(factor, wave)];
       const {squares, projections} = stepProducts(factor, columns);
