@@ -75,9 +75,10 @@ function analysed(record: Analysable): SessionAnalysis {
   const planVaries = varying[0] === 0 && varying[1] === 1;
   const pooling: Pooling = planVaries ? 'plan' : 'none';
   const plain = fitModels(cells);
-  const movement = movementOf(testablePart(record, plain));
+  const swinging = withSwings(plain, cells);
+  const movement = movementOf(testablePart(record, swinging));
   // Movement looks like half of a slow swing; only what sat still may be believed to have swung.
-  const fits = movement.kind === 'none' ? withSwings(plain, cells) : plain;
+  const fits = movement.kind === 'none' ? swinging : plain;
   const means = varying.map((c) => known[c]!.mean);
   const uncertainties = meanUncertainties(cells, fits, means, pooling);
   const slowProbability = Math.max(0, ...uncertainties.map((one) => one.slowProbability));

@@ -33,7 +33,7 @@ export function fitModels(cells: TimeCells): ModelFit[] {
 const SWING_EVIDENCE = 3;
 
 /**
- * The fits of the grid and, where a component swings, those of models with that swing: for a mean.
+ * The fits of the grid and, where a component swings, those of models with that swing.
  * A record that does not swing gets back what was given.
  */
 export function withSwings(fits: readonly ModelFit[], cells: TimeCells): readonly ModelFit[] {
