@@ -49,6 +49,7 @@ export const COMBINATION_SCHEMA: DocumentSchema = {
         ecefM: XYZ,
         standardUncertaintyM: perAxis(LENGTH_M),
         uncertainty95M: object({...perAxis(LENGTH_M).properties, horizontalRadius: LENGTH_M}),
+        covarianceEnuM2: listOf(listOf({type: 'number', description: 'square metres'}, 3), 3),
         agreement: oneOf('agrees', 'disagrees', 'not tested'),
         accident: object({plan: orNull(NUMBER), up: orNull(NUMBER)}),
         enlargedBy: object({plan: NUMBER, up: NUMBER}),

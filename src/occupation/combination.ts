@@ -29,6 +29,8 @@ export interface CombinedMark {
   readonly ecefM: PerAxisXyz;
   readonly standardUncertaintyM: PerAxis;
   readonly uncertainty95M: PerAxis & {readonly horizontalRadius: number};
+  /** East, north and up. */
+  readonly covarianceEnuM2: readonly (readonly number[])[];
   /** Whether the occupations agree within their own uncertainties; one alone is not tested. */
   readonly agreement: 'agrees' | 'disagrees' | 'not tested';
   /** Probability of so much disagreement by accident, in plan and in height; null: not tested. */

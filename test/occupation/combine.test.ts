@@ -6,7 +6,8 @@ import {combinationJson} from '../../src/exports/json.ts';
 import {WGS84} from '../../src/geodesy/ellipsoid.ts';
 import {geodeticFromEcef} from '../../src/geodesy/geocentric.ts';
 import {ecefFromEnu, localFrame} from '../../src/geodesy/local.ts';
-import {combineResults, type NamedResult} from '../../src/occupation/combine.ts';
+import {combineResults} from '../../src/occupation/combine.ts';
+import type {NamedResult} from '../../src/occupation/combining/occupations.ts';
 import {noticeList} from '../../src/occupation/notices.ts';
 import type {BudgetRow, Result} from '../../src/occupation/result.ts';
 import {noticeText} from '../../src/wording/notices.ts';
@@ -26,6 +27,8 @@ interface Planted {
   readonly ownM?: number;
   /** Standard uncertainty of the base by its id. */
   readonly base?: readonly [id: string, sigmaM: number];
+  /** Covariance of east and north by the session alone. */
+  readonly eastNorthM2?: number;
   readonly day?: number;
   readonly change?: (result: Result) => Result;
 }
@@ -41,6 +44,7 @@ function planted({
   enuM,
   ownM = 0.003,
   base,
+  eastNorthM2 = 0,
   day = 1,
   change,
 }: Planted): NamedResult {
@@ -63,6 +67,11 @@ function planted({
       coordinateEpoch: 2025,
       ecefM: {x: ecef.xM, y: ecef.yM, z: ecef.zM},
       geodetic: geodeticFromEcef(ecef, WGS84),
+      covarianceEnuM2: [
+        [ownM ** 2, eastNorthM2, 0],
+        [eastNorthM2, ownM ** 2, 0],
+        [0, 0, ownM ** 2],
+      ],
     },
     budget: [
       row('session repeatability', ownM),
@@ -304,5 +313,39 @@ describe('results that cannot be combined', () => {
     expect(notices.find(({code}) => code === 'results-left-out')?.text).toContain(
       'moved (it moved)',
     );
+  });
+});
+
+describe('east and north that err together', () => {
+  const twice = (eastNorthM2: number) => [
+    planted({name: 'a', enuM: [0, 0, 0], eastNorthM2}),
+    planted({name: 'b', enuM: [0, 0, 0], eastNorthM2, day: 2}),
+  ];
+
+  test('their covariance is halved by a second occupation, as the variances are', () => {
+    const [mark] = combined(twice(5e-6)).marks;
+    expect(mark!.covarianceEnuM2[0]![0]).toBeCloseTo(4.5e-6, 10);
+    expect(mark!.covarianceEnuM2[0]![1]).toBeCloseTo(2.5e-6, 10);
+    expect(mark!.covarianceEnuM2[1]![0]).toBe(mark!.covarianceEnuM2[0]![1]);
+    const [apart] = combined(twice(0)).marks;
+    expect(mark!.uncertainty95M.horizontalRadius).toBeGreaterThan(
+      1.02 * apart!.uncertainty95M.horizontalRadius,
+    );
+  });
+
+  test('a distance along the way they err is less sure, one across it more', () => {
+    const along = (northM: number) => {
+      const far = planted({
+        name: 'c',
+        mark: 'Q',
+        enuM: [100, northM, 0],
+        eastNorthM2: 5e-6,
+        day: 3,
+      });
+      return combined([...twice(5e-6), far]).distances[0]!.uncertainty95M.spatial;
+    };
+    // Variances of 4.5 and 9 mm², covariances of 2.5 and 5 mm²: their sum and difference.
+    expect(along(100)).toBeCloseTo(1.959963985 * Math.sqrt(13.5e-6 + 7.5e-6), 6);
+    expect(along(-100)).toBeCloseTo(1.959963985 * Math.sqrt(13.5e-6 - 7.5e-6), 6);
   });
 });
