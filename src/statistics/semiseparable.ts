@@ -17,10 +17,12 @@ export interface Factor {
   readonly inverseRoot: Float64Array;
   /** J, the exponentials. */
   readonly rank: number;
-  /** m × J gains, decays from the cell before, and weights. */
+  /** m × J gains and decays from the cell before. */
   readonly gain: Float64Array;
   readonly decay: Float64Array;
+  /** J weights for each cell, or for all: cell n has those from n × `weightStride` on. */
   readonly weights: Float64Array;
+  readonly weightStride: number;
 }
 
 export function factorOf(model: NoiseModel, cells: TimeCells): Factor {
@@ -44,10 +46,12 @@ function factorOfTerms(
   const m = index.length;
   const columns = columnsOf(terms);
   const j = columns.length;
-  const weights = new Float64Array(m * j);
-  const phases = new Float64Array(m * j);
+  // Where nothing turns all cells have the same weights: most models, and a third of their time.
+  const stride = terms.some(({turn}) => turn !== 0) ? j : 0;
+  const weights = new Float64Array(stride === 0 ? j : m * j);
+  const phases = new Float64Array(weights.length);
   columns.forEach(({weight, phase}, a) => {
-    for (let n = 0; n < m; n++) {
+    for (let n = 0; n * j < weights.length; n++) {
       weights[n * j + a] = weight(index[n]!);
       phases[n * j + a] = phase(index[n]!);
     }
@@ -76,15 +80,15 @@ function factorOfTerms(
     let d = diagonalOf[n]!;
     for (let a = 0; a < j; a++) {
       let dot = 0;
-      for (let b = 0; b < j; b++) dot += s[a * j + b]! * weights[n * j + b]!;
+      for (let b = 0; b < j; b++) dot += s[a * j + b]! * weights[n * stride + b]!;
       us[a] = dot;
-      d -= dot * weights[n * j + a]!;
+      d -= dot * weights[n * stride + a]!;
     }
     logDeterminant += Math.log(d);
     inverseRoot[n] = 1 / Math.sqrt(d);
-    for (let a = 0; a < j; a++) gain[n * j + a] = (phases[n * j + a]! - us[a]!) / d;
+    for (let a = 0; a < j; a++) gain[n * j + a] = (phases[n * stride + a]! - us[a]!) / d;
   }
-  return {logDeterminant, inverseRoot, rank: j, gain, decay, weights};
+  return {logDeterminant, inverseRoot, rank: j, gain, decay, weights, weightStride: stride};
 }
 
 /** A product of functions of the two cells that, with a decay, makes a part of the covariance. */
@@ -111,7 +115,7 @@ function columnsOf(terms: readonly Term[]): Column[] {
  * L⁻¹ applied to a column and scaled to unit variance: what is left white if the model is right.
  */
 export function whiten(factor: Factor, values: Float64Array): Float64Array {
-  const {inverseRoot, rank: j, gain, decay, weights} = factor;
+  const {inverseRoot, rank: j, gain, decay, weights, weightStride} = factor;
   const m = values.length;
   const out = new Float64Array(m);
   const f = new Float64Array(j);
@@ -122,7 +126,7 @@ export function whiten(factor: Factor, values: Float64Array): Float64Array {
       for (let a = 0; a < j; a++) {
         const fa = decay[n * j + a]! * (f[a]! + gain[(n - 1) * j + a]! * previous);
         f[a] = fa;
-        z -= weights[n * j + a]! * fa;
+        z -= weights[n * weightStride + a]! * fa;
       }
     }
     previous = z;

@@ -26,7 +26,7 @@ export function stepProducts(factor: Factor, columns: readonly Float64Array[]): 
 
 /** What is to come is p + q f. */
 function projectionsOfSteps(
-  {inverseRoot, rank: j, gain, decay, weights}: Factor,
+  {inverseRoot, rank: j, gain, decay, weights, weightStride}: Factor,
   column: Float64Array,
 ): Float64Array {
   const m = column.length;
@@ -41,7 +41,7 @@ function projectionsOfSteps(
         ofZ += q[a]! * gain[n * j + a]!;
       }
     }
-    for (let a = 0; a < j; a++) q[a]! -= ofZ * weights[n * j + a]!;
+    for (let a = 0; a < j; a++) q[a]! -= ofZ * weights[n * weightStride + a]!;
     p += ofZ;
     products[n] = p;
   }
@@ -49,7 +49,14 @@ function projectionsOfSteps(
 }
 
 /** What is to come is p + 2 q f + f C f. */
-function squaresOfSteps({inverseRoot, rank: j, gain, decay, weights}: Factor): Float64Array {
+function squaresOfSteps({
+  inverseRoot,
+  rank: j,
+  gain,
+  decay,
+  weights,
+  weightStride,
+}: Factor): Float64Array {
   const m = inverseRoot.length;
   const products = new Float64Array(m);
   const c = new Float64Array(j * j);
@@ -57,11 +64,11 @@ function squaresOfSteps({inverseRoot, rank: j, gain, decay, weights}: Factor): F
   const h = new Float64Array(j);
   let p = 0;
   for (let n = m - 1; n >= 0; n--) {
-    const now = n * j;
     let ofZ = 0;
     let ofZSquared = inverseRoot[n]! * inverseRoot[n]!;
     h.fill(0);
     if (n < m - 1) {
+      const now = n * j;
       const next = now + j;
       for (let a = 0; a < j; a++) {
         const decayA = decay[next + a]!;
@@ -77,9 +84,9 @@ function squaresOfSteps({inverseRoot, rank: j, gain, decay, weights}: Factor): F
       }
     }
     for (let a = 0; a < j; a++) {
-      const weightA = weights[now + a]!;
+      const weightA = weights[n * weightStride + a]!;
       for (let b = 0; b < j; b++) {
-        const weightB = weights[now + b]!;
+        const weightB = weights[n * weightStride + b]!;
         c[a * j + b]! += ofZSquared * weightA * weightB - weightA * h[b]! - weightB * h[a]!;
       }
       q[a]! += h[a]! - (ofZ + ofZSquared) * weightA;
