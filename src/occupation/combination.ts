@@ -1,3 +1,4 @@
+import type {CovarianceM2} from './covariance.ts';
 import type {Notice, PerAxis, PerAxisXyz, Position} from './result.ts';
 
 /**
@@ -30,7 +31,7 @@ export interface CombinedMark {
   readonly standardUncertaintyM: PerAxis;
   readonly uncertainty95M: PerAxis & {readonly horizontalRadius: number};
   /** East, north and up. */
-  readonly covarianceEnuM2: readonly (readonly number[])[];
+  readonly covarianceEnuM2: CovarianceM2;
   /** Whether the occupations agree within their own uncertainties; one alone is not tested. */
   readonly agreement: 'agrees' | 'disagrees' | 'not tested';
   /** Probability of so much disagreement by accident, in plan and in height; null: not tested. */

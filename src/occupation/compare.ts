@@ -1,11 +1,10 @@
 import {probabilityInCircle} from '../statistics/accuracy-measures.ts';
-import {normalWithin} from '../statistics/distribution.ts';
+import {NORMAL_95, normalWithin} from '../statistics/distribution.ts';
 import {type CovarianceM2, covarianceSum, planeOf} from './covariance.ts';
 import type {Comparison, Decision, FrameChange, PerAxis, Requirement} from './result.ts';
 
 /** χ² with 2 degrees of freedom and normal, at 95 %. */
 const CHI_SQUARE_2_AT_95 = 5.991464547107982;
-const NORMAL_95 = 1.959963984540054;
 /** Accept at or above this probability, reject at or below its complement: JCGM 106:2012, 8. */
 const SURE = 0.95;
 

@@ -1,5 +1,6 @@
 import {enuFromGeodetic, localFrame} from '../geodesy/local.ts';
 import {r95} from '../statistics/accuracy-measures.ts';
+import {NORMAL_95} from '../statistics/distribution.ts';
 import {normalisedErrors} from './compare.ts';
 import {type CovarianceM2, covarianceSum, planeOf, withVariances} from './covariance.ts';
 import type {OtherMarkCheck, SameMarkCheck} from './diagnosis/input.ts';
@@ -25,7 +26,6 @@ export interface CheckInHand {
 }
 
 const AXES = ['east', 'north', 'up'] as const;
-const NORMAL_95 = 1.959963984540054;
 const MS_PER_HOUR = 3_600_000;
 
 /** Rows that belong to a comparison and fall out of the difference of two at the same mark. */

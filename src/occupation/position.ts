@@ -1,6 +1,7 @@
 import type {Epochs} from '../epochs/epochs.ts';
 import {ecefFromEnu, geodeticFromEnu} from '../geodesy/local.ts';
 import {r95} from '../statistics/accuracy-measures.ts';
+import {NORMAL_95} from '../statistics/distribution.ts';
 import {isoUtc} from '../time/gps-time.ts';
 import {budgetVariancesM2} from './budget.ts';
 import {type CovarianceM2, planeOf, withVariances} from './covariance.ts';
@@ -11,7 +12,6 @@ import {ellipseOf} from './scatter.ts';
 import {type GeoidRequest, meanSeparationM, separationInUse} from './separation.ts';
 import type {Session} from './session.ts';
 
-const NORMAL_95 = 1.959963984540054;
 /** √χ²₂(95 %): scale from the standard ellipse to the one that holds 95 %. */
 const ELLIPSE_95 = 2.447746830680816;
 

@@ -1,5 +1,6 @@
 import {r95} from '../statistics/accuracy-measures.ts';
 import {analyseSession} from '../statistics/analyse-session.ts';
+import {NORMAL_95} from '../statistics/distribution.ts';
 import type {
   ComponentAnalysis,
   Movement,
@@ -68,8 +69,6 @@ export interface TimeNeeded {
 export type Axis = keyof PerAxis;
 
 const AXES = ['east', 'north', 'up'] as const;
-/** Half-width of 95 % of a normal distribution in standard deviations. */
-const NORMAL_95 = 1.959963984540054;
 /** Rounding that could hide less than this part of the session's own figure is not worth a row. */
 const NOTICEABLE_SHARE = 0.01;
 

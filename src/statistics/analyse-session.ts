@@ -1,5 +1,6 @@
 import type {Analysable} from './analysable.ts';
 import {testablePart} from './analysable.ts';
+import {NORMAL_95} from './distribution.ts';
 import {errorCorrelation, type MeanUncertainty, meanUncertainties} from './mean-uncertainty.ts';
 import {fitModels, type Pooling, withSwings} from './model-fits.ts';
 import {type FoundMovement, movementOf} from './movement.ts';
@@ -21,7 +22,6 @@ import {withoutLines, withoutSettling, withoutSteps} from './without-movement.ts
 const LEAST_EPOCHS = 30;
 const LEAST_SPAN_S = 120;
 const LEAST_CELLS = 8;
-const NORMAL_95 = 1.959963984540054;
 const FEW_LOOKS = 4;
 const SLOW = 0.5;
 

@@ -3,6 +3,9 @@ import {errorFunction, incompleteBeta, incompleteGamma, logGamma} from './specia
 const SQRT_2 = Math.SQRT2;
 const SQRT_TWO_PI = 2.5066282746310002;
 
+/** Half-width of 95 % of a normal distribution in standard deviations: Φ⁻¹(0.975). */
+export const NORMAL_95 = 1.959963984540054;
+
 /** P(X ≤ z) of the standard normal distribution; small relative error in both tails. */
 export function normalCdf(z: number): number {
   return 0.5 * errorFunction(-z / SQRT_2).erfc;

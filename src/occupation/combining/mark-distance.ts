@@ -1,13 +1,13 @@
 import {UsageError} from '../../errors.ts';
 import {WGS84} from '../../geodesy/ellipsoid.ts';
 import {enuFromEcef, localFrameAtEcef} from '../../geodesy/local.ts';
+import {NORMAL_95} from '../../statistics/distribution.ts';
 import type {MarkDistance} from '../combination.ts';
+import {planeOf} from '../covariance.ts';
 import type {PerAxis} from '../result.ts';
 import {cancelsBetweenMarks, sourceOf} from './shared-errors.ts';
 import type {SolvedMark} from './solved-mark.ts';
 import {varianceOfDifference} from './weighted-axis.ts';
-
-const NORMAL_95 = 1.959963984540054;
 
 /** From one mark to another, with what both share left out of the uncertainty. */
 export function distance(from: SolvedMark, to: SolvedMark): MarkDistance {
@@ -21,7 +21,10 @@ export function distance(from: SolvedMark, to: SolvedMark): MarkDistance {
   const spatialM = Math.hypot(eastM, northM, upM);
   const variance = (axis: keyof PerAxis) => varianceOfDifference(from.axes[axis], to.axes[axis]);
   const [east, north, up] = [variance('east'), variance('north'), variance('up')];
-  const crossM4 = 2 * eastM * northM * (from.eastNorthM2 + to.eastNorthM2);
+  const eastNorthM2 = [from, to]
+    .map(({mark}) => planeOf(mark.covarianceEnuM2).eastNorth)
+    .reduce((sum, one) => sum + one);
+  const crossM4 = 2 * eastM * northM * eastNorthM2;
   const along = (eastM ** 2 * east + northM ** 2 * north + upM ** 2 * up + crossM4) / spatialM ** 2;
   const azimuth = (Math.atan2(eastM, northM) * 180) / Math.PI;
   const cancels = [...from.axes.up.sharedM.keys()].filter(

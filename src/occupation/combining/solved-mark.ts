@@ -3,14 +3,14 @@ import {geodeticFromEcef} from '../../geodesy/geocentric.ts';
 import {ecefFromEnu, enuFromEcef, type LocalFrame, localFrameAtEcef} from '../../geodesy/local.ts';
 import type {Ecef} from '../../geodesy/types.ts';
 import {r95} from '../../statistics/accuracy-measures.ts';
-import {chiSquareTail} from '../../statistics/distribution.ts';
+import {chiSquareTail, NORMAL_95} from '../../statistics/distribution.ts';
 import type {CombinedMark, CombinedOccupation} from '../combination.ts';
+import {type CovarianceM2, planeOf} from '../covariance.ts';
 import type {PerAxis} from '../result.ts';
 import {type Occupation, requireSame} from './occupations.ts';
 import {keysOfAll, sourceOf} from './shared-errors.ts';
 import {enlargedAxis, type SolvedAxis, solvedAxis, varianceOf} from './weighted-axis.ts';
 
-const NORMAL_95 = 1.959963984540054;
 /** Agreement by accident less likely than this is none. */
 const UNLIKELY = 0.05;
 
@@ -18,8 +18,6 @@ export interface SolvedMark {
   readonly mark: CombinedMark;
   readonly ecef: Ecef;
   readonly axes: Readonly<Record<keyof PerAxis, SolvedAxis>>;
-  /** Covariance of east and north, enlarged as they are. */
-  readonly eastNorthM2: number;
 }
 
 /** One mark by the weighted mean of its occupations. */
@@ -48,12 +46,14 @@ export function solvedMark(name: string, occupations: readonly Occupation[]): So
   const ecef = ecefFromEnu(mean, frame);
   const sigma = (axis: keyof PerAxis) => Math.sqrt(varianceOf(enlarged[axis]));
   const standardUncertaintyM = {east: sigma('east'), north: sigma('north'), up: sigma('up')};
-  const eastNorthM2 = eastNorth(occupations, axes) * enlargedBy.plan ** 2;
+  const covarianceEnuM2 = covariance(
+    standardUncertaintyM,
+    eastNorth(occupations, axes) * enlargedBy.plan ** 2,
+  );
   const disagrees = [accident.plan, accident.up].some((p) => p !== null && p < UNLIKELY);
   return {
     ecef,
     axes: enlarged,
-    eastNorthM2,
     mark: {
       name,
       of: first.position.of,
@@ -62,8 +62,13 @@ export function solvedMark(name: string, occupations: readonly Occupation[]): So
       geodetic: geodeticFromEcef(ecef, WGS84),
       ecefM: {x: ecef.xM, y: ecef.yM, z: ecef.zM},
       standardUncertaintyM,
-      uncertainty95M: uncertainty95(standardUncertaintyM, eastNorthM2),
-      covarianceEnuM2: covariance(standardUncertaintyM, eastNorthM2),
+      uncertainty95M: {
+        east: NORMAL_95 * standardUncertaintyM.east,
+        north: NORMAL_95 * standardUncertaintyM.north,
+        up: NORMAL_95 * standardUncertaintyM.up,
+        horizontalRadius: r95(planeOf(covarianceEnuM2)),
+      },
+      covarianceEnuM2,
       agreement: freedom === 0 ? 'not tested' : disagrees ? 'disagrees' : 'agrees',
       accident,
       enlargedBy,
@@ -84,7 +89,7 @@ function eastNorth(
   }, 0);
 }
 
-function covariance({east, north, up}: PerAxis, eastNorthM2: number): number[][] {
+function covariance({east, north, up}: PerAxis, eastNorthM2: number): CovarianceM2 {
   return [
     [east ** 2, eastNorthM2, 0],
     [eastNorthM2, north ** 2, 0],
@@ -95,18 +100,6 @@ function covariance({east, north, up}: PerAxis, eastNorthM2: number): number[][]
 function enlargement(probability: number | null, squares: number, freedom: number): number {
   if (probability === null || probability >= UNLIKELY) return 1;
   return Math.max(1, Math.sqrt(squares / freedom));
-}
-
-function uncertainty95(
-  {east, north, up}: PerAxis,
-  eastNorthM2: number,
-): CombinedMark['uncertainty95M'] {
-  return {
-    east: NORMAL_95 * east,
-    north: NORMAL_95 * north,
-    up: NORMAL_95 * up,
-    horizontalRadius: r95({eastEast: east ** 2, eastNorth: eastNorthM2, northNorth: north ** 2}),
-  };
 }
 
 function combinedOccupation(

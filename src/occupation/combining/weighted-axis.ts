@@ -1,9 +1,8 @@
 import {enuFromEcef, type LocalFrame} from '../../geodesy/local.ts';
+import {NORMAL_95} from '../../statistics/distribution.ts';
 import type {PerAxis} from '../result.ts';
 import type {Occupation} from './occupations.ts';
 import {cancelsBetweenMarks, keyOf, uncertaintyM} from './shared-errors.ts';
-
-const NORMAL_95 = 1.959963984540054;
 
 /** A micrometre: keeps a record without any uncertainty of its own from taking all the weight. */
 const LEAST_VARIANCE_M2 = 1e-12;
