@@ -3,10 +3,11 @@ import {
   coordinateDecimals,
   degreeDecimals,
   fixed,
-  formatLength,
   formatPercent,
+  formatUncertainty,
   formatUtc,
   joined,
+  shownUncertaintyM,
 } from '../wording/numbers.ts';
 import {noticeLines, type TerminalStyle} from './terminal.ts';
 
@@ -38,7 +39,7 @@ function markLines(mark: CombinedMark): string[] {
   return [
     `${mark.name}  ${north}  ${east}  ellipsoidal height ${fixed(geodetic.ellipsoidalHeightM, heights)} m`,
     `  of the ${mark.of}; ${mark.frame ?? 'frame not stated'}${epoch}`,
-    `  95 %: ${formatLength(u.horizontalRadius)} in plan, ${formatLength(u.up)} in height; ${agreementText(mark)}`,
+    `  95 %: ${formatUncertainty(u.horizontalRadius)} in plan, ${formatUncertainty(u.up)} in height; ${agreementText(mark)}`,
     `  ${'occupation minus the mean'.padEnd(44)}${columns}   weight`,
     ...occupations.map((one) => {
       const {east: e, north: n, up, horizontal} = one.differenceM;
@@ -68,9 +69,9 @@ function distanceLines(distances: readonly MarkDistance[]): string[] {
       [
         (names[i] ?? '').padEnd(width),
         fixed(spatialM, 4).padStart(15),
-        fixed(uncertainty95M.spatial * 1000, 1).padStart(10),
+        fixed(shownUncertaintyM(uncertainty95M.spatial) * 1000, 1).padStart(10),
         fixed(heightDifferenceM, 4).padStart(13),
-        fixed(uncertainty95M.height * 1000, 1).padStart(10),
+        fixed(shownUncertaintyM(uncertainty95M.height) * 1000, 1).padStart(10),
         `${fixed(azimuthDeg, 4)}°`.padStart(12),
       ].join(''),
     ),
